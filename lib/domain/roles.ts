@@ -23,6 +23,8 @@ export type Actor =
       readonly name: string;
       readonly role: Role;
       readonly scopes: readonly Scope[];
+      /** The person who made the token; whoever proposes through it counts as the author. */
+      readonly ownerId: string;
     }
   | { readonly kind: "system"; readonly id: null; readonly name: string };
 

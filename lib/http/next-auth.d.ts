@@ -1,0 +1,17 @@
+import "next-auth";
+import "next-auth/jwt";
+
+declare module "next-auth" {
+  interface User {
+    sessionId: string;
+  }
+  interface Session {
+    sessionId?: string | undefined;
+  }
+}
+
+declare module "next-auth/jwt" {
+  interface JWT {
+    sessionId?: string;
+  }
+}
