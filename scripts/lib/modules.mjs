@@ -1,0 +1,53 @@
+import path from "node:path";
+import { readJson, ROOT } from "./home.mjs";
+import { run } from "./run.mjs";
+import { Trouble } from "./trouble.mjs";
+
+const OLDEST_NODE = [20, 19];
+
+/** Refuses a Node that is too old to run what follows. */
+export function demandNode(version = process.versions.node) {
+  const [major, minor] = version.split(".").map(Number);
+  const [needMajor, needMinor] = OLDEST_NODE;
+  if (major > needMajor || (major === needMajor && minor >= needMinor)) return;
+  throw new Trouble(
+    `Node ${version} is too old: Keepstep needs ${OLDEST_NODE.join(".")} or newer. Nothing was started or changed.`,
+  );
+}
+
+/**
+ * The packages of the lockfile that are not installed as locked, by their folder.
+ * Compared with the record that npm writes at the end of an install; optional packages may be absent.
+ */
+export function missingModules(lockfile, installed) {
+  const have = installed?.packages ?? {};
+  return Object.entries(lockfile.packages)
+    .filter(([folder]) => folder !== "")
+    .filter(([folder, locked]) => !(locked.optional && !(folder in have)))
+    .filter(([folder, locked]) => !sameModule(locked, have[folder]))
+    .map(([folder]) => folder);
+}
+
+function sameModule(locked, have) {
+  return have !== undefined && have.version === locked.version && have.integrity === locked.integrity;
+}
+
+/** Installs the node modules as locked, those of development included; does nothing while they are as locked. */
+export async function ensureModules({ say, signal, env = process.env }) {
+  const lockfile = readJson(path.join(ROOT, "package-lock.json"));
+  if (!lockfile)
+    throw new Trouble(
+      `package-lock.json cannot be read in ${ROOT}. Nothing was changed. Restore the file from the repository.`,
+    );
+  const installed = readJson(path.join(ROOT, "node_modules/.package-lock.json"));
+  const missing = missingModules(lockfile, installed);
+  if (missing.length === 0) return say("installed as locked");
+  const count = Object.keys(lockfile.packages).length - 1;
+  say(`installing ${count} packages with npm ci; this takes a minute or two`);
+  await run("npm", ["ci", "--include=dev", "--no-audit", "--no-fund"], {
+    cwd: ROOT,
+    env: { ...env, NODE_ENV: "development" },
+    signal,
+  });
+  say(`${count} packages installed`);
+}
