@@ -120,10 +120,10 @@ export class ProposalVersion extends Model<
   declare changeId: string;
   declare version: number;
   declare revisionId: string;
-  declare baseRevisionId: string;
-  declare baseBaselineId: string;
+  declare baseRevisionId: CreationOptional<string | null>;
+  declare baseBaselineId: CreationOptional<string | null>;
   declare baseHash: string;
-  declare baseEvaluationId: string;
+  declare baseEvaluationId: CreationOptional<string | null>;
   declare evaluationId: string;
   declare title: string;
   declare reason: string;
@@ -145,10 +145,10 @@ define(
     changeId: { type: DataTypes.UUID, allowNull: false },
     version: { type: DataTypes.INTEGER, allowNull: false },
     revisionId: { type: DataTypes.UUID, allowNull: false },
-    baseRevisionId: { type: DataTypes.UUID, allowNull: false },
-    baseBaselineId: { type: DataTypes.UUID, allowNull: false },
+    baseRevisionId: { type: DataTypes.UUID },
+    baseBaselineId: { type: DataTypes.UUID },
     baseHash: { type: DataTypes.CHAR(64), allowNull: false },
-    baseEvaluationId: { type: DataTypes.UUID, allowNull: false },
+    baseEvaluationId: { type: DataTypes.UUID },
     evaluationId: { type: DataTypes.UUID, allowNull: false },
     title: { type: DataTypes.TEXT, allowNull: false },
     reason: { type: DataTypes.TEXT, allowNull: false },

@@ -159,7 +159,7 @@ export class Evaluation extends Model<InferAttributes<Evaluation>, InferCreation
   declare machineId: CreationOptional<string | null>;
   declare rulesVersion: string;
   declare policyVersion: number;
-  declare keyTableId: string;
+  declare keyTableId: CreationOptional<string | null>;
   declare assembly: Assembly;
   declare assemblyHash: string;
   declare report: unknown;
@@ -176,7 +176,7 @@ define(
     machineId: { type: DataTypes.UUID },
     rulesVersion: { type: DataTypes.TEXT, allowNull: false },
     policyVersion: { type: DataTypes.INTEGER, allowNull: false },
-    keyTableId: { type: DataTypes.UUID, allowNull: false },
+    keyTableId: { type: DataTypes.UUID },
     assembly: { type: DataTypes.JSONB, allowNull: false },
     assemblyHash: { type: DataTypes.CHAR(64), allowNull: false },
     report: { type: DataTypes.JSONB, allowNull: false },
