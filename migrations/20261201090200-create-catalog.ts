@@ -12,6 +12,7 @@ export async function up({ context }: { context: QueryInterface }): Promise<void
       created_at timestamptz not null default now(),
       updated_at timestamptz not null default now()
     );
+    alter table users add column site_id uuid references sites;
     create table catalog_items (
       id uuid primary key default gen_random_uuid(),
       kind text not null check (kind in ('motor','driver','controller_board','supply','drive_train','mount')),
@@ -105,6 +106,6 @@ export async function up({ context }: { context: QueryInterface }): Promise<void
 
 export async function down({ context }: { context: QueryInterface }): Promise<void> {
   await context.sequelize.query(
-    "drop table policies, key_tables, axes, machine_model_versions, machine_models, catalog_versions, catalog_items, sites",
+    "alter table users drop column site_id; drop table policies, key_tables, axes, machine_model_versions, machine_models, catalog_versions, catalog_items, sites",
   );
 }

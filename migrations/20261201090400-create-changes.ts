@@ -85,6 +85,7 @@ export async function up({ context }: { context: QueryInterface }): Promise<void
       base_hash char(64) not null,
       base_evaluation_id uuid references evaluations,
       evaluation_id uuid not null references evaluations,
+      machines_evaluated jsonb not null default '[]',
       title text not null,
       reason text not null,
       class text not null,

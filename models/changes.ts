@@ -2,7 +2,13 @@ import "server-only";
 import type { CreationOptional, InferAttributes, InferCreationAttributes, NonAttribute } from "sequelize";
 import { DataTypes, Model } from "sequelize";
 import type { ChangeClass, ChangeState } from "@/lib/domain/change-states";
-import type { ChangeKind, CommentAnchor, Decision, Effectivity } from "@/lib/domain/changes";
+import type {
+  ChangeKind,
+  CommentAnchor,
+  Decision,
+  Effectivity,
+  MachineEvaluation,
+} from "@/lib/domain/changes";
 import { define } from "./define";
 
 export class ChangeRequest extends Model<
@@ -125,6 +131,7 @@ export class ProposalVersion extends Model<
   declare baseHash: string;
   declare baseEvaluationId: CreationOptional<string | null>;
   declare evaluationId: string;
+  declare machinesEvaluated: CreationOptional<MachineEvaluation[]>;
   declare title: string;
   declare reason: string;
   declare class: ChangeClass;
@@ -150,6 +157,7 @@ define(
     baseHash: { type: DataTypes.CHAR(64), allowNull: false },
     baseEvaluationId: { type: DataTypes.UUID },
     evaluationId: { type: DataTypes.UUID, allowNull: false },
+    machinesEvaluated: { type: DataTypes.JSONB, defaultValue: [], allowNull: false },
     title: { type: DataTypes.TEXT, allowNull: false },
     reason: { type: DataTypes.TEXT, allowNull: false },
     class: { type: DataTypes.TEXT, allowNull: false },

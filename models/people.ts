@@ -11,6 +11,8 @@ export class User extends Model<InferAttributes<User>, InferCreationAttributes<U
   declare role: Role;
   declare passwordHash: string;
   declare active: CreationOptional<boolean>;
+  /** Where a technician works; null: at every site. */
+  declare siteId: CreationOptional<string | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
 }
@@ -25,6 +27,7 @@ define(
     role: { type: DataTypes.TEXT, allowNull: false },
     passwordHash: { type: DataTypes.TEXT, allowNull: false },
     active: { type: DataTypes.BOOLEAN, defaultValue: true, allowNull: false },
+    siteId: { type: DataTypes.UUID },
     createdAt: { type: DataTypes.DATE, allowNull: false },
     updatedAt: { type: DataTypes.DATE, allowNull: false },
   },

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { levelSchema } from "./levels";
 import { parameterNameSchema } from "./parameters";
 
 /** A change of a model's baseline, or a permitted deviation of one machine. */
@@ -63,3 +64,22 @@ export type DeviationEdit = z.infer<typeof deviationEditSchema>;
 export function changeLabel(number: number): string {
   return `CR-${String(number).padStart(4, "0")}`;
 }
+
+/** What a proposal comes to on one machine of its effectivity whose hardware or site differs from the design evaluated. */
+export const machineEvaluationSchema = z.object({
+  machineId: z.string(),
+  serial: z.string(),
+  siteName: z.string(),
+  level: levelSchema,
+  /** Only findings that are graver here than on the design. */
+  graver: z.array(
+    z.object({
+      key: z.string(),
+      ruleId: z.string(),
+      axis: z.string().nullable(),
+      level: levelSchema,
+      sentence: z.string(),
+    }),
+  ),
+});
+export type MachineEvaluation = z.infer<typeof machineEvaluationSchema>;

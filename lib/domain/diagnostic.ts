@@ -8,6 +8,7 @@ export type DiagnosticCode =
   | "empty"
   | "too-large"
   | "unknown-format"
+  | "not-encodable"
   | "no-known-key"
   | "hidden-character"
   | "bidirectional-character"
