@@ -1,20 +1,14 @@
 import "server-only";
 import pino from "pino";
+import { env } from "./env";
+
+const SECRETS = ["password", "newPassword", "passwordHash", "token", "secret", "authorization", "cookie"];
 
 /** JSON lines on standard output; whatever could sign somebody in is left out. */
 export const logger = pino({
-  level: process.env.LOG_LEVEL ?? "info",
+  level: env().logLevel,
   redact: {
-    paths: [
-      "password",
-      "*.password",
-      "token",
-      "*.token",
-      "authorization",
-      "*.authorization",
-      "cookie",
-      "*.cookie",
-    ],
+    paths: SECRETS.flatMap((name) => [name, `*.${name}`, `*.*.${name}`]),
     censor: "(left out)",
   },
 });
