@@ -1,0 +1,1 @@
+export type { FloorCell, FloorColumn, FloorRow, Standing } from "@/lib/domain/floor";
