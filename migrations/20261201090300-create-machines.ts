@@ -108,7 +108,7 @@ export async function up({ context }: { context: QueryInterface }): Promise<void
       position int not null,
       axis text,
       parameter text not null,
-      kind text not null check (kind in ('drift','not_read')),
+      kind text not null check (kind in ('differs','not_read','stale')),
       required_value double precision,
       actual_value double precision,
       unit text not null,

@@ -116,7 +116,7 @@ export class DriftItemRow extends Model<
   declare position: number;
   declare axis: CreationOptional<string | null>;
   declare parameter: ParameterName;
-  declare kind: "drift" | "not_read";
+  declare kind: "differs" | "not_read" | "stale";
   declare requiredValue: CreationOptional<number | null>;
   declare actualValue: CreationOptional<number | null>;
   declare unit: string;

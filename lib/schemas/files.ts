@@ -10,7 +10,6 @@ const path = z
   .trim()
   .min(1, "A file has a name.")
   .max(300)
-  // eslint-disable-next-line no-control-regex -- file names with control characters are exactly what is refused here
   .regex(/^[^\u0000-\u001f\u007f]+$/, "A file name holds no control characters.");
 
 /** A file as Unicode text, or as its bytes in base64; bytes keep their encoding. */
