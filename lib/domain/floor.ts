@@ -43,3 +43,8 @@ export interface FloorRow {
   readonly sentence: string;
   readonly cells: Readonly<Record<string, FloorCell>>;
 }
+
+/** Key of a parameter's column: the same for every machine whose axis has that name. */
+export function columnKey(axis: string | null, parameter: ParameterName): string {
+  return `${axis?.toLowerCase() ?? ""}.${parameter}`;
+}
