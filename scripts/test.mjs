@@ -1,19 +1,20 @@
 import { mkdirSync, rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import { chooseParts, readArguments } from "./lib/arguments.mjs";
-import { createCluster, ensurePostgres } from "./lib/cluster.mjs";
+import { testCluster } from "./lib/cluster.mjs";
 import { countVitest, total } from "./lib/counts.mjs";
 import { ensureHome, homeFolder, readJson, ROOT } from "./lib/home.mjs";
 import { takeLock } from "./lib/lock.mjs";
 import { demandNode, ensureModules } from "./lib/modules.mjs";
+import { ensurePostgres } from "./lib/postgres.mjs";
 import { createProgress } from "./lib/progress.mjs";
 import { run } from "./lib/run.mjs";
 import { CommandFailed, explain, Interrupted } from "./lib/trouble.mjs";
 
 const PARTS = ["static", "unit", "integration"];
 const DIST_DIR = ".next-test";
+const TSCONFIG = "tsconfig.test.json";
 const SHOWN_LINES = 80;
-const FAST_AND_FORGETFUL = ["fsync=off", "synchronous_commit=off", "full_page_writes=off"];
 
 const interrupt = new AbortController();
 const { signal } = interrupt;
@@ -93,20 +94,20 @@ async function proveStatic({ env, logs }) {
   await prove({ name: "lint", logs, work: check({ env, args: [binary("eslint/bin/eslint.js"), "."] }) });
   const types = async () => {
     await check({ env, args: [binary("next/dist/bin/next"), "typegen"] })();
-    return check({ env, args: [binary("typescript/bin/tsc"), "--noEmit"] })();
+    return check({ env, args: [binary("typescript/bin/tsc"), "--noEmit", "--project", TSCONFIG] })();
   };
   await prove({ name: "types", logs, work: types });
 }
 
 async function proveIntegration({ env, logs, home }) {
   await progress.step("PostgreSQL", (say) => ensurePostgres({ say, signal }));
-  const cluster = createCluster({ home, name: "test-cluster", settings: FAST_AND_FORGETFUL, signal });
+  const cluster = testCluster({ home, signal });
   try {
     await progress.step("Database", async (say) => {
       await cluster.start(say);
       say("ready");
     });
-    const work = vitest({ projects: ["integration"], logs, env: { ...env, DATABASE_URL: cluster.url() } });
+    const work = vitest({ projects: ["integration"], logs, env: { ...env, DATABASE_URL: cluster.url } });
     await prove({ name: "integration", logs, work });
   } finally {
     await cluster.stop();
@@ -129,6 +130,7 @@ async function main() {
     ...process.env,
     NEXT_TELEMETRY_DISABLED: "1",
     KEEPSTEP_DIST_DIR: DIST_DIR,
+    KEEPSTEP_TSCONFIG: TSCONFIG,
     ...(args.long ? { KEEPSTEP_LONG: "1" } : {}),
   };
   await progress.step("Node modules", (say) => ensureModules({ say, signal }));

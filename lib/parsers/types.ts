@@ -34,19 +34,36 @@ export interface Entry {
   readonly value: ParsedValue;
   readonly comment: string | null;
   readonly commentSpan: Span | null;
-  /** A commented-out key. */
+  /** A commented-out key, or one in a branch that never holds (`#if 0`). */
   readonly disabled: boolean;
   /** Conditions (outermost first) under which the entry holds, e.g. ["#if FAST"]; empty: always. */
   readonly conditions: readonly string[];
-  /** A later enabled entry of the same key (and no conditions) takes its place. */
+  /** A later enabled entry of the same key takes its place, or the text takes it back (`#undef`). */
   readonly shadowed: boolean;
 }
+
+/** What a piece of a text is; see `Document.pieces`. */
+export const PIECE = {
+  space: 0,
+  lineEnd: 1,
+  comment: 2,
+  section: 3,
+  key: 4,
+  separator: 5,
+  value: 6,
+  /** `#define`, `#if` ... */
+  directive: 7,
+  /** Kept, but of no meaning to this format. */
+  unread: 8,
+} as const;
 
 /** A parsed text. `text` is kept whole; everything else points into it. */
 export interface Document {
   readonly path: string;
   readonly format: Format;
   readonly text: string;
+  /** What the lexer cut, as triples of PIECE kind, start, end (UTF-16 offsets). The pieces tile the text. */
+  readonly pieces: readonly number[];
   readonly entries: readonly Entry[];
   readonly diagnostics: readonly Diagnostic[];
 }

@@ -2,11 +2,6 @@
 const COPPER = 234.5;
 const COPPER_AT_20 = COPPER + 20;
 
-/** Growth of copper's resistance from a reference temperature (°C), 1/K: 1/(234.5 + T_ref); 0.00393 at 20 °C. */
-export function copperGrowth(referenceC: number): number {
-  return 1 / (COPPER + referenceC);
-}
-
 /** Resistance of copper at a temperature (°C) over that at 20 °C, no unit: (234.5 + T)/254.5. Valid −60 to 250 °C. */
 export function copperFactor(temperatureC: number): number {
   return (COPPER + temperatureC) / COPPER_AT_20;

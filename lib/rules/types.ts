@@ -38,32 +38,50 @@ export interface CurrentProvenance {
   readonly missing: readonly string[];
 }
 
+/** Why a number cannot be had: the paths of what is missing for it. */
+export interface Missing {
+  readonly ok: false;
+  readonly needs: readonly string[];
+  /** A sentence where more than absence is the matter; empty otherwise. */
+  readonly reason: string;
+  /** The heat grows faster than it leaves: there is no steady state. */
+  readonly runaway?: boolean;
+}
+
+/** A number with the paths of the defaults that it rests on. */
+export interface Known {
+  readonly ok: true;
+  readonly value: number;
+  readonly assumed: readonly string[];
+}
+
+export type Datum = Known | Missing;
+
+/** A computed quantity. The formula is put into words only where somebody reads it. */
+export type Computed = (Known & { readonly formula: () => string }) | Missing;
+
 /** What a rule sees of one axis. */
 export interface AxisView {
+  /** As the assembly spells it. */
   readonly axis: string;
   readonly kind: AxisKind;
   readonly hardware: AxisAssembly;
+  readonly assembly: Assembly;
+  readonly policy: Policy;
+  /** A parameter of this axis, or of the machine. */
   readonly parameter: (name: ParameterName) => ParameterValue | undefined;
   readonly quantity: (name: QuantityName) => Computed;
+  /** The same axis with another value of one parameter that its text has. */
+  readonly withValue: (name: ParameterName, value: number) => AxisView;
 }
-
-/** A computed quantity, or the paths of what is missing for it. */
-export type Computed =
-  | {
-      readonly ok: true;
-      readonly value: number;
-      readonly formula: string;
-      readonly assumed: readonly string[];
-    }
-  | { readonly ok: false; readonly needs: readonly string[]; readonly reason: string };
 
 export interface RuleContext {
   readonly input: RuleInput;
   readonly axes: readonly AxisView[];
-  readonly machine: {
-    readonly parameter: (name: ParameterName) => ParameterValue | undefined;
-    readonly quantity: (name: QuantityName) => Computed;
-  };
+  /** A quantity of the whole machine. */
+  readonly quantity: (name: QuantityName) => Computed;
+  /** The same machine with another value of one parameter of one axis. */
+  readonly withValue: (axis: string, name: ParameterName, value: number) => RuleContext;
 }
 
 /** A row of the table of checks. */
@@ -75,7 +93,10 @@ export interface Rule {
   /** The formula in symbols, for the page Checks. */
   readonly formula: string;
   readonly source: string;
-  /** Hardware fields and parameters it can use, e.g. "motor.inductance_mh", "supply.voltage_v", "acceleration". */
+  /**
+   * Hardware fields and parameters it can use: "motor.inductance_mh", "driver.set_point.gain", "supply.voltage_v",
+   * "load.mass_kg", "axis.travel_mm", "machine.ambient_c"; a parameter of the text without a dot: "acceleration".
+   */
   readonly needs: readonly string[];
   /** Near and over limits in words, with the default numbers. */
   readonly margin: string;

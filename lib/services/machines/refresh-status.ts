@@ -79,7 +79,7 @@ function deviationCells(
       const value = report?.parameters.find((own) => columnKey(own.axis, own.parameter) === key);
       const shown = value ? `: ${showValue(parameter, value)}` : "";
       const title = `${parameterLabel(parameter)}${shown}, permitted deviation until ${untilOn}`;
-      return [key, { kind: "deviation" as const, title }];
+      return [key, { kind: "deviation", title }] as [string, FloorCell];
     }),
   );
 }
