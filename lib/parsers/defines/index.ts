@@ -1,0 +1,1 @@
+export { parseDefines } from "./parse";

@@ -1,0 +1,74 @@
+import { PIECE } from "../types";
+
+/** A directive, a comment on lines of its own, or a run of code, in the order of the text. */
+export interface HeaderLine {
+  readonly kind: "directive" | "comment" | "code";
+  /** `define`, `if` ...; empty for comments and code. */
+  readonly word: string;
+  /** Name of a `#define` or `#undef`. */
+  readonly key: string;
+  /** The rest of the directive without comments, white space made single. */
+  readonly body: string;
+  /** Index of its first piece. */
+  readonly at: number;
+  readonly start: number;
+  readonly end: number;
+}
+
+/** Groups the pieces of a header. Comments behind a directive belong to it; neighbouring lines of code are one run. */
+export function collectLines(text: string, pieces: readonly number[]): HeaderLine[] {
+  const lines: HeaderLine[] = [];
+  for (let i = 0; i < pieces.length; i += 3) {
+    const kind = pieces[i];
+    if (kind === PIECE.directive) {
+      lines.push(directiveAt(text, pieces, i));
+      i = lastPieceOfLine(pieces, i);
+    } else if (kind === PIECE.comment) lines.push({ ...BARE, kind: "comment", at: i, ...rangeAt(pieces, i) });
+    else if (kind === PIECE.unread) addCode(lines, pieces, i);
+  }
+  return lines;
+}
+
+const BARE = { word: "", key: "", body: "" };
+
+function rangeAt(pieces: readonly number[], i: number): { start: number; end: number } {
+  const start = pieces[i + 1] ?? 0;
+  return { start, end: pieces[i + 2] ?? start };
+}
+
+function addCode(lines: HeaderLine[], pieces: readonly number[], i: number): void {
+  const range = rangeAt(pieces, i);
+  const last = lines[lines.length - 1];
+  if (last?.kind === "code") lines[lines.length - 1] = { ...last, end: range.end };
+  else lines.push({ ...BARE, kind: "code", at: i, ...range });
+}
+
+function lastPieceOfLine(pieces: readonly number[], from: number): number {
+  let i = from;
+  while (i + 3 < pieces.length && pieces[i + 3] !== PIECE.lineEnd) i += 3;
+  return i;
+}
+
+function directiveAt(text: string, pieces: readonly number[], at: number): HeaderLine {
+  const { start, end } = rangeAt(pieces, at);
+  let key = "";
+  let body = "";
+  for (let i = at + 3; i < pieces.length && pieces[i] !== PIECE.lineEnd; i += 3) {
+    const range = rangeAt(pieces, i);
+    if (pieces[i] === PIECE.key) key = text.slice(range.start, range.end);
+    if (pieces[i] === PIECE.value) body = text.slice(range.start, range.end);
+  }
+  const word = text.slice(start + 1, end).trim();
+  return { kind: "directive", word, key, body: word === "define" ? body : tidy(body), at, start, end };
+}
+
+/** Long conditions are cut, since each entry below carries them. */
+const LONGEST_CONDITION = 200;
+
+function tidy(body: string): string {
+  return body
+    .slice(0, LONGEST_CONDITION)
+    .replace(/\\\r?\n|\\\r/g, " ")
+    .replace(/\s+/g, " ")
+    .trim();
+}

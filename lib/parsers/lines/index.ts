@@ -1,0 +1,1 @@
+export { parseLines } from "./parse";

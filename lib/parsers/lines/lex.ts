@@ -1,0 +1,197 @@
+import {
+  afterLineEnd,
+  CHAR,
+  closeQuote,
+  isBlank,
+  isLetter,
+  isQuote,
+  isWordChar,
+  lineEnd,
+  skipBlanks,
+  startsToken,
+  trimBlanks,
+} from "../chars";
+import { PIECE } from "../types";
+
+/**
+ * Cuts a text of the line family into pieces that tile it: triples of PIECE kind, start, end. One line is
+ * blank, a comment, a `[section]`, or a key with an optional separator (`=`, `:`, or white space) and value.
+ */
+export function lexLines(text: string): number[] {
+  const out: number[] = [];
+  let at = 0;
+  if (text.charCodeAt(0) === CHAR.byteOrderMark) {
+    out.push(PIECE.space, 0, 1);
+    at = 1;
+  }
+  while (at < text.length) {
+    const end = lineEnd(text, at);
+    cutLine(text, at, end, out);
+    at = afterLineEnd(text, end);
+    if (at > end) out.push(PIECE.lineEnd, end, at);
+  }
+  return out;
+}
+
+/** Appends the pieces of one line, or of the content of a comment that may hold a key. */
+export function cutLine(text: string, start: number, end: number, out: number[]): void {
+  const from = skipBlanks(text, start, end);
+  put(out, PIECE.space, start, from);
+  if (from === end) return;
+  if (isCommentStart(text, from, end)) cutComment(text, from, end, out);
+  else if (text.charCodeAt(from) === CHAR.openBracket) cutSection(text, from, end, out);
+  else cutEntry(text, from, end, out);
+}
+
+function put(out: number[], kind: number, start: number, end: number): void {
+  if (end > start) out.push(kind, start, end);
+}
+
+function isCommentStart(text: string, at: number, end: number): boolean {
+  const code = text.charCodeAt(at);
+  if (code === CHAR.hash || code === CHAR.semicolon) return true;
+  return code === CHAR.slash && at + 1 < end && text.charCodeAt(at + 1) === CHAR.slash;
+}
+
+function cutComment(text: string, start: number, end: number, out: number[]): void {
+  const stop = trimBlanks(text, start, end);
+  put(out, PIECE.comment, start, stop);
+  put(out, PIECE.space, stop, end);
+}
+
+/** What follows a section's bracket or a closed value: blanks, then a comment or something unread. */
+function cutRest(text: string, start: number, end: number, out: number[]): void {
+  const from = skipBlanks(text, start, end);
+  put(out, PIECE.space, start, from);
+  if (from === end) return;
+  if (isCommentStart(text, from, end)) cutComment(text, from, end, out);
+  else cutUnread(text, from, end, out);
+}
+
+function cutUnread(text: string, start: number, end: number, out: number[]): void {
+  const stop = trimBlanks(text, start, end);
+  put(out, PIECE.unread, start, stop);
+  put(out, PIECE.space, stop, end);
+}
+
+/** A section reaches to its bracket, or, unclosed, to the end of the line. */
+function cutSection(text: string, start: number, end: number, out: number[]): void {
+  let i = start;
+  while (i < end && text.charCodeAt(i) !== CHAR.closeBracket) i++;
+  const double =
+    text.charCodeAt(start + 1) === CHAR.openBracket && text.charCodeAt(i + 1) === CHAR.closeBracket;
+  const stop = i === end ? trimBlanks(text, start, end) : Math.min(end, i + (double ? 2 : 1));
+  put(out, PIECE.section, start, stop);
+  cutRest(text, stop, end, out);
+}
+
+function cutEntry(text: string, start: number, end: number, out: number[]): void {
+  const keyEnd = endOfKey(text, start, end);
+  if (keyEnd === start) return cutUnread(text, start, end, out);
+  const next = skipBlanks(text, keyEnd, end);
+  if (next === end) return cutBareKey(text, start, keyEnd, end, out);
+  const mark = separatorLength(text, next, end);
+  if (mark > 0) return cutAssigned(text, { start, keyEnd, mark: next, after: next + mark, end }, out);
+  if (next === keyEnd) return cutBareKey(text, start, keyEnd, end, out);
+  if (isCommentStart(text, next, end)) return cutBareKey(text, start, keyEnd, end, out);
+  const spaced = spacedSeparator(text, next, end);
+  if (spaced < 0) {
+    out.push(PIECE.key, start, keyEnd, PIECE.separator, keyEnd, next);
+    return cutValue(text, next, end, out);
+  }
+  const wordsEnd = trimBlanks(text, start, spaced);
+  const after = spaced + separatorLength(text, spaced, end);
+  cutAssigned(text, { start, keyEnd: wordsEnd, mark: spaced, after, end }, out);
+}
+
+interface Assigned {
+  readonly start: number;
+  readonly keyEnd: number;
+  readonly mark: number;
+  readonly after: number;
+  readonly end: number;
+}
+
+function cutAssigned(text: string, at: Assigned, out: number[]): void {
+  out.push(PIECE.key, at.start, at.keyEnd);
+  put(out, PIECE.space, at.keyEnd, at.mark);
+  out.push(PIECE.separator, at.mark, at.after);
+  const value = skipBlanks(text, at.after, at.end);
+  put(out, PIECE.space, at.after, value);
+  if (value === at.end) return;
+  if (value > at.after && isCommentStart(text, value, at.end)) cutComment(text, value, at.end, out);
+  else cutValue(text, value, at.end, out);
+}
+
+function cutBareKey(text: string, start: number, keyEnd: number, end: number, out: number[]): void {
+  out.push(PIECE.key, start, keyEnd);
+  cutRest(text, keyEnd, end, out);
+}
+
+/** A key ends at `=`, `:` or white space; one in quotes ends at its quote. */
+function endOfKey(text: string, start: number, end: number): number {
+  if (isQuote(text.charCodeAt(start))) {
+    const close = closeQuote(text, start, end);
+    if (close > 0) return close;
+  }
+  let i = start;
+  while (i < end) {
+    const code = text.charCodeAt(i);
+    if (code === CHAR.equals || code === CHAR.colon || isBlank(code)) break;
+    i++;
+  }
+  return i;
+}
+
+/** 1 for `=` and `:`, 2 for `:=`, 0 for anything else. */
+function separatorLength(text: string, at: number, end: number): number {
+  const code = text.charCodeAt(at);
+  if (code === CHAR.equals) return 1;
+  if (code !== CHAR.colon) return 0;
+  return at + 1 < end && text.charCodeAt(at + 1) === CHAR.equals ? 2 : 1;
+}
+
+/**
+ * Offset of the separator of a key of several words (`Max speed = 300`, `Max speed: 300`), or -1. Each word
+ * begins with a letter; a `:` must be followed by white space; a second `=` on the line means that the first
+ * word was the key.
+ */
+function spacedSeparator(text: string, start: number, end: number): number {
+  let i = start;
+  for (; i < end; i++) {
+    const code = text.charCodeAt(i);
+    if (code === CHAR.equals) break;
+    if (code === CHAR.colon) return i + 1 === end || isBlank(text.charCodeAt(i + 1)) ? i : -1;
+    if (isBlank(code)) continue;
+    if (isBlank(text.charCodeAt(i - 1)) && !isLetter(code)) return -1;
+    if (!isWordChar(code) && code !== CHAR.minus && code !== CHAR.dot) return -1;
+  }
+  if (i === end) return -1;
+  const second = text.indexOf("=", i + 1);
+  return second >= 0 && second < end ? -1 : i;
+}
+
+/** The value reaches to the blanks before a trailing comment or to the end of the line. */
+function cutValue(text: string, start: number, end: number, out: number[]): void {
+  const comment = startOfComment(text, start, end);
+  const stop = trimBlanks(text, start, comment);
+  put(out, PIECE.value, start, stop);
+  put(out, PIECE.space, stop, comment);
+  if (comment < end) cutComment(text, comment, end, out);
+}
+
+/** A trailing comment begins after white space and outside quotes; a quote opens only where a word may begin. */
+function startOfComment(text: string, start: number, end: number): number {
+  let dead = 0;
+  for (let i = start; i < end; i++) {
+    const code = text.charCodeAt(i);
+    if (code > CHAR.semicolon || code === CHAR.space) continue;
+    if (isQuote(code)) {
+      if (code === dead || !startsToken(text, i)) continue;
+      const close = closeQuote(text, i, end);
+      if (close > 0) i = close - 1;
+      else dead = code;
+    } else if (i > start && isBlank(text.charCodeAt(i - 1)) && isCommentStart(text, i, end)) return i;
+  }
+  return end;
+}

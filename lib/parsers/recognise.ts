@@ -1,0 +1,107 @@
+import { isBlank, lineEnd, afterLineEnd, skipBlanks } from "./chars";
+import { cutLine } from "./lines/lex";
+import { PIECE, type Format } from "./types";
+
+export interface FormatRank {
+  readonly format: Format;
+  /** 0 to 1. */
+  readonly score: number;
+  readonly reasons: readonly string[];
+}
+
+export interface Recognition {
+  /** null: no format fits. */
+  readonly format: Format | null;
+  /** Best first. */
+  readonly ranking: readonly FormatRank[];
+}
+
+/** So many characters of a text decide. */
+const SAMPLE = 64 * 1024;
+const LEAST_SCORE = 0.3;
+
+/** Tells the format of a text from its own lines first and from its file name second. */
+export function recogniseFormat({ path, text }: { path: string; text: string }): Recognition {
+  const counts = countLines(text.slice(0, SAMPLE));
+  const ranking = [rankLines(path, counts), rankDefines(path, counts)].sort((a, b) => b.score - a.score);
+  const best = ranking[0];
+  return { format: best && best.score >= LEAST_SCORE ? best.format : null, ranking };
+}
+
+interface Counts {
+  directives: number;
+  pairs: number;
+  sections: number;
+  other: number;
+}
+
+function countLines(sample: string): Counts {
+  const counts: Counts = { directives: 0, pairs: 0, sections: 0, other: 0 };
+  for (let at = 0; at < sample.length;) {
+    const end = lineEnd(sample, at);
+    countLine(sample, at, end, counts);
+    at = afterLineEnd(sample, end);
+  }
+  return counts;
+}
+
+const DIRECTIVE = /^(?:\/\/+|\/\*)?\s*#\s*(?:define|undef|ifn?def|if|elif|else|endif|include|pragma)\b/;
+
+function countLine(sample: string, start: number, end: number, counts: Counts): void {
+  const from = skipBlanks(sample, start, end);
+  if (from === end) return;
+  if (DIRECTIVE.test(sample.slice(from, Math.min(end, from + 40)))) counts.directives++;
+  else countPlainLine(sample, from, end, counts);
+}
+
+function countPlainLine(sample: string, from: number, end: number, counts: Counts): void {
+  const cut: number[] = [];
+  cutLine(sample, from, end, cut);
+  if (cut[0] === PIECE.section) counts.sections++;
+  else if (cut[0] === PIECE.key && cut.includes(PIECE.value) && isPair(sample, cut)) counts.pairs++;
+  else if (cut[0] !== PIECE.comment) counts.other++;
+}
+
+/** A key with a marked separator, or with white space and one further word. Prose has more words. */
+function isPair(sample: string, cut: readonly number[]): boolean {
+  for (let i = 0; i < cut.length; i += 3) {
+    const start = cut[i + 1] ?? 0;
+    const end = cut[i + 2] ?? start;
+    if (cut[i] === PIECE.separator && !isBlank(sample.charCodeAt(start))) return true;
+    if (cut[i] === PIECE.value) return !/\s[A-Za-z]+\s/.test(sample.slice(start, end));
+  }
+  return false;
+}
+
+function extension(path: string): string {
+  return /\.([A-Za-z0-9]+)$/.exec(path)?.[1]?.toLowerCase() ?? "";
+}
+
+const LINE_FILES = ["conf", "cfg", "cnf", "config", "ini", "txt", "settings", "dump", "prm", "par"];
+const HEADER_FILES = ["h", "hh", "hpp", "hxx", "c", "cpp", "ino", "inc"];
+
+function rankLines(path: string, counts: Counts): FormatRank {
+  const read = counts.pairs + counts.sections;
+  const share = read / Math.max(1, read + counts.directives + counts.other);
+  const named = LINE_FILES.includes(extension(path));
+  const reasons: string[] = [];
+  if (counts.pairs > 0) reasons.push(`${counts.pairs} lines hold a key and a value`);
+  if (counts.sections > 0) reasons.push(`${counts.sections} lines name a section in brackets`);
+  if (named) reasons.push(`the file name ends in .${extension(path)}`);
+  return { format: "lines", score: score(share, named), reasons };
+}
+
+function rankDefines(path: string, counts: Counts): FormatRank {
+  const share = counts.directives / Math.max(1, counts.directives + counts.pairs + counts.sections);
+  const named = HEADER_FILES.includes(extension(path));
+  const reasons: string[] = [];
+  if (counts.directives > 0) reasons.push(`${counts.directives} lines are preprocessor directives`);
+  if (named) reasons.push(`the file name ends in .${extension(path)}`);
+  return { format: "defines", score: score(share, named), reasons };
+}
+
+/** The text's own lines count four fifths, the file name the rest, and more where the lines leave it open. */
+function score(share: number, named: boolean): number {
+  const own = 0.8 * share + (named ? 0.2 : 0);
+  return Math.round(100 * Math.min(1, named ? Math.max(own, 0.35) : own)) / 100;
+}
