@@ -11,11 +11,11 @@ export function countVitest(report) {
   return { passed: report.numPassedTests, failed: report.numFailedTests + unloaded + skipped };
 }
 
-/** Passed and failed tests of a Playwright JSON report; skipped ones and errors outside of tests are failures. */
+/** Passed and failed tests of a Playwright JSON report; skipped and flaky ones and errors outside of tests are failures. */
 export function countPlaywright(report) {
   if (!report) return { passed: 0, failed: 1 };
   const { expected, unexpected, flaky, skipped } = report.stats;
-  return { passed: expected + flaky, failed: unexpected + skipped + (report.errors?.length ?? 0) };
+  return { passed: expected, failed: unexpected + flaky + skipped + (report.errors?.length ?? 0) };
 }
 
 /** The sum of all steps; a step that ended badly without a counted failure still counts as one. */

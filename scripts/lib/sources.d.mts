@@ -1,0 +1,2 @@
+export function sourceFiles(root?: string): string[];
+export function hashSources(root?: string): string;
