@@ -2,6 +2,7 @@ import "server-only";
 import type PgBoss from "pg-boss";
 import type { QueueSettings } from "@/lib/server/queue";
 import { ensureQueue } from "@/lib/server/queue";
+import { recheckJob } from "./recheck";
 
 /** A background job: the name of its queue, how it is tried again, and what it does with the data of one job. */
 export interface Job {
@@ -11,7 +12,7 @@ export interface Job {
 }
 
 /** Every background job of the desk. */
-const JOBS: readonly Job[] = [];
+const JOBS: readonly Job[] = [recheckJob];
 
 /** Starts to work on every queue. */
 export async function registerJobs(boss: PgBoss): Promise<void> {
