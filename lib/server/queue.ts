@@ -80,11 +80,12 @@ export async function enqueue(
   return boss.send(name, data, transaction ? { ...options, db: within(transaction) } : options);
 }
 
-/** Lets the queue write through a transaction of ours. */
+/** Lets the queue write through a transaction of ours. Sequelize takes no undefined where the driver takes it as null. */
 function within(transaction: Transaction): PgBoss.Db {
   return {
     async executeSql(text, values) {
-      const [rows] = await sequelize.query(text, { bind: values, transaction });
+      const bind: unknown[] = values.map((value: unknown) => value ?? null);
+      const [rows] = await sequelize.query(text, { bind, transaction });
       return { rows };
     },
   };
