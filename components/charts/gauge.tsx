@@ -78,7 +78,7 @@ export function Gauge({ reading, unit, level, scale }: GaugeProps) {
   const nearX = nearUse === null ? limitX : x(gaugePlace(nearUse, used).at);
   return (
     <svg
-      className={`gauge gauge-${level}`}
+      className={`gauge gauge-of-${level}`}
       width={WIDTH}
       height={HEIGHT}
       viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
@@ -86,7 +86,7 @@ export function Gauge({ reading, unit, level, scale }: GaugeProps) {
       aria-label={gaugeWords({ reading, unit, level })}
     >
       {reading.limit !== null && <path className="gauge-hatch" d={hatchPath(limitX)} />}
-      {nearX < limitX && <path className="gauge-near" d={`M${nearX} ${MIDDLE}H${limitX}`} />}
+      {nearX < limitX && <path className="gauge-near-zone" d={`M${nearX} ${MIDDLE}H${limitX}`} />}
       <path className="gauge-line" d={`M${PAD} ${MIDDLE}H${WIDTH - PAD}`} />
       <path
         className={reading.limit === null ? "gauge-tick gauge-tick-near" : "gauge-tick"}

@@ -1,3 +1,4 @@
+import type { ReactNode } from "react";
 import { LEVEL_WORDS, type Level } from "@/lib/domain/levels";
 
 export interface LevelMarkProps {
@@ -6,7 +7,7 @@ export interface LevelMarkProps {
   readonly word?: boolean | undefined;
 }
 
-const SHAPES: Record<Level, React.ReactNode> = {
+const SHAPES: Record<Level, ReactNode> = {
   over: <rect x="1" y="1" width="10" height="10" fill="currentColor" stroke="currentColor" />,
   near: (
     <>

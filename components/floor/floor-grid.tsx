@@ -1,0 +1,207 @@
+"use client";
+
+import { defaultRangeExtractor, useVirtualizer, type Range } from "@tanstack/react-virtual";
+import {
+  useCallback,
+  useEffect,
+  useMemo,
+  useRef,
+  useState,
+  type CSSProperties,
+  type KeyboardEvent,
+} from "react";
+import type { FloorColumn, FloorRow } from "@/lib/domain/floor";
+import { plural } from "@/lib/domain/sentences";
+import { axisTitle } from "@/components/findings/axis-title";
+import { usePrinting } from "./browser-state";
+import { cellOf, cellWords, columnWords } from "./cell-words";
+import { columnGroups, LEADING_COLUMNS, tracksOf, WIDTHS } from "./column-groups";
+import { FloorRowView } from "./floor-row";
+import { nextCell, type GridCell } from "./grid-keys";
+import type { FloorData } from "./types";
+
+/** Pixels. */
+const ROW = 28;
+const HEAD = 104;
+/** Rows put on paper; more than that belongs to a filter. */
+const PRINTED_ROWS = 2000;
+/** What the server draws before it knows the window. */
+const FIRST_RECT = { width: 1200, height: 720 };
+
+export interface FloorGridProps extends FloorData {
+  /** Address of a machine without its id. */
+  readonly machineBase: string;
+}
+
+function Head({ columns, opens }: { columns: readonly FloorColumn[]; opens: ReadonlySet<number> }) {
+  return (
+    <div role="rowgroup" className="floor-head">
+      <div className="floor-row floor-axes" aria-hidden="true">
+        {columnGroups(columns).map(({ axis, start, count }) => (
+          <span
+            key={`${axis ?? ""}${start}`}
+            style={{ gridColumn: `${LEADING_COLUMNS + start + 1} / span ${count}` }}
+          >
+            {axisTitle(axis)}
+          </span>
+        ))}
+      </div>
+      <div role="row" aria-rowindex={1} className="floor-row floor-heads">
+        <div role="columnheader" aria-colindex={1} className="floor-machine">
+          Machine
+        </div>
+        <div role="columnheader" aria-colindex={2}>
+          Model
+        </div>
+        <div role="columnheader" aria-colindex={3}>
+          Standing
+        </div>
+        {columns.map((column, index) => (
+          <div
+            key={column.key}
+            role="columnheader"
+            aria-colindex={LEADING_COLUMNS + index + 1}
+            aria-label={columnWords(column)}
+            title={columnWords(column)}
+            className={opens.has(index) ? "floor-slant floor-cell-opens" : "floor-slant"}
+          >
+            <span aria-hidden="true">{column.short}</span>
+          </div>
+        ))}
+      </div>
+    </div>
+  );
+}
+
+/** The active cell in words, for those who cannot hover. */
+function readout(row: FloorRow | undefined, { column }: GridCell, columns: readonly FloorColumn[]): string {
+  if (!row) return "";
+  const parameter = columns[column - LEADING_COLUMNS];
+  if (!parameter) return `${row.serial}, ${row.modelName}, ${row.siteName}: ${row.sentence}`;
+  return `${row.serial}, ${columnWords(parameter)}: ${cellWords(cellOf(row, parameter))}`;
+}
+
+function useRows(count: number, activeRow: number) {
+  const scroller = useRef<HTMLDivElement>(null);
+  const rangeExtractor = useCallback(
+    (range: Range) => {
+      const indices = defaultRangeExtractor(range);
+      // The active row stays in the document, so that the focus is never lost by scrolling.
+      return indices.includes(activeRow) || activeRow >= count
+        ? indices
+        : [...indices, activeRow].sort((a, b) => a - b);
+    },
+    [activeRow, count],
+  );
+  // eslint-disable-next-line react-hooks/incompatible-library -- the library's object changes on its own; nothing here memoizes it
+  const virtualizer = useVirtualizer({
+    count,
+    getScrollElement: () => scroller.current,
+    estimateSize: () => ROW,
+    overscan: 12,
+    rangeExtractor,
+    scrollMargin: HEAD,
+    scrollPaddingStart: HEAD,
+    initialRect: FIRST_RECT,
+  });
+  return { scroller, virtualizer };
+}
+
+function cellAt(target: EventTarget): GridCell | null {
+  const element = target instanceof HTMLElement ? target.closest<HTMLElement>("[data-row]") : null;
+  return element ? { row: Number(element.dataset.row), column: Number(element.dataset.column) } : null;
+}
+
+/** The floor as an ARIA grid: machines by parameters, worked by keyboard alone. */
+export function FloorGrid({ columns, rows, machineBase }: FloorGridProps) {
+  const [active, setActive] = useState<GridCell>({ row: 0, column: 0 });
+  const moved = useRef(false);
+  const printing = usePrinting();
+  const { scroller, virtualizer } = useRows(rows.length, active.row);
+  const opens = useMemo(() => new Set(columnGroups(columns).map(({ start }) => start)), [columns]);
+  const tracks = useMemo(() => tracksOf(columns), [columns]);
+
+  useEffect(() => {
+    if (!moved.current) return;
+    moved.current = false;
+    scroller.current
+      ?.querySelector<HTMLElement>(`[data-row="${active.row}"][data-column="${active.column}"]`)
+      ?.focus();
+  }, [active, scroller]);
+
+  const press = (event: KeyboardEvent): void => {
+    const from = cellAt(event.target);
+    if (!from || event.altKey || event.metaKey) return;
+    if (event.key === "Enter" && from.column > 0) {
+      event.preventDefault();
+      scroller.current?.querySelector<HTMLElement>(`a[data-row="${from.row}"]`)?.click();
+      return;
+    }
+    const page = Math.max(1, Math.floor(((scroller.current?.clientHeight ?? 0) - HEAD) / ROW) - 1);
+    const to = nextCell(from, event, { rows: rows.length, columns: columns.length + LEADING_COLUMNS, page });
+    if (!to) return;
+    event.preventDefault();
+    moved.current = true;
+    virtualizer.scrollToIndex(to.row, { align: "auto" });
+    setActive(to);
+  };
+
+  const view = (index: number, top: number | null) => {
+    const row = rows[index];
+    return (
+      row && (
+        <FloorRowView
+          key={row.machineId}
+          row={row}
+          index={index}
+          columns={columns}
+          opens={opens}
+          top={top}
+          activeColumn={active.row === index ? active.column : null}
+          href={`${machineBase}/${row.machineId}`}
+        />
+      )
+    );
+  };
+  const style = {
+    "--floor-tracks": tracks.template,
+    "--floor-width": `${tracks.width}px`,
+    "--floor-gap": `${WIDTHS.gap}px`,
+  } as CSSProperties;
+  return (
+    <div className="floor-grid" style={style}>
+      <div
+        ref={scroller}
+        className="floor-scroll"
+        role="grid"
+        aria-label="Machines by parameters"
+        aria-rowcount={rows.length + 1}
+        aria-colcount={columns.length + LEADING_COLUMNS}
+        onKeyDown={press}
+        onFocus={(event) => {
+          const cell = cellAt(event.target);
+          if (cell && (cell.row !== active.row || cell.column !== active.column)) setActive(cell);
+        }}
+      >
+        <Head columns={columns} opens={opens} />
+        <div
+          role="rowgroup"
+          className="floor-body"
+          style={printing ? undefined : { height: virtualizer.getTotalSize() }}
+        >
+          {printing
+            ? rows.slice(0, PRINTED_ROWS).map((_, index) => view(index, null))
+            : virtualizer.getVirtualItems().map(({ index, start }) => view(index, start - HEAD))}
+        </div>
+      </div>
+      {printing && rows.length > PRINTED_ROWS && (
+        <p>
+          {plural(rows.length - PRINTED_ROWS, "more machine")} not printed; a filter brings them onto paper.
+        </p>
+      )}
+      <p className="floor-readout" aria-hidden="true">
+        {readout(rows[active.row], active, columns)}
+      </p>
+    </div>
+  );
+}

@@ -1,0 +1,82 @@
+import type { CSSProperties, ReactNode } from "react";
+import { gravest, type Level } from "@/lib/domain/levels";
+import { LevelMark } from "@/components/ui/level-mark";
+import { RevisionMarks } from "@/components/ui/revision-mark";
+import { CodeText } from "./code-text";
+import { lineId } from "./line-anchor";
+import { textLines } from "./text-lines";
+
+/** What the checks say about a line. */
+export interface LineMark {
+  /** From 1. */
+  readonly line: number;
+  readonly level: Level;
+  /** The finding's sentence. */
+  readonly sentence: string;
+}
+
+export interface MarkedTextProps {
+  readonly text: string;
+  readonly path: string;
+  /** Which of the page's texts this is, from 0; sets the lines' addresses. */
+  readonly index?: number | undefined;
+  readonly marks?: readonly LineMark[] | undefined;
+  /** Revision letters by line. */
+  readonly letters?: Readonly<Record<number, readonly string[]>> | undefined;
+  /** What stands below a line, e.g. a question about it. */
+  readonly notes?: Readonly<Record<number, ReactNode>> | undefined;
+}
+
+/** Lines in one block: blocks out of sight cost no layout. */
+const BLOCK = 200;
+
+function marksByLine(marks: readonly LineMark[]): Map<number, LineMark[]> {
+  const byLine = new Map<number, LineMark[]>();
+  for (const mark of marks) byLine.set(mark.line, [...(byLine.get(mark.line) ?? []), mark]);
+  return byLine;
+}
+
+function Margin({ marks, letters }: { marks: readonly LineMark[] | undefined; letters: readonly string[] }) {
+  if (!marks && letters.length === 0) return <span className="line-margin" />;
+  return (
+    <span className="line-margin" title={marks?.map(({ sentence }) => sentence).join("\n")}>
+      <RevisionMarks letters={letters} />
+      {marks && <LevelMark level={gravest(marks.map(({ level }) => level))} word={false} />}
+    </span>
+  );
+}
+
+/** A configuration text with line numbers, addresses (#L12) and a level mark at each line that a finding rests on. */
+export function MarkedText({ text, path, index = 0, marks = [], letters = {}, notes = {} }: MarkedTextProps) {
+  const lines = textLines(text);
+  const byLine = marksByLine(marks);
+  const blocks = Array.from({ length: Math.ceil(lines.length / BLOCK) }, (_, block) => block * BLOCK);
+  const widest = { "--digits": String(lines.length).length } as CSSProperties;
+  return (
+    <div className="code-sheet" role="group" aria-label={`Text of ${path}`} style={widest}>
+      {blocks.map((start) => {
+        const block = lines.slice(start, start + BLOCK);
+        const height = { containIntrinsicBlockSize: `auto ${block.length * 22}px` };
+        return (
+          <ol key={start} className="code-lines" start={start + 1} style={height}>
+            {block.map((line, offset) => {
+              const number = start + offset + 1;
+              return (
+                <li key={number} id={lineId(index, number)} className="code-line">
+                  <Margin marks={byLine.get(number)} letters={letters[number] ?? []} />
+                  <a className="line-number" href={`#${lineId(index, number)}`} aria-label={`line ${number}`}>
+                    {number}
+                  </a>
+                  <span className="line-text">
+                    <CodeText text={line} />
+                  </span>
+                  {notes[number] !== undefined && <div className="line-note">{notes[number]}</div>}
+                </li>
+              );
+            })}
+          </ol>
+        );
+      })}
+    </div>
+  );
+}
