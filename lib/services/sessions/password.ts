@@ -4,8 +4,6 @@ import { hash, verify } from "@node-rs/argon2";
 /** argon2id after OWASP's password storage advice: 19 MiB, 2 passes, 1 lane. */
 const OPTIONS = { algorithm: 2, memoryCost: 19_456, timeCost: 2, parallelism: 1 } as const;
 
-export const PASSWORD_MIN = 12;
-
 export function hashPassword(password: string): Promise<string> {
   return hash(password, OPTIONS);
 }
