@@ -44,6 +44,8 @@ export interface Missing {
   readonly needs: readonly string[];
   /** A sentence where more than absence is the matter; empty otherwise. */
   readonly reason: string;
+  /** Those of `needs` that the text has, but that cannot be used as they stand; `reason` speaks of them. */
+  readonly refused?: readonly string[];
   /** The heat grows faster than it leaves: there is no steady state. */
   readonly runaway?: boolean;
 }

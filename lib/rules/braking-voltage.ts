@@ -1,0 +1,80 @@
+import { exceeds, judgeUpper, upperSign } from "./assessment";
+import type { Assessment } from "./assessment";
+import { lower } from "./candidates";
+import type { Candidate } from "./clearing";
+import { machineRule } from "./check";
+import { hardware, merged, missing } from "./data";
+import { axisEnergy } from "./quantities/braking";
+import { readsOf } from "./quantities/table";
+import { show } from "./show";
+import type { RuleContext } from "./types";
+
+const NEAR = 0.9;
+
+interface Weakest {
+  readonly axis: string;
+  readonly volts: number;
+}
+
+/** The driver that stands least, and the paths of those that are not known. */
+function weakestDriver({ axes }: RuleContext): {
+  readonly weakest: Weakest | null;
+  readonly needs: readonly string[];
+} {
+  const found = axes.map((axis) => ({ axis: axis.axis, most: hardware(axis, "driver", "absolute_max_v") }));
+  const weakest = found.reduce<Weakest | null>(
+    (least, { axis, most }) =>
+      most.ok && (least === null || most.value < least.volts) ? { axis, volts: most.value } : least,
+    null,
+  );
+  return { weakest, needs: found.flatMap(({ most }) => (most.ok ? [] : most.needs)) };
+}
+
+function assess(context: RuleContext): Assessment {
+  if (context.axes.length === 0) return null;
+  const bus = context.quantity("bus_voltage_after_braking");
+  const { weakest, needs } = weakestDriver(context);
+  if (!bus.ok) return { ...bus, needs: merged(bus.needs, needs) };
+  // One driver that is not known may be the weakest; a voltage above a known one is too high all the same.
+  if (weakest === null || (needs.length > 0 && !exceeds(bus.value, weakest.volts))) return missing(...needs);
+  const verdict = judgeUpper({
+    value: bus.value,
+    limit: weakest.volts,
+    near: NEAR * weakest.volts,
+    unit: "V",
+  });
+  return {
+    ok: true,
+    ...verdict,
+    assumed: bus.assumed,
+    sentence: () =>
+      `When all axes brake from their highest speed the bus can rise to ${show(bus.value, "V")}; the driver of axis ${weakest.axis} stands ${show(weakest.volts, "V")} at most.`,
+    formula: () => `${bus.formula()} ${upperSign(verdict)} ${show(weakest.volts, "V")}`,
+  };
+}
+
+/** The speed of the axis with the most kinetic energy first. */
+function candidates({ axes }: RuleContext): Candidate[] {
+  const energy = (axis: (typeof axes)[number]) => {
+    const found = axisEnergy(axis);
+    return found.ok ? found.value : 0;
+  };
+  return [...axes]
+    .sort((one, other) => energy(other) - energy(one))
+    .flatMap((axis) => lower(axis, "max_speed"));
+}
+
+export const BRAKING_VOLTAGE = machineRule({
+  id: "braking-voltage",
+  title: "Bus voltage after braking",
+  compares:
+    "The bus voltage after all axes have braked into the capacitor with the least absolute maximum of the drivers.",
+  formula: "√((V·(1 + tolerance))² + 2·E/C) ≤ V_absolute,max; E = Σ (½·m·v² + ½·n·Jm·(v/r)²)",
+  source: "Energy of a capacitor, nothing lost (form as in Servotronix CDHD2S manual p. 96)",
+  needs: [...readsOf("bus_voltage_after_braking"), "driver.absolute_max_v"],
+  margin: "near above 90 % of the absolute maximum, over above it",
+  caution: null,
+  parameters: ["max_speed", "acceleration"],
+  candidates,
+  assess,
+});

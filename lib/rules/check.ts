@@ -1,0 +1,163 @@
+import type { Finding } from "@/lib/domain/findings";
+import type { ParameterName } from "@/lib/domain/parameters";
+import { joinWords } from "@/lib/domain/sentences";
+import type { ParameterValue } from "@/lib/domain/values";
+import type { Assessment, Judged } from "./assessment";
+import { clearingValue } from "./clearing";
+import type { Candidate, Probe } from "./clearing";
+import { missingSentence } from "./missing-words";
+import type { AxisView, Missing, Rule, RuleContext } from "./types";
+
+interface CheckWords extends Omit<Rule, "evaluate"> {
+  /** The caution stands on every finding, not only where something is the matter. */
+  readonly cautionAlways?: boolean;
+}
+
+/** A check of each axis by itself. */
+export interface AxisCheck extends CheckWords {
+  /** Parameters that the value rests on, the leading one first. */
+  readonly parameters: (axis: AxisView) => readonly ParameterName[];
+  readonly assess: (axis: AxisView) => Assessment;
+  /** Parameters whose change may end `over`, the preferred one first; none where only hardware helps. */
+  readonly candidates?: (axis: AxisView) => readonly Candidate[];
+  /** Motors that move together with those of another axis bear on this check. */
+  readonly coupled?: boolean;
+}
+
+/** A check of the whole machine. */
+export interface MachineCheck extends CheckWords {
+  readonly parameters: readonly ParameterName[];
+  readonly assess: (context: RuleContext) => Assessment;
+  readonly candidates: (context: RuleContext) => readonly Candidate[];
+}
+
+/** A row of the table from a check of each axis: one finding for each axis on which the check has a meaning. */
+export function axisRule(check: AxisCheck): Rule {
+  return {
+    ...words(check),
+    evaluate: ({ axes }) => axes.flatMap((axis) => axisFinding(check, axis)),
+  };
+}
+
+/** A row of the table from a check of the machine. */
+export function machineRule(check: MachineCheck): Rule {
+  return { ...words(check), evaluate: (context) => machineFinding(check, context) };
+}
+
+function words({ id, title, compares, formula, source, needs, margin, caution }: CheckWords) {
+  return { id, title, compares, formula, source, needs: [...new Set(needs)].sort(), margin, caution };
+}
+
+function axisFinding(check: AxisCheck, axis: AxisView): Finding[] {
+  const assessment = check.assess(axis);
+  if (assessment === null) return [];
+  const probe: Probe = ({ parameter }, value) => levelOf(check.assess(axis.withValue(parameter, value)));
+  const names = check.parameters(axis);
+  const stated = names.flatMap((name) => axis.parameter(name) ?? []);
+  return [
+    finding({
+      check,
+      assessment,
+      axis: axis.axis,
+      leading: names.slice(0, 1),
+      stated,
+      note: check.coupled === true ? coupledNote(axis) : "",
+      clear: () => clearingValue(check.candidates?.(axis) ?? [], probe),
+    }),
+  ];
+}
+
+function machineFinding(check: MachineCheck, context: RuleContext): Finding[] {
+  const assessment = check.assess(context);
+  if (assessment === null) return [];
+  const probe: Probe = ({ view, parameter }, value) =>
+    levelOf(check.assess(context.withValue(view.axis, parameter, value)));
+  return [
+    finding({
+      check,
+      assessment,
+      axis: null,
+      leading: check.parameters.slice(0, 1),
+      stated: check.parameters.flatMap((name) => context.axes.flatMap((axis) => axis.parameter(name) ?? [])),
+      note: "",
+      clear: () => clearingValue(check.candidates(context), probe),
+    }),
+  ];
+}
+
+function levelOf(assessment: Assessment) {
+  if (assessment === null) return "within";
+  return assessment.ok ? assessment.level : "cannot";
+}
+
+/** Crossed belts and the like: a move of both axes at once can ask up to twice of one motor. */
+function coupledNote({ hardware: { coupled_with = [] } }: AxisView): string {
+  if (coupled_with.length === 0) return "";
+  const axes = `${coupled_with.length === 1 ? "axis" : "axes"} ${joinWords(coupled_with)}`;
+  return ` Its motors move together with those of ${axes}: a move of both at once can ask up to twice this of one motor.`;
+}
+
+interface Parts {
+  readonly check: CheckWords;
+  readonly assessment: Judged | Missing;
+  readonly axis: string | null;
+  /** The parameter to name even where the text does not have it. */
+  readonly leading: readonly ParameterName[];
+  readonly stated: readonly ParameterValue[];
+  readonly note: string;
+  readonly clear: () => Finding["clearingValue"];
+}
+
+function finding(parts: Parts): Finding {
+  const { check, assessment, axis, leading, stated } = parts;
+  const names = [...new Set([...leading, ...stated.map(({ parameter }) => parameter)])];
+  const common = {
+    ruleId: check.id,
+    axis,
+    parameters: names,
+    source: check.source,
+    spans: stated.map(({ source }) => source),
+  };
+  return assessment.ok
+    ? { ...common, ...judgedFields(parts, assessment) }
+    : { ...common, ...cannotFields(check, assessment, axis) };
+}
+
+type OwnFields = Omit<Finding, "ruleId" | "axis" | "parameters" | "source" | "spans">;
+
+function judgedFields({ check, note, clear }: Parts, judged: Judged): OwnFields {
+  const { level, value, limit, nearLimit, limitSense, margin, unit, assumed } = judged;
+  return {
+    level,
+    sentence: judged.sentence() + note,
+    value,
+    limit,
+    nearLimit,
+    limitSense,
+    margin,
+    unit,
+    formula: judged.formula(),
+    caution: level !== "within" || check.cautionAlways === true ? check.caution : null,
+    clearingValue: level === "over" ? clear() : null,
+    needs: [],
+    assumed,
+  };
+}
+
+function cannotFields(check: CheckWords, lack: Missing, axis: string | null): OwnFields {
+  return {
+    level: "cannot",
+    sentence: missingSentence(lack, axis),
+    value: null,
+    limit: null,
+    nearLimit: null,
+    limitSense: null,
+    margin: null,
+    unit: "",
+    formula: check.formula,
+    caution: check.cautionAlways === true ? check.caution : null,
+    clearingValue: null,
+    needs: lack.needs,
+    assumed: [],
+  };
+}

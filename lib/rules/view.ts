@@ -1,0 +1,99 @@
+import type { AxisAssembly } from "@/lib/domain/assembly";
+import { axisKind } from "@/lib/domain/axis-kind";
+import type { ParameterName } from "@/lib/domain/parameters";
+import type { QuantityName } from "@/lib/domain/quantities";
+import type { ParameterValue } from "@/lib/domain/values";
+import { unusable } from "./data";
+import { AXIS_QUANTITIES, isMachineQuantity, MACHINE_QUANTITIES, rests } from "./quantities/table";
+import type { MachineQuantityName } from "./quantities/table";
+import type { AxisView, Computed, RuleContext, RuleInput } from "./types";
+
+type ByName = ReadonlyMap<ParameterName, ParameterValue>;
+
+const NO_PARAMETERS: ByName = new Map();
+
+/** Parameters by axis, the axis in lower case, "" for the machine's own; a later value takes an earlier one's place. */
+function indexed(parameters: readonly ParameterValue[]): ReadonlyMap<string, ByName> {
+  const byAxis = new Map<string, Map<ParameterName, ParameterValue>>();
+  for (const parameter of parameters) {
+    const axis = parameter.axis?.toLowerCase() ?? "";
+    const byName = byAxis.get(axis) ?? new Map<ParameterName, ParameterValue>();
+    byName.set(parameter.parameter, parameter);
+    byAxis.set(axis, byName);
+  }
+  return byAxis;
+}
+
+/** What the rules see of a machine. Quantities are computed when first asked for. */
+export function ruleContext(input: RuleInput): RuleContext {
+  const byAxis = indexed(input.parameters);
+  const machine = byAxis.get("") ?? NO_PARAMETERS;
+  const axes = input.assembly.axes.map((hardware) =>
+    axisView({
+      input,
+      hardware,
+      values: new Map([...machine, ...(byAxis.get(hardware.axis.toLowerCase()) ?? NO_PARAMETERS)]),
+    }),
+  );
+  return contextOf(input, axes);
+}
+
+function contextOf(input: RuleInput, axes: readonly AxisView[]): RuleContext {
+  const known = new Map<MachineQuantityName, Computed>();
+  const context: RuleContext = {
+    input,
+    axes,
+    quantity: (name) => {
+      if (!isMachineQuantity(name)) return unusable(`${name} is a quantity of an axis.`);
+      const found = known.get(name) ?? MACHINE_QUANTITIES[name].compute(context);
+      known.set(name, found);
+      return found;
+    },
+    withValue: (axis, name, value) =>
+      contextOf(
+        input,
+        axes.map((view) => (view.axis === axis ? view.withValue(name, value) : view)),
+      ),
+  };
+  return context;
+}
+
+interface AxisFacts {
+  readonly input: RuleInput;
+  readonly hardware: AxisAssembly;
+  readonly values: ByName;
+}
+
+function axisView(
+  facts: AxisFacts,
+  before?: { readonly view: AxisView; readonly moved: ParameterName },
+): AxisView {
+  const { input, hardware, values } = facts;
+  const known = new Map<QuantityName, Computed>();
+  const compute = (name: QuantityName): Computed => {
+    if (isMachineQuantity(name)) return unusable(`${name} is a quantity of the machine.`);
+    // What the changed parameter cannot move is the same as before.
+    if (before && !rests(name, before.moved)) return before.view.quantity(name);
+    return AXIS_QUANTITIES[name].compute(view);
+  };
+  const view: AxisView = {
+    axis: hardware.axis,
+    kind: axisKind(hardware.drive_train?.kind),
+    hardware,
+    assembly: input.assembly,
+    policy: input.policy,
+    parameter: (name) => values.get(name),
+    quantity: (name) => {
+      const found = known.get(name) ?? compute(name);
+      known.set(name, found);
+      return found;
+    },
+    withValue: (name, value) => {
+      const stated = values.get(name);
+      if (!stated) return view;
+      const changed = new Map(values).set(name, { ...stated, value });
+      return axisView({ ...facts, values: changed }, { view, moved: name });
+    },
+  };
+  return view;
+}
