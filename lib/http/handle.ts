@@ -12,7 +12,8 @@ import { errorResponse, invalidRequest } from "./problem";
 type Parsed<S> = S extends z.ZodType ? z.output<S> : undefined;
 
 export interface Asked<O extends Operation> {
-  readonly context: Context;
+  /** Null where the operation is open to anybody: nobody in particular asks. */
+  readonly context: O["action"] extends null ? null : Context;
   readonly params: Parsed<O["params"]>;
   readonly query: Parsed<O["query"]>;
   readonly body: Parsed<O["body"]>;
@@ -53,7 +54,8 @@ export function handle<const O extends Operation>(
   };
 }
 
-async function admit(operation: Operation, request: Request): Promise<Context> {
+async function admit(operation: Operation, request: Request): Promise<Context | null> {
+  if (operation.action === null) return null;
   const actor = await requestActor();
   const verdict = decide(actor, operation.action);
   if (!actor)
@@ -67,14 +69,15 @@ async function admit(operation: Operation, request: Request): Promise<Context> {
 function refuseForeignOrigin(request: Request): void {
   const origin = request.headers.get("origin");
   const site = request.headers.get("sec-fetch-site");
-  const foreign = origin !== null && new URL(origin).host !== request.headers.get("host");
+  const host = origin !== null && URL.canParse(origin) ? new URL(origin).host : null;
+  const foreign = origin !== null && host !== request.headers.get("host");
   if (foreign || (site !== null && site !== "same-origin" && site !== "none"))
     throw new ServiceError("forbidden", "This request comes from another site. Nothing was done.");
 }
 
 async function parse<O extends Operation>(
   operation: O,
-  raw: { request: Request; context: Context; params: Record<string, unknown> },
+  raw: { request: Request; context: Context | null; params: Record<string, unknown> },
 ): Promise<Asked<O> | Response> {
   const { request, context } = raw;
   const params = operation.params?.safeParse(raw.params);

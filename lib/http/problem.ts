@@ -16,6 +16,7 @@ const STATUS: Record<ServiceErrorCode, { status: number; title: string }> = {
   too_large: { status: 413, title: "Too large" },
   unsupported: { status: 415, title: "Not a type that is taken here" },
   throttled: { status: 429, title: "Too many tries" },
+  unavailable: { status: 503, title: "Not available" },
 };
 
 function problemResponse(problem: Problem, more: Record<string, unknown> = {}): Response {

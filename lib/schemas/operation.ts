@@ -12,7 +12,8 @@ export interface Operation {
   readonly method: Method;
   /** Below /api/v1, with OpenAPI parameters: "/machines/{id}". */
   readonly path: string;
-  readonly action: Action;
+  /** Null: open to anybody, signed in or not. */
+  readonly action: Action | null;
   readonly summary: string;
   readonly tag: string;
   readonly params?: z.ZodObject;

@@ -11,7 +11,8 @@ export type ServiceErrorCode =
   | "precondition_required"
   | "too_large"
   | "unsupported"
-  | "throttled";
+  | "throttled"
+  | "unavailable";
 
 /** A refusal that the caller can understand: what happened, what was kept, what to do. */
 export class ServiceError extends Error {

@@ -1,0 +1,23 @@
+import type { Operation } from "@/lib/schemas/operation";
+import { catalogOperations } from "./catalog";
+import { changeOperations } from "./changes";
+import { checkOperations } from "./check";
+import { deskOperations } from "./desk";
+import { keyTableOperations } from "./key-tables";
+import { machineOperations } from "./machines";
+import { machineWriteOperations } from "./machines-write";
+import { peopleOperations } from "./people";
+import { readingOperations } from "./readings";
+
+/** Every door of the API. Routes answer through them, OpenAPI describes them, the access test walks them. */
+export const ALL_OPERATIONS: readonly Operation[] = [
+  ...Object.values(catalogOperations),
+  ...Object.values(changeOperations),
+  ...Object.values(checkOperations),
+  ...Object.values(deskOperations),
+  ...Object.values(keyTableOperations),
+  ...Object.values(machineOperations),
+  ...Object.values(machineWriteOperations),
+  ...Object.values(peopleOperations),
+  ...Object.values(readingOperations),
+];
