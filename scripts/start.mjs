@@ -8,6 +8,7 @@ import { ensureBuild } from "./lib/build.mjs";
 import { Cluster } from "./lib/cluster.mjs";
 import { ensureTables, hasPeople, identifyDatabase, loadDemo } from "./lib/data.mjs";
 import { ensureDatabase, query } from "./lib/database.mjs";
+import { undoAll } from "./lib/undo.mjs";
 import { ensureHome, homeFolder, readJson, writeJson } from "./lib/home.mjs";
 import { takeLock } from "./lib/lock.mjs";
 import { startMailCatcher } from "./lib/mail-catcher.mjs";
@@ -18,7 +19,7 @@ import { identify, living } from "./lib/processes.mjs";
 import { createProgress } from "./lib/progress.mjs";
 import { signalGroup } from "./lib/run.mjs";
 import { startServer } from "./lib/server.mjs";
-import { explain, Interrupted, lastLines, Trouble } from "./lib/trouble.mjs";
+import { explain, Interrupted, Trouble } from "./lib/trouble.mjs";
 
 const DATABASE = "keepstep";
 /** Where `--until` may end a start: for the tests of a start that goes wrong. */
@@ -195,25 +196,18 @@ async function untilStopped(server) {
   progress.line("\nStopping …");
 }
 
-async function stopAll() {
-  for (const act of undo.reverse())
-    await act().catch((error) =>
-      progress.line(`While stopping: ${error.message} ${lastLines(error.output ?? "")}`),
-    );
-}
-
 async function main() {
   const home = homeFolder();
   try {
     const { until } = readArguments(process.argv.slice(2), { until: "text" });
     if (until && !STOPS.includes(until)) throw new Trouble(`--until takes one of: ${STOPS.join(", ")}.`);
     await start({ home, port: parsePort(process.env.PORT, 3000), until });
-    await stopAll();
+    await undoAll(undo, progress.line);
     progress.line(
       signal.aborted ? `Stopped. The data are kept in ${home}.` : "Ended as asked, before the server.",
     );
   } catch (error) {
-    await stopAll();
+    await undoAll(undo, progress.line);
     process.stderr.write(
       `\n${served ? "Keepstep stopped" : "Keepstep did not start"}. ${explain(error, doing)}\n`,
     );
