@@ -6,7 +6,7 @@ import { exceeds } from "./assessment";
 import { CURRENT_AGREEMENT, disagreement, textCurrent } from "./quantities/current";
 import { setPointCurrent, setPointParameter } from "./quantities/set-point-current";
 import type { CurrentParameter } from "./quantities/set-point-current";
-import { plain, show, showPercent, showRms } from "./show";
+import { show, showPercent, showRms } from "./show";
 import type { AxisView, CurrentProvenance, ProvenanceStep } from "./types";
 
 /** Spread of the driver's reference and of its sense resistor, shares of 1. Source: TRINAMIC TMC2209 Rev. 1.03 (±5 %); 1 % resistor series. */

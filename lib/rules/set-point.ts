@@ -9,10 +9,10 @@ import { axisRule } from "./check";
 import type { Candidate } from "./clearing";
 import { axisPath, fromText, gather, given, missing, setPoint } from "./data";
 import { CURRENT_AGREEMENT, disagreement, textCurrent } from "./quantities/current";
-import { setPointCurrent, setPointParameter, SET_POINT_READS } from "./quantities/set-point-current";
+import { setPointCurrent, SET_POINT_READS } from "./quantities/set-point-current";
 import type { CurrentParameter } from "./quantities/set-point-current";
 import { formatNumber } from "@/lib/domain/units";
-import { plain, show, showPercent, showRms } from "./show";
+import { plain, show, showRms } from "./show";
 import type { AxisView, Datum, Missing } from "./types";
 
 /** A text's sense resistance may differ from the machine's by this share: the tolerance of the resistor. */
@@ -95,12 +95,16 @@ function onlySetPoint(axis: AxisView, name: CurrentParameter): Part | null {
   };
 }
 
-/** What is missing where the text says nothing that could be held against its current. */
-function absentSetPoint(axis: AxisView): Part | null {
-  if (!axis.hardware.driver?.set_point?.method) return missing(axisPath(axis, "driver.set_point.method"));
-  const parameter = setPointParameter(axis, "run_current");
-  if (parameter === null || axis.parameter(parameter)) return null;
-  return missing(axisPath(axis, parameter));
+/**
+ * What is missing where the text says nothing that could be held against its current. A register step is the very value
+ * of this check, so a driver that has one cannot be checked without it; beside a reference voltage or a direct current
+ * that the text does not repeat there is nothing to compare, and the check has no meaning.
+ */
+function nothingToCompare(axis: AxisView): Missing | null {
+  const method = methodOf(axis);
+  if (method === undefined) return missing(axisPath(axis, "driver.set_point.method"));
+  if (method === "digital_scale") return missing(axisPath(axis, "current_scale"));
+  return axis.parameter("run_current") ? null : missing(axisPath(axis, "run_current"));
 }
 
 /** Share by which the current in the winding differs from what the firmware reckons, given its own sense resistance. */
@@ -167,9 +171,7 @@ function assess(axis: AxisView): Assessment {
     agreementPart(axis, "hold_current"),
   ].filter((part) => part !== null);
   const [first, ...rest] = [...parts].sort((one, other) => rank(one) - rank(other));
-  // A driver that takes its current directly has no set-point: unless its text names a sense resistance, there is
-  // nothing to compare, and the check has no meaning.
-  if (!first) return absentSetPoint(axis);
+  if (!first) return nothingToCompare(axis);
   if (!first.ok) return joined(parts);
   const others = rest.filter((part) => part.ok && part.level !== "within");
   return { ...first, sentence: () => [first, ...others].map(sentenceOf).join(" ") };

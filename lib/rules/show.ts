@@ -19,6 +19,11 @@ export function showPercent(share: number): string {
   return `${formatNumber(share * 100, 2)} %`;
 }
 
+/** A scale, 1/mm or 1/deg, in the words of the floor. */
+export function showScale(value: number, unit: string): string {
+  return `${plain(value)} ${unit.replace("1/", "steps/")}`;
+}
+
 /** A plain number, four significant digits at most. */
 export function plain(value: number): string {
   return formatNumber(value, 4);

@@ -28,7 +28,7 @@ function assess(axis: AxisView): Assessment {
       short
         ? `On its travel of ${show(length, lengths)} the axis never reaches ${show(speed, unit)}: it turns round at ${show(peak, unit)}.${neededTravel(speed, acceleration, lengths)}`
         : `The axis reaches its maximum speed of ${show(speed, unit)} on its travel of ${show(length, lengths)}.`,
-    formula: () => `${parts.formula("peak")} ${short ? "<" : "="} ${show(speed, unit)}`,
+    formula: () => (short ? `${parts.formula("peak")} < ${show(speed, unit)}` : parts.formula("peak")),
   };
 }
 
@@ -46,7 +46,6 @@ export const SPEED_REACHED = axisRule({
   needs: readsOf("peak_speed"),
   margin: "near where the maximum speed is never reached, never over",
   caution: null,
-  coupled: false,
   parameters: () => ["max_speed", "acceleration", "travel_min", "travel_max"],
   assess,
 });

@@ -6,7 +6,7 @@ import { axisRule } from "./check";
 import { gather } from "./data";
 import { scaleUnit, textScale } from "./quantities/geometry";
 import { readsOf } from "./quantities/table";
-import { plain, show, showPercent } from "./show";
+import { plain, showPercent, showScale } from "./show";
 import type { AxisView } from "./types";
 
 const OVER = 0.005;
@@ -45,8 +45,8 @@ function assess(axis: AxisView): Assessment {
     assumed: parts.assumed,
     sentence: () =>
       verdict.level === "within"
-        ? `The scale of ${show(stated, unit)} is what the geometry gives.`
-        : `The scale of ${show(stated, unit)} is ${showPercent(deviation)} off the ${show(expected, unit)} that the geometry gives.${likelyFactor(stated / expected)}`,
+        ? `The scale of ${showScale(stated, unit)} is what the geometry gives.`
+        : `The scale of ${showScale(stated, unit)} is ${showPercent(deviation)} off the ${showScale(expected, unit)} that the geometry gives.${likelyFactor(stated / expected)}`,
     formula: () =>
       `|${plain(stated)} / (${parts.formula("expected")}) − 1| = ${formatNumber(deviation, 2)} ${upperSign(verdict)} ${OVER}`,
   };

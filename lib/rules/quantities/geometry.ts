@@ -6,7 +6,7 @@ import {
   travelPerMotorTurn,
 } from "@/lib/physics/drive-train";
 import { axisPath, computed, fromText, gather, given, hardware, missing, orDefault } from "../data";
-import { plain, show } from "../show";
+import { plain, showScale } from "../show";
 import type { AxisView, Datum } from "../types";
 import type { QuantityDefinition } from "./definition";
 
@@ -77,7 +77,7 @@ export const EXPECTED_SCALE: QuantityDefinition = {
       scale,
       parts.assumed,
       () =>
-        `360° / ${plain(stepAngleDeg)}° · ${plain(microsteps)} / ${plain(travel)} ${unit} = ${show(scale, scaleUnit(axis))}`,
+        `360° / ${plain(stepAngleDeg)}° · ${plain(microsteps)} / ${plain(travel)} ${unit} = ${showScale(scale, scaleUnit(axis))}`,
     );
   },
 };

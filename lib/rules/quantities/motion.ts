@@ -1,7 +1,7 @@
 import { peakSpeed } from "@/lib/physics/profiles";
 import { fullStepRate, stepRate } from "@/lib/physics/step-rate";
 import { axisPath, computed, fromText, gather, given, hardware, missing } from "../data";
-import { plain, show } from "../show";
+import { plain, show, showScale } from "../show";
 import type { AxisView, Datum } from "../types";
 import type { QuantityDefinition } from "./definition";
 import {
@@ -62,7 +62,7 @@ export const STEP_RATE: QuantityDefinition = {
     return computed(
       rate,
       parts.assumed,
-      () => `${show(speed, speedUnit(axis))} · ${show(scale, scaleUnit(axis))} = ${show(rate, "Hz")}`,
+      () => `${show(speed, speedUnit(axis))} · ${showScale(scale, scaleUnit(axis))} = ${show(rate, "Hz")}`,
     );
   },
 };
