@@ -4,7 +4,8 @@ import { diffParameters } from "@/lib/diff/parameters";
 import { parameterLabel } from "@/lib/domain/parameters";
 import { joinWords } from "@/lib/domain/sentences";
 import type { CheckReport } from "@/lib/review/types";
-import { LotMachine, Verification } from "@/models/implementation";
+import type { LotMachine } from "@/models/implementation";
+import { Verification } from "@/models/implementation";
 import type { MachineCondition, StandingLayer } from "@/lib/services/machines/condition";
 import { machineCondition } from "@/lib/services/machines/condition";
 
