@@ -1,6 +1,8 @@
 import type { Finding } from "@/lib/domain/findings";
 import { LEVEL_WORDS, levelRank } from "@/lib/domain/levels";
+import { needWords } from "@/lib/domain/need-words";
 import { parameterLabel } from "@/lib/domain/parameters";
+import { joinWords } from "@/lib/domain/sentences";
 import { formatNumber, showText } from "@/lib/domain/units";
 import { axisWord } from "./axis-word";
 import { showValue } from "./show-value";
@@ -52,7 +54,8 @@ function effectLine(effect: Effect): string {
   const { axis, label, was, toBe, levelToBe, letters, missing } = effect;
   const level = levelToBe === null ? "" : `, ${LEVEL_WORDS[levelToBe]}`;
   const by = letters.length === 0 ? "" : ` (${letters.join(", ")})`;
-  const why = missing.length === 0 ? "" : `, not known: ${missing.join(", ")}`;
+  const why =
+    missing.length === 0 ? "" : `, not known: ${joinWords(missing.map((path) => needWords(path).words))}`;
   const numbers =
     was === null && toBe === null ? "no number" : `${shown(was, effect)} → ${shown(toBe, effect)}`;
   return `${subject(axis, label)}: ${numbers}${limitText(effect)}${level}${why}${by}`;

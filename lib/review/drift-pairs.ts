@@ -19,7 +19,7 @@ export function differingPairs(
   const wanted = new Map(required.map((value) => [parameterKey(value), value]));
   const values = counted.map(({ value }) => value);
   const actual = withValues(required, values);
-  return counted.flatMap((value) => {
+  return counted.flatMap((value): DifferingPair[] => {
     const own = wanted.get(parameterKey(value));
     if (!own) return [{ required: null, counted: value, change: null }];
     const mixed = own.unit !== value.value.unit;

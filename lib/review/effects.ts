@@ -1,5 +1,6 @@
 import type { Finding } from "@/lib/domain/findings";
 import { gravest, levelRank, type Level } from "@/lib/domain/levels";
+import type { ParameterName } from "@/lib/domain/parameters";
 import { QUANTITIES, type Quantity, type QuantityName } from "@/lib/domain/quantities";
 import { QUANTITY_CHECKS, type QuantityChecks } from "./quantity-checks";
 import type { CheckReport, Effect, ParameterChange } from "./types";
@@ -16,8 +17,8 @@ export interface EffectsInput {
 /**
  * What a change does physically, by axis (the machine last) and in the order of QUANTITY_CHECKS: every quantity that
  * moves, every one with a limit that rests on a changed parameter, and on the changed axes what cannot be checked on
- * either side. A revision letter stands at a quantity whose findings name that parameter among those they rest on;
- * this needs no further evaluation. Units as in QUANTITIES.
+ * either side. A revision letter stands at a quantity that rests on that parameter, as its findings say or its definition
+ * does (`restsOn`); this needs no further evaluation. Units as in QUANTITIES.
  */
 export function effects(input: EffectsInput): Effect[] {
   return axesOf(input).flatMap((axis) =>
@@ -40,7 +41,7 @@ interface Side {
 function effectOf(input: EffectsInput, place: Place): Effect | null {
   const was = sideOf(input.before, place);
   const toBe = sideOf(input.after, place);
-  const letters = lettersAt(input.changes, { place, findings: [...was.findings, ...toBe.findings] });
+  const letters = lettersAt(input, { place, findings: [...was.findings, ...toBe.findings] });
   const limits = { ...NO_LIMIT, ...(limitsOf(place, toBe) ?? limitsOf(place, was)) };
   const { name, unit } = toBe.quantity ?? was.quantity ?? unitOf(place.checks.quantity);
   const effect = {
@@ -77,13 +78,21 @@ function reaches(change: ParameterChange, place: { readonly axis: string | null 
 }
 
 function lettersAt(
-  changes: readonly ParameterChange[],
+  { changes, before, after }: EffectsInput,
   { place, findings }: { readonly place: Place; readonly findings: readonly Finding[] },
 ): string[] {
-  const restsOn = new Set([...place.checks.restsOn, ...findings.flatMap(({ parameters }) => parameters)]);
+  const { restsOn } = place.checks;
+  const names =
+    restsOn === "findings"
+      ? findings.flatMap(({ parameters }) => parameters)
+      : [before, after].flatMap((report) => restsOn((name) => statedBy(report, place.axis, name)));
   return changes
-    .filter((change) => restsOn.has(change.parameter) && reaches(change, place))
+    .filter((change) => names.includes(change.parameter) && reaches(change, place))
     .map(({ letter }) => letter);
+}
+
+function statedBy({ parameters }: CheckReport, axis: string | null, name: ParameterName) {
+  return parameters.find((value) => value.parameter === name && sameAxis(value.axis, axis));
 }
 
 function sideOf(report: CheckReport, { axis, checks }: Place): Side {
