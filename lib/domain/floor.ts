@@ -1,9 +1,20 @@
+import { z } from "zod";
 import type { Level } from "./levels";
 import type { ParameterName } from "./parameters";
 
 /** How a machine stands; rows sort in this order. A machine not read on some parameter is never `on_baseline`. */
 export const STANDINGS = ["over", "near", "cannot", "within", "on_baseline", "out_of_service"] as const;
-export type Standing = (typeof STANDINGS)[number];
+export const standingSchema = z.enum(STANDINGS);
+export type Standing = z.infer<typeof standingSchema>;
+
+export const STANDING_WORDS: Record<Standing, string> = {
+  over: "over limit",
+  near: "near limit",
+  cannot: "cannot check or not read",
+  within: "within limits",
+  on_baseline: "on baseline",
+  out_of_service: "out of service",
+};
 
 /** A parameter of an axis (or of the machine) as a column of the floor map. */
 export interface FloorColumn {

@@ -1,5 +1,6 @@
 import "server-only";
 import type { Transaction } from "sequelize";
+import { Op } from "sequelize";
 import type { Layer } from "@/lib/domain/readings";
 import { LAYERS } from "@/lib/domain/readings";
 import { checkConfiguration } from "@/lib/review/check";
@@ -24,7 +25,7 @@ import type { RequiredConfiguration } from "./required";
 import { requiredConfiguration } from "./required";
 
 /** The newest readings that are looked at; older ones cannot stand any more on a machine that is read at all. */
-const READINGS_LOOKED_AT = 500;
+export const READINGS_LOOKED_AT = 500;
 
 /** A standing reading with its files and what they say. */
 export interface StandingLayer {
@@ -100,7 +101,7 @@ async function standingLayers({
   shared,
 }: LayersSought): Promise<StandingLayer[]> {
   const rows = await Reading.findAll({
-    where: { machineId },
+    where: { machineId, readAt: { [Op.lte]: asOf } },
     order: [["readAt", "DESC"]],
     limit: READINGS_LOOKED_AT,
     transaction: transaction ?? null,

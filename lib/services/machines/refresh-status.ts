@@ -13,7 +13,7 @@ import { appendRecord } from "@/lib/services/record/append";
 import type { MachineCondition } from "./condition";
 import { machineCondition } from "./condition";
 
-const NO_BASELINE = "no baseline has been released to it yet";
+export const NO_BASELINE = "no baseline has been released to it yet";
 
 /**
  * Works out where a machine stands and keeps it for the floor, inside the act that may have moved it. A standing that
@@ -52,7 +52,8 @@ async function recompute(tx: Tx, machineId: string): Promise<RecordEntry | null>
   };
 }
 
-function statusOf({ drift, counted, layers, required, requiredReport }: MachineCondition) {
+/** What the floor keeps of a condition: level, sentence and the cells that are not as required. */
+export function statusOf({ drift, counted, layers, required, requiredReport }: MachineCondition) {
   const readAt = Object.values(layers).map(({ reading }) => reading.readAt.getTime());
   const items = drift?.items ?? [];
   const cells = Object.fromEntries([
