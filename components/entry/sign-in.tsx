@@ -46,7 +46,7 @@ export function SignInForm({ next }: { readonly next: string }) {
     else setBusy(false);
   };
   return (
-    <form id={FORM_ID} className="form" onSubmit={(event) => void submit(event)}>
+    <form id={FORM_ID} onSubmit={(event) => void submit(event)}>
       {refusal !== null && (
         <Notice title="Not signed in" live="alert">
           <p>{refusal}</p>

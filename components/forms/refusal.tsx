@@ -1,0 +1,12 @@
+import { sentenceOf } from "@/components/api";
+import { Notice } from "@/components/ui/notice";
+
+/** Why an act was refused; nothing while there is no refusal. */
+export function Refusal({ error, title = "Not done" }: { readonly error: unknown; readonly title?: string }) {
+  if (error === null || error === undefined) return null;
+  return (
+    <Notice title={title} live="alert">
+      <p>{sentenceOf(error)}</p>
+    </Notice>
+  );
+}

@@ -1,0 +1,88 @@
+"use client";
+
+import { zodResolver } from "@hookform/resolvers/zod";
+import { useForm } from "react-hook-form";
+import { z } from "zod";
+import { apiCall } from "@/components/api";
+import { Refusal } from "@/components/forms/refusal";
+import { useSave } from "@/components/forms/use-save";
+import { Button } from "@/components/ui/button";
+import { FieldGroup, TextField } from "@/components/ui/field";
+import { Notice } from "@/components/ui/notice";
+import { savePolicySchema, type PolicyVersionView } from "@/lib/schemas/policies";
+import { typedNumber } from "@/lib/schemas/typed-field";
+import { POLICY_WORDS, shownShare, storedShare, type PolicyField } from "./policy-words";
+
+const { shape } = savePolicySchema.shape.policy;
+const percent = (schema: z.ZodType<number, number>) =>
+  typedNumber(z.number("Type a number in %.").transform(storedShare).pipe(schema));
+
+const typedSchema = z.object({
+  torque_margin_below_limit_speed: percent(shape.torque_margin_below_limit_speed),
+  torque_margin_above_limit_speed: percent(shape.torque_margin_above_limit_speed),
+  junction_limit_c: typedNumber(shape.junction_limit_c),
+  stale_after_days: typedNumber(shape.stale_after_days),
+  note: savePolicySchema.shape.note,
+});
+type Typed = z.input<typeof typedSchema>;
+type Sent = z.output<typeof typedSchema>;
+
+export function PolicyForm({ current }: { readonly current: PolicyVersionView }) {
+  const { policy, version } = current;
+  const form = useForm<Typed, unknown, Sent>({
+    resolver: zodResolver(typedSchema),
+    defaultValues: {
+      torque_margin_below_limit_speed: String(shownShare(policy.torque_margin_below_limit_speed)),
+      torque_margin_above_limit_speed: String(shownShare(policy.torque_margin_above_limit_speed)),
+      junction_limit_c: String(policy.junction_limit_c),
+      stale_after_days: String(policy.stale_after_days),
+      note: "",
+    },
+  });
+  const save = useSave({
+    form,
+    send: ({ note, ...values }: Sent) =>
+      apiCall<PolicyVersionView>("POST", "/policies", { body: { policy: values, note }, ifMatch: version }),
+    onSaved: () => form.resetField("note"),
+  });
+  const { errors } = form.formState;
+  const field = (name: PolicyField) => (
+    <TextField
+      key={name}
+      label={POLICY_WORDS[name].label}
+      unit={POLICY_WORDS[name].unit}
+      help={POLICY_WORDS[name].help}
+      inputMode="decimal"
+      autoComplete="off"
+      error={errors[name]?.message}
+      {...form.register(name)}
+    />
+  );
+  return (
+    <form noValidate onSubmit={(event) => void form.handleSubmit((values) => save.mutate(values))(event)}>
+      <FieldGroup legend="Margins">
+        {field("torque_margin_below_limit_speed")}
+        {field("torque_margin_above_limit_speed")}
+        {field("junction_limit_c")}
+        {field("stale_after_days")}
+      </FieldGroup>
+      <TextField
+        label="Reason"
+        help="Kept with the version and in the record."
+        error={errors.note?.message}
+        {...form.register("note")}
+      />
+      <Refusal error={save.error} title="Not saved" />
+      {save.data && (
+        <Notice live="status">
+          <p>Version {save.data.version} stands. The fleet is being checked again.</p>
+        </Notice>
+      )}
+      <div className="acts">
+        <Button type="submit" variant="primary" busy={save.isPending}>
+          Save as a new version
+        </Button>
+      </div>
+    </form>
+  );
+}
