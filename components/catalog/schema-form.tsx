@@ -3,7 +3,6 @@
 import { useWatch, type FieldValues, type Path, type UseFormReturn } from "react-hook-form";
 import type { z } from "zod";
 import { FieldGroup, SelectField, TextField } from "@/components/ui/field";
-import { joinWords } from "@/lib/domain/sentences";
 import { unlockedBy } from "@/lib/rules/unlocks";
 import {
   choiceWords,
@@ -13,6 +12,7 @@ import {
   type TypedValues,
 } from "@/lib/schemas/form-fields";
 import { groupedFields, isAsked, type FieldSubject } from "./field-groups";
+import { unlockSentence } from "./unlock-sentence";
 
 export interface SchemaFormProps<T extends FieldValues> {
   readonly subject: FieldSubject;
@@ -20,17 +20,6 @@ export interface SchemaFormProps<T extends FieldValues> {
   readonly form: UseFormReturn<T, unknown, unknown>;
   /** Where the entries stand in the form's values: "data", "hardware.axes.0.load". */
   readonly prefix: string;
-}
-
-const SHOWN_TITLES = 5;
-
-/** What an empty field keeps from being checked. */
-export function unlockSentence(titles: readonly string[]): string | null {
-  if (titles.length === 0) return null;
-  const more = titles.length - SHOWN_TITLES;
-  const shown = titles.slice(0, SHOWN_TITLES);
-  const words = more > 0 ? [...shown, `${more} more`] : shown;
-  return `Empty. Would unlock: ${joinWords(words)}.`;
 }
 
 /** The sentence of a form's error at a dotted path; of a list, the first. */

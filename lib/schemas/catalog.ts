@@ -94,3 +94,14 @@ export const itemViewSchema = itemRowSchema.extend({
   usedBy: usedBySchema,
 });
 export type ItemView = z.infer<typeof itemViewSchema>;
+
+/** An item in short, for forms that choose one. */
+export interface ItemChoice {
+  readonly id: string;
+  readonly kind: CatalogKind;
+  readonly code: string;
+  readonly name: string;
+  readonly retired: boolean;
+  /** Only of drive trains: "belt", "rotary" ...; null where not stated. */
+  readonly driveTrainKind: string | null;
+}

@@ -3,10 +3,12 @@ import { catalogKindSchema, modelHardwareSchema } from "@/lib/domain/catalog";
 import { answeredInstant, codeSchema, nameSchema } from "./codes";
 import { pageQuery, paged } from "./common";
 
-type Hardware = z.infer<typeof modelHardwareSchema>;
+interface NamedAxes {
+  readonly axes: readonly { readonly axis: string; readonly coupled_with: readonly string[] }[];
+}
 
 /** Axis names differ without regard to case, and a coupled axis is another axis of the same model. */
-function checkAxes(hardware: Hardware, context: z.RefinementCtx): void {
+export function checkAxes(hardware: NamedAxes, context: z.RefinementCtx): void {
   const names = hardware.axes.map(({ axis }) => axis.toLowerCase());
   hardware.axes.forEach(({ axis, coupled_with }, index) => {
     if (names.indexOf(axis.toLowerCase()) < index)

@@ -1,0 +1,12 @@
+import { joinWords } from "@/lib/domain/sentences";
+
+const SHOWN_TITLES = 5;
+
+/** What an empty field keeps from being checked. */
+export function unlockSentence(titles: readonly string[]): string | null {
+  if (titles.length === 0) return null;
+  const more = titles.length - SHOWN_TITLES;
+  const shown = titles.slice(0, SHOWN_TITLES);
+  const words = more > 0 ? [...shown, `${more} more`] : shown;
+  return `Empty. Would unlock: ${joinWords(words)}.`;
+}
