@@ -1,8 +1,10 @@
 import type { Finding } from "@/lib/domain/findings";
+import { LEVEL_WORDS, type Level } from "@/lib/domain/levels";
 import { parameterDefinition, parameterLabel, type ParameterName } from "@/lib/domain/parameters";
 import type { Quantity } from "@/lib/domain/quantities";
 import { formatNumber } from "@/lib/domain/units";
 import type { ParameterValue } from "@/lib/domain/values";
+import { RULES } from "@/lib/rules/table";
 import { onAxis } from "./axis-word";
 import type { Consequence } from "./drift-types";
 import { showValue } from "./show-value";
@@ -14,14 +16,16 @@ export interface DriftSide {
   readonly quantities: readonly Quantity[];
 }
 
+/** Whether checks rest on a parameter, and whether any of them could judge it. */
+export type Checked = "judged" | "cannot" | "no_check";
+
 export interface SentenceInput {
   readonly axis: string | null;
   readonly parameter: ParameterName;
   readonly required: ParameterValue | null;
   readonly actual: ParameterValue;
   readonly consequence: Consequence | null;
-  /** Whether no check at all could judge the parameter. */
-  readonly unchecked: boolean;
+  readonly checked: Checked;
   readonly sides: { readonly required: DriftSide; readonly actual: DriftSide };
 }
 
@@ -30,7 +34,8 @@ export function driftSentence(input: SentenceInput): string {
   if (input.parameter === "direction_reversed") return onAxis(input.axis, "runs the other way");
   if (input.consequence) return consequenceSentence(input, input.consequence);
   const change = onAxis(input.axis, changeWords(input));
-  if (input.unchecked) return `${change}, cannot be checked`;
+  if (input.checked === "cannot") return `${change}, cannot be checked`;
+  if (input.checked === "no_check") return `${change}, no check rests on it`;
   const slower = plainSpeedWords(input);
   return slower === null
     ? `${change}, no effect on a limit`
@@ -63,16 +68,26 @@ function plainSpeedWords({ parameter, required, actual }: SentenceInput): string
 function consequenceSentence(input: SentenceInput, { was, toBe }: Consequence): string {
   if (toBe.level === "cannot") return cannotSentence(input, toBe);
   const { axis } = toBe;
-  if (toBe.ruleId === "hold-torque" && toBe.value !== null && toBe.value < 0) {
-    const share = formatNumber(Math.max(0, Math.round((toBe.value + 1) * 100) / 100));
-    return onAxis(axis, `hold ${share} of the load: may fall`);
-  }
+  if (toBe.ruleId === "hold-torque" && toBe.value !== null && toBe.value < 0)
+    return onAxis(axis, fallingWords(toBe.value + 1, toBe.level));
   if (toBe.ruleId === "steps-per-mm") return partsSentence(input, toBe);
   if (toBe.ruleId === "corner-speed") return cornerSentence(was, toBe);
   const words = VALUE_WORDS[toBe.ruleId];
-  if (words === undefined || toBe.value === null)
-    return onAxis(axis, changeWords(input)) + ": " + toBe.sentence;
+  if (words === undefined || toBe.value === null) return titledSentence(input, toBe, LEVEL_WORDS[toBe.level]);
   return onAxis(axis, `${words} ${shownPair(was?.value ?? null, toBe.value, toBe.unit)}`);
+}
+
+/** Only over limit does nothing but the motor hold the load: a holding brake makes it near limit. */
+function fallingWords(share: number, level: Level): string {
+  const shown = formatNumber(Math.max(0, Math.round(share * 100) / 100));
+  return `hold ${shown} of the load: ${level === "over" ? "may fall" : "the brake alone holds it"}`;
+}
+
+/** "X current scale 20 → 8: set-point near limit" */
+function titledSentence(input: SentenceInput, finding: Finding, verdict: string): string {
+  const title = RULES.find(({ id }) => id === finding.ruleId)?.title ?? finding.ruleId;
+  const change = onAxis(input.axis, changeWords(input));
+  return `${change}: ${title[0]?.toLowerCase() ?? ""}${title.slice(1)} ${verdict}`;
 }
 
 /** What the value of a check is called in a sentence. */
@@ -119,11 +134,11 @@ function scaleError({ parameters, quantities }: DriftSide, axis: string | null):
   return scale && expected ? scale.value / expected.value : null;
 }
 
-function cannotSentence(input: SentenceInput, { axis, sentence }: Finding): string {
+function cannotSentence(input: SentenceInput, finding: Finding): string {
   const { parameter, actual, required } = input;
   if (required?.basis && actual.basis === null)
     return onAxis(input.axis, `${lowerLabel(parameter, actual)} has no basis, peak or rms`);
-  return onAxis(axis ?? input.axis, `${changeWords(input)}: ${sentence}`);
+  return titledSentence(input, finding, "cannot be checked");
 }
 
 /** The label inside a sentence: "corner speed". */

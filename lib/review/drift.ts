@@ -10,7 +10,7 @@ import { parameterKey } from "./axis-word";
 import { attributeConsequences, byGravity } from "./drift-consequences";
 import { machineSentence, unknownSentence } from "./drift-machine-sentence";
 import { differingPairs, withValues, type DifferingPair } from "./drift-pairs";
-import { driftSentence, type DriftSide } from "./drift-sentence";
+import { driftSentence, type Checked, type DriftSide } from "./drift-sentence";
 import type { Consequence, Drift, DriftItem } from "./drift-types";
 import type { CountedValue } from "./standing";
 import type { CheckReport } from "./types";
@@ -86,19 +86,19 @@ function differingItems(desk: Desk): DriftItem[] {
 function differingItem(desk: Desk, pair: DifferingPair, consequences: readonly Consequence[]): DriftItem {
   const { axis, parameter, value } = pair.counted;
   const staleDays = staleDaysOf(desk, pair.counted);
-  const unchecked = consequences.length === 0 && isUnchecked(value, desk.actual.findings);
+  const checked = howChecked(value, desk.actual.findings);
   const sentence = driftSentence({
     axis,
     parameter,
     required: pair.required,
     actual: value,
     consequence: consequences[0] ?? null,
-    unchecked,
+    checked,
     sides: desk.sides,
   });
   const levels: Level[] = consequences.map(({ toBe }) => toBe.level);
   if (parameter === "direction_reversed") levels.push("near");
-  if (unchecked || staleDays !== null) levels.push("cannot");
+  if (checked === "cannot" || staleDays !== null) levels.push("cannot");
   return {
     kind: "differs",
     axis,
@@ -114,14 +114,15 @@ function differingItem(desk: Desk, pair: DifferingPair, consequences: readonly C
   };
 }
 
-/** Checks rest on the parameter, and not one of them could judge it. */
-function isUnchecked({ axis, parameter }: ParameterValue, findings: readonly Finding[]): boolean {
+/** A drift that its checks could not judge is never within limits for that. */
+function howChecked({ axis, parameter }: ParameterValue, findings: readonly Finding[]): Checked {
   const resting = findings.filter(
     (finding) =>
       finding.parameters.includes(parameter) &&
-      (axis === null || finding.axis?.toLowerCase() === axis.toLowerCase()),
+      (axis === null || finding.axis === null || finding.axis.toLowerCase() === axis.toLowerCase()),
   );
-  return resting.length > 0 && resting.every(({ level }) => level === "cannot");
+  if (resting.length === 0) return "no_check";
+  return resting.every(({ level }) => level === "cannot") ? "cannot" : "judged";
 }
 
 /** Required values that no layer has, and values as required whose reading is too old. */
