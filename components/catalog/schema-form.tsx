@@ -20,6 +20,8 @@ export interface SchemaFormProps<T extends FieldValues> {
   readonly form: UseFormReturn<T, unknown, unknown>;
   /** Where the entries stand in the form's values: "data", "hardware.axes.0.load". */
   readonly prefix: string;
+  /** Whether empty fields say what they would unlock; not where empty means "as the model has it". */
+  readonly hints?: boolean;
 }
 
 /** The sentence of a form's error at a dotted path; of a list, the first. */
@@ -31,7 +33,13 @@ export function errorAt(errors: object, path: string): string | undefined {
 }
 
 /** The fields of a schema under headings, each with its unit; an empty one says which checks it would unlock. */
-export function SchemaForm<T extends FieldValues>({ subject, schema, form, prefix }: SchemaFormProps<T>) {
+export function SchemaForm<T extends FieldValues>({
+  subject,
+  schema,
+  form,
+  prefix,
+  hints = true,
+}: SchemaFormProps<T>) {
   const values = useWatch({ control: form.control, name: prefix as Path<T> }) as TypedValues | undefined;
   const typed = (path: string): string => {
     const value = valueAt(values, path);
@@ -47,7 +55,9 @@ export function SchemaForm<T extends FieldValues>({ subject, schema, form, prefi
               <SchemaField
                 key={field.path}
                 field={field}
-                unlocks={typed(field.path) === "" ? unlockSentence(unlockedBy(subject, field.path)) : null}
+                unlocks={
+                  hints && typed(field.path) === "" ? unlockSentence(unlockedBy(subject, field.path)) : null
+                }
                 error={errorAt(form.formState.errors, `${prefix}.${field.path}`)}
                 control={form.register(`${prefix}.${field.path}` as Path<T>)}
               />

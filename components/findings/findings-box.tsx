@@ -110,7 +110,7 @@ export function FindingsBox({ findings, label, empty, ...rest }: FindingsBoxProp
       {within.length > 0 && (
         <details className="findings-within">
           <summary>
-            <LevelMark level="within" /> <span>{plural(within.length, "check")}</span>
+            <LevelMark level="within" word={false} /> {plural(within.length, "check")} within limits
           </summary>
           <ul>{within.map(row)}</ul>
         </details>

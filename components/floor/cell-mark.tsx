@@ -5,8 +5,8 @@ import type { Level } from "@/lib/domain/levels";
 const WIDTH = 28;
 const HEIGHT = 24;
 const MIDDLE = 12;
-const BAR = 10;
-const LONGEST = 10;
+const BAR = 11;
+const LONGEST = 11;
 const SHORTEST = 3.5;
 
 function Bar({ share, level }: { share: number; level: Level }) {

@@ -22,7 +22,7 @@ export function columnGroups(columns: readonly FloorColumn[]): ColumnGroup[] {
 export const LEADING_COLUMNS = 3;
 
 /** Pixels: widths of the leading columns, of a parameter column, and the gap before each axis. */
-export const WIDTHS = { leading: [104, 150, 290], parameter: 32, gap: 18 } as const;
+export const WIDTHS = { leading: [104, 136, 272], parameter: 31, gap: 18 } as const;
 
 /** Grid tracks of every row in pixels, the gap before each axis inside its first column, and their sum. */
 export function tracksOf(columns: readonly FloorColumn[]): { template: string; width: number } {

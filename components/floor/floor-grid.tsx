@@ -22,7 +22,7 @@ import type { FloorData } from "./types";
 
 /** Pixels. */
 const ROW = 28;
-const HEAD = 104;
+const HEAD = 96;
 /** Rows put on paper; more than that belongs to a filter. */
 const PRINTED_ROWS = 2000;
 /** What the server draws before it knows the window. */
@@ -48,7 +48,7 @@ function Head({ columns, opens }: { columns: readonly FloorColumn[]; opens: Read
       </div>
       <div role="row" aria-rowindex={1} className="floor-row floor-heads">
         <div role="columnheader" aria-colindex={1} className="floor-machine">
-          Machine
+          <span>Machine</span>
         </div>
         <div role="columnheader" aria-colindex={2}>
           Model

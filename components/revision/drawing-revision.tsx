@@ -28,9 +28,9 @@ interface LineContext {
   readonly index: number;
 }
 
-function Segment({ segment, blanks }: { segment: RevisionSegment; blanks: boolean }) {
-  const words = <CodeText text={segment.text} blanks={blanks && segment.kind !== "same"} />;
-  if (segment.kind === "same") return words;
+function Segment({ segment }: { segment: RevisionSegment }) {
+  const words = <CodeText text={segment.text} blanks={segment.text.trim() === ""} />;
+  if (segment.kind === "same") return <CodeText text={segment.text} />;
   if (segment.kind === "was")
     return (
       <del>
@@ -43,6 +43,17 @@ function Segment({ segment, blanks }: { segment: RevisionSegment; blanks: boolea
       <span className="visually-hidden">to be </span>
       {words}
     </ins>
+  );
+}
+
+/** Said where a firmware reads the same as before. */
+function Aside({ line }: { line: RevisionLine }) {
+  if (!line.onlySpace || line.kind !== "changed") return null;
+  const inLine = line.segments.some(({ kind }) => kind !== "same");
+  return (
+    <bdi className="line-aside">
+      {inLine ? "only spacing or a comment differs" : "only the line end differs"}
+    </bdi>
   );
 }
 
@@ -72,9 +83,9 @@ function Line({ line, context }: { line: RevisionLine; context: LineContext }) {
       </span>
       <span className="line-text">
         {line.segments.map((segment, index) => (
-          <Segment key={index} segment={segment} blanks={line.onlySpace} />
+          <Segment key={index} segment={segment} />
         ))}
-        {line.onlySpace && line.kind !== "same" && <span className="line-aside">only spacing differs</span>}
+        <Aside line={line} />
       </span>
       {note !== undefined && <div className="line-note">{note}</div>}
     </li>
@@ -84,9 +95,11 @@ function Line({ line, context }: { line: RevisionLine; context: LineContext }) {
 /** The zigzag of a shortened part. */
 function BreakLine() {
   return (
-    <svg className="break-line" viewBox="0 0 400 14" preserveAspectRatio="xMidYMid slice" aria-hidden="true">
-      <path d="M0 7H190l5-5 7 10 5-8 3 3H400" />
-    </svg>
+    <span className="break-line" aria-hidden="true">
+      <svg width="36" height="14" viewBox="0 0 36 14">
+        <path d="M0 7h9l5-5.5 8 11L27 7h9" />
+      </svg>
+    </span>
   );
 }
 
@@ -97,7 +110,6 @@ function Closed({ stretch, context }: { stretch: RevisionStretch; context: LineC
         <summary>
           <BreakLine />
           <span className="break-words">{plural(stretch.lines.length, "line")} as before</span>
-          <BreakLine />
         </summary>
         <ol className="code-lines">
           {stretch.lines.map((line, index) => (

@@ -1,10 +1,10 @@
 import type { CSSProperties, ReactNode } from "react";
+import { splitLines, withoutLineEnd } from "@/lib/diff/text-lines";
 import { gravest, type Level } from "@/lib/domain/levels";
 import { LevelMark } from "@/components/ui/level-mark";
 import { RevisionMarks } from "@/components/ui/revision-mark";
 import { CodeText } from "./code-text";
 import { lineId } from "./line-anchor";
-import { textLines } from "./text-lines";
 
 /** What the checks say about a line. */
 export interface LineMark {
@@ -48,7 +48,7 @@ function Margin({ marks, letters }: { marks: readonly LineMark[] | undefined; le
 
 /** A configuration text with line numbers, addresses (#L12) and a level mark at each line that a finding rests on. */
 export function MarkedText({ text, path, index = 0, marks = [], letters = {}, notes = {} }: MarkedTextProps) {
-  const lines = textLines(text);
+  const lines = splitLines(text).map(withoutLineEnd);
   const byLine = marksByLine(marks);
   const blocks = Array.from({ length: Math.ceil(lines.length / BLOCK) }, (_, block) => block * BLOCK);
   const widest = { "--digits": String(lines.length).length } as CSSProperties;
@@ -58,7 +58,7 @@ export function MarkedText({ text, path, index = 0, marks = [], letters = {}, no
         const block = lines.slice(start, start + BLOCK);
         const height = { containIntrinsicBlockSize: `auto ${block.length * 22}px` };
         return (
-          <ol key={start} className="code-lines" start={start + 1} style={height}>
+          <ol key={start} className="code-lines code-block" start={start + 1} style={height}>
             {block.map((line, offset) => {
               const number = start + offset + 1;
               return (

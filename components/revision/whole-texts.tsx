@@ -1,6 +1,6 @@
 "use client";
 
-import DiffViewer, { DiffMethod, type ReactDiffViewerStylesOverride } from "react-diff-viewer-continued";
+import DiffViewer, { type ReactDiffViewerStylesOverride } from "react-diff-viewer-continued";
 import { useNonce } from "@/components/shell/nonce";
 
 export interface WholeTextsProps {
@@ -17,8 +17,6 @@ const COLOUR_VARIABLES = {
   addedColor: "var(--blueprint)",
   removedBackground: "transparent",
   removedColor: "var(--copper)",
-  wordAddedBackground: "var(--blueprint-wash)",
-  wordRemovedBackground: "var(--copper-wash)",
   addedGutterBackground: "transparent",
   removedGutterBackground: "transparent",
   gutterBackground: "transparent",
@@ -35,14 +33,19 @@ const FACE = { fontFamily: "var(--font-code)", fontSize: "13px", lineHeight: "22
 
 const STYLES: ReactDiffViewerStylesOverride = {
   variables: { light: COLOUR_VARIABLES, dark: COLOUR_VARIABLES },
-  diffContainer: { minWidth: 0, pre: { ...FACE, whiteSpace: "pre-wrap", overflowWrap: "anywhere" } },
+  diffContainer: {
+    width: "100%",
+    minWidth: 0,
+    pre: { ...FACE, whiteSpace: "pre-wrap", overflowWrap: "anywhere" },
+  },
   contentText: FACE,
-  marker: { display: "none" },
-  wordAdded: { textDecoration: "underline", textUnderlineOffset: "3px" },
-  wordRemoved: { textDecoration: "line-through" },
+  diffRemoved: { textDecoration: "line-through" },
+  diffAdded: { textDecoration: "underline", textUnderlineOffset: "3px" },
+  marker: { paddingInline: 0, pre: { display: "none" } },
+  content: { width: "100%" },
 };
 
-/** Both whole texts in one column, old lines before new ones, in the house's marks; needs script. */
+/** Both whole texts in one column, struck old lines before underlined new ones; needs script. */
 export function WholeTexts({ path, was, toBe }: WholeTextsProps) {
   const nonce = useNonce();
   return (
@@ -55,7 +58,7 @@ export function WholeTexts({ path, was, toBe }: WholeTextsProps) {
         hideSummary
         showDiffOnly={false}
         disableWorker
-        compareMethod={DiffMethod.WORDS_WITH_SPACE}
+        disableWordDiff
         styles={STYLES}
         {...(nonce === undefined ? {} : { nonce })}
       />

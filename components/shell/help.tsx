@@ -113,11 +113,13 @@ export function Help() {
       </Part>
       <Part title="Signs">
         <Signs />
-        <FloorLegend />
+        <div className="mt-4">
+          <FloorLegend />
+        </div>
       </Part>
       <Part title="Keys">
         <KeyWays />
-        <p className="quiet">The keys that act at once can be turned off in the menu under your name.</p>
+        <p className="quiet mt-3">The keys that act at once can be turned off in the menu under your name.</p>
       </Part>
       <Part title="Cautions">
         <p>
