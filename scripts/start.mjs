@@ -122,6 +122,7 @@ async function openMail({ home, state, keep, say }) {
 }
 
 async function serve({ home, port, env, say }) {
+  say("waiting for its first answer");
   const server = await startServer({ port, env, signal, logFile: path.join(home, "server.log") });
   undo.push(() => server.stop());
   const runFile = path.join(home, "run.json");

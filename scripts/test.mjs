@@ -15,7 +15,7 @@ import { run } from "./lib/run.mjs";
 import { CommandFailed, explain, Interrupted } from "./lib/trouble.mjs";
 import { undoAll } from "./lib/undo.mjs";
 
-const PARTS = ["static", "unit", "integration", "build", "e2e"];
+const PARTS = ["static", "unit", "build", "integration", "e2e"];
 const SHOWN_LINES = 80;
 
 const interrupt = new AbortController();
@@ -74,8 +74,7 @@ function vitest({ projects, env, logs, say }) {
   const chosen = projects.flatMap((project) => ["--project", project]);
   const reporters = ["--reporter=default", "--reporter=json", `--outputFile.json=${report}`];
   let files = 0;
-  const onLine = (line) =>
-    /^\S*[✓❯×]/.test(line) && / tests?\b/.test(line) && say(`${(files += 1)} files done`);
+  const onLine = (line) => /^[✓❯×]/.test(line) && / tests?\b/.test(line) && say(`${(files += 1)} files done`);
   const args = [binary("vitest/vitest.mjs"), "run", ...chosen, ...reporters];
   return countRun({ args, env, report, count: countVitest, onLine });
 }
@@ -131,8 +130,8 @@ async function proveEndToEnd({ env, logs, home }) {
 const PROOFS = {
   static: proveStatic,
   unit: proveUnit,
-  integration: proveIntegration,
   build: proveBuild,
+  integration: proveIntegration,
   e2e: proveEndToEnd,
 };
 

@@ -18,6 +18,8 @@ export async function ensureBuild({ distDir, say, signal, env }) {
     // Types are proven by the tests; here they would only make the start slower.
     env: { ...env, NODE_ENV: "production", KEEPSTEP_DIST_DIR: distDir, KEEPSTEP_TYPES_PROVEN: "1" },
     signal,
+    name: "next build",
+    onLine: (line) => /^[✓○] |\.\.\.$/.test(line) && say(`building, ${line.replace(/^[✓○] /, "")}`),
   });
   writeFileSync(stamp, sources);
   say("built");

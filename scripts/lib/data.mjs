@@ -13,6 +13,7 @@ export function runOn(url, file, { args = [], signal, env = process.env, ...opti
     cwd: ROOT,
     env: { ...env, DATABASE_URL: url },
     signal,
+    name: file,
     ...options,
   });
 }

@@ -48,6 +48,7 @@ export async function ensureModules({ say, signal, env = process.env }) {
     cwd: ROOT,
     env: { ...env, NODE_ENV: "development" },
     signal,
+    name: "npm ci",
   });
   say(`${count} packages installed`);
 }

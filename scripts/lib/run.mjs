@@ -1,4 +1,5 @@
 import { spawn } from "node:child_process";
+import { stripVTControlCharacters } from "node:util";
 import { CommandFailed, Interrupted } from "./trouble.mjs";
 
 const KEPT_OUTPUT = 2_000_000;
@@ -27,18 +28,24 @@ export async function endChild(child, graceMs = GRACE_MS) {
   signalGroup(child.pid, "SIGKILL");
 }
 
+/** What was printed, line by line, without colours. */
+function plainLines(chunk) {
+  const lines = stripVTControlCharacters(chunk).split("\n");
+  return lines.map((line) => line.trim()).filter(Boolean);
+}
+
 /**
  * Runs a command to its end and gives what it printed.
- * Rejects with CommandFailed on a code other than 0 (unless `anyCode`), with Interrupted when `signal` aborts.
+ * `name` is what the command is called where it has to be told. Rejects with CommandFailed on a code other than 0 (unless `anyCode`), with Interrupted when `signal` aborts.
  */
-export function run(command, args, { cwd, env, signal, anyCode = false, onLine } = {}) {
+export function run(command, args, { cwd, env, signal, anyCode = false, onLine, name } = {}) {
   return new Promise((resolve, reject) => {
     if (signal?.aborted) return reject(new Interrupted());
     const child = spawn(command, args, { cwd, env, detached: true, stdio: ["ignore", "pipe", "pipe"] });
     let output = "";
     const take = (chunk) => {
       output = (output + chunk).slice(-KEPT_OUTPUT);
-      if (onLine) for (const line of String(chunk).split("\n")) if (line.trim()) onLine(line.trim());
+      if (onLine) for (const line of plainLines(chunk)) onLine(line);
     };
     child.stdout.setEncoding("utf8").on("data", take);
     child.stderr.setEncoding("utf8").on("data", take);
@@ -52,7 +59,9 @@ export function run(command, args, { cwd, env, signal, anyCode = false, onLine }
       signal?.removeEventListener("abort", stop);
       if (signal?.aborted) return reject(new Interrupted());
       if (code === 0 || anyCode) return resolve({ code, output });
-      reject(new CommandFailed({ command: [command, ...args].join(" "), code, signal: killedBy, output }));
+      reject(
+        new CommandFailed({ command: name ?? [command, ...args].join(" "), code, signal: killedBy, output }),
+      );
     });
   });
 }

@@ -21,6 +21,8 @@ export interface Started {
   readonly ended: Promise<Ended>;
   /** Resolves once the output holds this text. */
   said(text: string): Promise<void>;
+  /** What it printed so far. */
+  output(): string;
 }
 
 /** A folder for generated state that the database's own user can reach too. */
@@ -35,7 +37,7 @@ export function removeHome(home: string): void {
 }
 
 /** The environment of a person who just cloned the repository. */
-function cleanEnvironment(changes: Readonly<Record<string, string>>): NodeJS.ProcessEnv {
+export function cleanEnvironment(changes: Readonly<Record<string, string>>): NodeJS.ProcessEnv {
   const kept = Object.entries(process.env).filter(([name]) => !TEST_ONLY.test(name));
   return { ...Object.fromEntries(kept), ...changes } as NodeJS.ProcessEnv;
 }
@@ -65,7 +67,7 @@ export function startDesk(
       await delay(50);
     }
   };
-  return { child, ended, said };
+  return { child, ended, said, output: () => output };
 }
 
 /** Command lines of the living processes that work for this folder. */
