@@ -22,6 +22,29 @@ export type Assessment = Judged | Missing | null;
 
 type Verdict = Pick<Judged, "level" | "value" | "limit" | "nearLimit" | "limitSense" | "margin" | "unit">;
 
+interface Grounds {
+  readonly assumed: readonly string[];
+  readonly sentence: () => string;
+  readonly formula: () => string;
+}
+
+/** A verdict with its words, written out field by field: it is made anew for each value that a clearing value tries. */
+export function judged(verdict: Verdict, grounds: Grounds): Judged {
+  return {
+    ok: true,
+    level: verdict.level,
+    value: verdict.value,
+    limit: verdict.limit,
+    nearLimit: verdict.nearLimit,
+    limitSense: verdict.limitSense,
+    margin: verdict.margin,
+    unit: verdict.unit,
+    assumed: grounds.assumed,
+    sentence: grounds.sentence,
+    formula: grounds.formula,
+  };
+}
+
 interface Bounds {
   readonly value: number;
   /** Where `over` begins, and where `near` does; a value exactly there is still on the good side. */
@@ -37,20 +60,27 @@ export function exceeds(value: number, limit: number): boolean {
   return value - limit > NOISE * Math.max(Math.abs(value), Math.abs(limit));
 }
 
+function upperLevel(value: number, limit: number, near: number): Judged["level"] {
+  if (exceeds(value, limit)) return "over";
+  return exceeds(value, near) ? "near" : "within";
+}
+
 function finite(value: number): number | null {
   return Number.isFinite(value) ? value : null;
 }
 
 /** Judges against an upper limit; the margin is (limit − value)/value. */
 export function judgeUpper({ value, limit, near, unit }: Bounds): Verdict {
-  const level = exceeds(value, limit) ? "over" : exceeds(value, near) ? "near" : "within";
+  const level = upperLevel(value, limit, near);
   const margin = finite((limit - value) / value);
   return { level, value, limit, nearLimit: near, limitSense: "upper", margin, unit };
 }
 
 /** Judges a temperature, °C, against an upper limit; the margin is limit − value in K. */
 export function judgeTemperature(bounds: Omit<Bounds, "unit">): Verdict {
-  return { ...judgeUpper({ ...bounds, unit: "°C" }), margin: bounds.limit - bounds.value };
+  const { value, limit, near } = bounds;
+  const level = upperLevel(value, limit, near);
+  return { level, value, limit, nearLimit: near, limitSense: "upper", margin: limit - value, unit: "°C" };
 }
 
 /** Judges against a lower limit; the margin is (value − limit)/limit. */

@@ -1,4 +1,4 @@
-import { exceeds, judgeUpper, upperSign } from "./assessment";
+import { exceeds, judged, judgeUpper, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { lower } from "./candidates";
 import type { Candidate } from "./clearing";
@@ -43,14 +43,12 @@ function assess(context: RuleContext): Assessment {
     near: NEAR * weakest.volts,
     unit: "V",
   });
-  return {
-    ok: true,
-    ...verdict,
+  return judged(verdict, {
     assumed: bus.assumed,
     sentence: () =>
       `When all axes brake from their highest speed the bus can rise to ${show(bus.value, "V")}; the driver of axis ${weakest.axis} stands ${show(weakest.volts, "V")} at most.`,
     formula: () => `${bus.formula()} ${upperSign(verdict)} ${show(weakest.volts, "V")}`,
-  };
+  });
 }
 
 /** The speed of the axis with the most kinetic energy first. */

@@ -109,44 +109,48 @@ interface Parts {
 }
 
 function finding(parts: Parts): Finding {
-  const { check, assessment, axis, leading, stated } = parts;
-  const names = [...new Set([...leading, ...stated.map(({ parameter }) => parameter)])];
-  const common = {
-    ruleId: check.id,
-    axis,
-    parameters: names,
-    source: check.source,
-    spans: stated.map(({ source }) => source),
-  };
-  return assessment.ok
-    ? { ...common, ...judgedFields(parts, assessment) }
-    : { ...common, ...cannotFields(check, assessment, axis) };
+  return parts.assessment.ok
+    ? judgedFinding(parts, parts.assessment)
+    : cannotFinding(parts, parts.assessment);
 }
 
-type OwnFields = Omit<Finding, "ruleId" | "axis" | "parameters" | "source" | "spans">;
+function namesOf({ leading, stated }: Parts): ParameterName[] {
+  return [...new Set([...leading, ...stated.map(({ parameter }) => parameter)])];
+}
 
-function judgedFields({ check, note, clear }: Parts, judged: Judged): OwnFields {
-  const { level, value, limit, nearLimit, limitSense, margin, unit, assumed } = judged;
+function judgedFinding(parts: Parts, judged: Judged): Finding {
+  const { check, axis, stated, note, clear } = parts;
+  const { level } = judged;
+  // Written out field by field: spreads of such wide objects cost more than the physics.
   return {
+    ruleId: check.id,
     level,
+    axis,
+    parameters: namesOf(parts),
     sentence: judged.sentence() + note,
-    value,
-    limit,
-    nearLimit,
-    limitSense,
-    margin,
-    unit,
+    value: judged.value,
+    limit: judged.limit,
+    nearLimit: judged.nearLimit,
+    limitSense: judged.limitSense,
+    margin: judged.margin,
+    unit: judged.unit,
     formula: judged.formula(),
+    source: check.source,
     caution: level !== "within" || check.cautionAlways === true ? check.caution : null,
+    spans: stated.map(({ source }) => source),
     clearingValue: level === "over" ? clear() : null,
     needs: [],
-    assumed,
+    assumed: judged.assumed,
   };
 }
 
-function cannotFields(check: CheckWords, lack: Missing, axis: string | null): OwnFields {
+function cannotFinding(parts: Parts, lack: Missing): Finding {
+  const { check, axis, stated } = parts;
   return {
+    ruleId: check.id,
     level: "cannot",
+    axis,
+    parameters: namesOf(parts),
     sentence: missingSentence(lack, axis),
     value: null,
     limit: null,
@@ -155,7 +159,9 @@ function cannotFields(check: CheckWords, lack: Missing, axis: string | null): Ow
     margin: null,
     unit: "",
     formula: check.formula,
+    source: check.source,
     caution: check.cautionAlways === true ? check.caution : null,
+    spans: stated.map(({ source }) => source),
     clearingValue: null,
     needs: lack.needs,
     assumed: [],

@@ -1,4 +1,4 @@
-import { judgeUpper, upperSign } from "./assessment";
+import { judged, judgeUpper, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters, lower, raiseCurrent } from "./candidates";
 import { axisRule } from "./check";
@@ -26,14 +26,12 @@ function assess(axis: AxisView): Assessment {
   const { corner, allowed } = parts.values;
   const unit = speedUnit(axis);
   const verdict = judgeUpper({ value: corner, limit: allowed, near: NEAR * allowed, unit });
-  return {
-    ok: true,
-    ...verdict,
+  return judged(verdict, {
     assumed: parts.assumed,
     sentence: () =>
       `At a corner the speed may jump by ${show(corner, unit)}; the motor is sure to follow a jump of ${show(allowed, unit)}.`,
     formula: () => `${show(corner, unit)} ${upperSign(verdict)} ${parts.formula("allowed")}`,
-  };
+  });
 }
 
 export const CORNER_SPEED = axisRule({

@@ -49,12 +49,14 @@ export function hardware<P extends keyof Parts>(
   field: NumberField<Parts[P]>,
 ): Datum {
   const fields: Readonly<Record<string, unknown>> | undefined = axis.hardware[part];
-  return datum(fields?.[field], axisPath(axis, `${part}.${field}`));
+  const value = fields?.[field];
+  return typeof value === "number" ? given(value) : missing(axisPath(axis, `${part}.${field}`));
 }
 
 /** A number of the driver's set-point, in the unit of its name. */
 export function setPoint(axis: AxisView, field: NumberField<SetPoint>): Datum {
-  return datum(axis.hardware.driver?.set_point?.[field], axisPath(axis, `driver.set_point.${field}`));
+  const value = axis.hardware.driver?.set_point?.[field];
+  return typeof value === "number" ? given(value) : missing(axisPath(axis, `driver.set_point.${field}`));
 }
 
 /** What stands in for a datum that most data sheets leave out; named where a finding rests on it. */
@@ -101,12 +103,11 @@ export function fromText(
   sign: "positive" | "not-negative" = "not-negative",
 ): Datum {
   const found = axis.parameter(name);
-  const path = axisPath(axis, name);
-  if (!found) return missing(path);
+  if (!found) return missing(axisPath(axis, name));
   if (found.value < 0 || (sign === "positive" && found.value === 0))
     return unusable(
       `${parameterDefinition(name).label} is ${found.typed.value} in the text; it must be ${sign === "positive" ? "more than 0" : "0 or more"}.`,
-      path,
+      axisPath(axis, name),
     );
   return given(found.value);
 }

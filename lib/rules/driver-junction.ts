@@ -1,4 +1,4 @@
-import { exceeds, judgeTemperature, unbounded, upperSign } from "./assessment";
+import { exceeds, judged, judgeTemperature, unbounded, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters, lowerCurrent } from "./candidates";
 import { axisRule } from "./check";
@@ -32,24 +32,20 @@ function assess(axis: AxisView): Assessment {
   }
   if (!junction.ok) return overAnyway ? runaway(junction.reason, most) : junction;
   const verdict = judgeTemperature({ value: junction.value, limit: most, near: most - NEAR });
-  return {
-    ok: true,
-    ...verdict,
+  return judged(verdict, {
     assumed: junction.assumed,
     sentence: () =>
       `The driver's junction settles at ${show(junction.value, "°C")}; at most ${show(most, "°C")} are allowed.`,
     formula: () => `${junction.formula()} ${upperSign(verdict)} ${show(most, "°C")}`,
-  };
+  });
 }
 
 function runaway(reason: string, limit: number): Assessment {
-  return {
-    ok: true,
-    ...unbounded(limit, limit - NEAR),
+  return judged(unbounded(limit, limit - NEAR), {
     assumed: [],
     sentence: () => reason,
     formula: () => "R_th·P0·0.005/K ≥ 1",
-  };
+  });
 }
 
 export const DRIVER_JUNCTION = axisRule({

@@ -1,4 +1,4 @@
-import { judgeLower, lowerSign } from "./assessment";
+import { judged, judgeLower, lowerSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters, raiseCurrent } from "./candidates";
 import { axisRule } from "./check";
@@ -22,14 +22,14 @@ function assess(axis: AxisView): Assessment {
   const { margin: value } = parts.values;
   const verdict = judgeLower({ value, limit: OVER, near: NEAR, unit: "" });
   const braked = axis.hardware.load?.holding_brake === true && verdict.level === "over";
-  return {
-    ok: true,
-    ...verdict,
-    level: braked ? "near" : verdict.level,
-    assumed: parts.assumed,
-    sentence: () => holdSentence(value, braked),
-    formula: () => `${parts.formula("margin")} ${lowerSign(verdict)} ${plain(OVER)}`,
-  };
+  return judged(
+    { ...verdict, level: braked ? "near" : verdict.level },
+    {
+      assumed: parts.assumed,
+      sentence: () => holdSentence(value, braked),
+      formula: () => `${parts.formula("margin")} ${lowerSign(verdict)} ${plain(OVER)}`,
+    },
+  );
 }
 
 function holdSentence(margin: number, braked: boolean): string {

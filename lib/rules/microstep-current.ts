@@ -1,6 +1,6 @@
 import { peakFromRms } from "@/lib/physics/current-conventions";
 import { firstMicrostepShare } from "@/lib/physics/microstep-fidelity";
-import { exceeds, hint } from "./assessment";
+import { exceeds, hint, judged } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters } from "./candidates";
 import { axisRule } from "./check";
@@ -22,9 +22,7 @@ function assess(axis: AxisView): Assessment {
   const { least, current, microsteps } = parts.values;
   const asked = peakFromRms(current) * firstMicrostepShare(microsteps);
   const applies = exceeds(least, asked);
-  return {
-    ok: true,
-    ...hint({ value: least, applies, nearLimit: asked, unit: "A" }),
+  return judged(hint({ value: least, applies, nearLimit: asked, unit: "A" }), {
     assumed: parts.assumed,
     sentence: () =>
       applies
@@ -32,7 +30,7 @@ function assess(axis: AxisView): Assessment {
         : `The first microstep asks for ${showPeak(asked)}, and the driver can bring the current down to ${showPeak(least)}.`,
     formula: () =>
       `${parts.formula("least")} ${applies ? ">" : "≤"} ${showPeak(peakFromRms(current))} · sin(90° / ${plain(microsteps)}) = ${show(asked, "A")}`,
-  };
+  });
 }
 
 export const MICROSTEP_CURRENT = axisRule({

@@ -1,4 +1,4 @@
-import { judgeTemperature, unbounded, upperSign } from "./assessment";
+import { judged, judgeTemperature, unbounded, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters, lowerCurrent } from "./candidates";
 import { axisRule } from "./check";
@@ -14,26 +14,22 @@ function assess(axis: AxisView): Assessment {
   const motorCase = axis.quantity("case_c");
   const softening = hardware(axis, "mount", "softening_c");
   if (softening.ok && !motorCase.ok && motorCase.runaway === true && motorCase.needs.length === 0)
-    return {
-      ok: true,
-      ...unbounded(softening.value - OVER, softening.value - NEAR),
+    return judged(unbounded(softening.value - OVER, softening.value - NEAR), {
       assumed: softening.assumed,
       sentence: () => motorCase.reason,
       formula: () => "R_th·2·I²·R ≥ 254.5 K",
-    };
+    });
   const parts = gather({ motorCase, softening });
   if (!parts.ok) return parts;
   const { motorCase: value } = parts.values;
   const limit = parts.values.softening - OVER;
   const verdict = judgeTemperature({ value, limit, near: parts.values.softening - NEAR });
-  return {
-    ok: true,
-    ...verdict,
+  return judged(verdict, {
     assumed: parts.assumed,
     sentence: () =>
       `The motor's case settles at ${show(value, "°C")}; its mount softens at ${show(parts.values.softening, "°C")}, so at most ${show(limit, "°C")} are allowed.`,
     formula: () => `${parts.formula("motorCase")} ${upperSign(verdict)} ${show(limit, "°C")}`,
-  };
+  });
 }
 
 export const MOUNT_TEMPERATURE = axisRule({

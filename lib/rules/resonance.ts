@@ -1,4 +1,4 @@
-import { exceeds, hint } from "./assessment";
+import { exceeds, hint, judged } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters } from "./candidates";
 import { axisRule } from "./check";
@@ -20,16 +20,14 @@ function assess(axis: AxisView): Assessment {
   // Where nothing moves or nothing holds there is nothing to excite.
   const hit =
     resonance > 0 ? [resonance, resonance / 2].find((frequency) => liesNear(rate, frequency)) : undefined;
-  return {
-    ok: true,
-    ...hint({ value: rate, applies: hit !== undefined, nearLimit: null, unit: "Hz" }),
+  return judged(hint({ value: rate, applies: hit !== undefined, nearLimit: null, unit: "Hz" }), {
     assumed: parts.assumed,
     sentence: () =>
       hit === undefined
         ? `The axis cruises at ${show(rate, "Hz")} of full steps, clear of its resonance at ${show(resonance, "Hz")} and of half of it.`
         : `The axis cruises at ${show(rate, "Hz")} of full steps, within 20 % of ${hit === resonance ? "its resonance" : "half its resonance"} at ${show(hit, "Hz")}: vibration is likely; try it on the machine.`,
     formula: () => `${parts.formula("rate")}; ${parts.formula("resonance")}`,
-  };
+  });
 }
 
 export const RESONANCE = axisRule({

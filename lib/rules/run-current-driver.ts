@@ -1,4 +1,4 @@
-import { BESIDE, judgeUpper, upperSign } from "./assessment";
+import { BESIDE, judged, judgeUpper, upperSign } from "./assessment";
 import { currentParameters, lowerCurrent } from "./candidates";
 import { axisRule } from "./check";
 import { gather } from "./data";
@@ -22,13 +22,11 @@ export const RUN_CURRENT_DRIVER = axisRule({
     if (!parts.ok) return parts;
     const { current, most } = parts.values;
     const verdict = judgeUpper({ value: current, limit: most, near: 0.9 * most, unit: "A" });
-    return {
-      ok: true,
-      ...verdict,
+    return judged(verdict, {
       assumed: parts.assumed,
       sentence: () =>
         `The driver gives ${showRms(current)}, ${BESIDE[verdict.level]} its maximum of ${showRms(most)}.`,
       formula: () => `${parts.formula("current")} ${upperSign(verdict)} ${parts.formula("most")}`,
-    };
+    });
   },
 });

@@ -1,4 +1,4 @@
-import { BESIDE, judgeUpper, upperSign } from "./assessment";
+import { BESIDE, judged, judgeUpper, upperSign } from "./assessment";
 import { currentParameters, lowerCurrent } from "./candidates";
 import { axisRule } from "./check";
 import { gather } from "./data";
@@ -22,13 +22,11 @@ export const RUN_CURRENT_MOTOR = axisRule({
     if (!parts.ok) return parts;
     const { current, rated } = parts.values;
     const verdict = judgeUpper({ value: current, limit: rated, near: 0.9 * rated, unit: "A" });
-    return {
-      ok: true,
-      ...verdict,
+    return judged(verdict, {
       assumed: parts.assumed,
       sentence: () =>
         `Each winding carries ${showRms(current)}, ${BESIDE[verdict.level]} the motor's rating of ${showRms(rated)}.`,
       formula: () => `${parts.formula("current")} ${upperSign(verdict)} ${parts.formula("rated")}`,
-    };
+    });
   },
 });

@@ -1,4 +1,4 @@
-import { BESIDE, judgeUpper, upperSign } from "./assessment";
+import { BESIDE, judged, judgeUpper, upperSign } from "./assessment";
 import { currentParameters, lowerCurrent } from "./candidates";
 import { axisRule } from "./check";
 import { gather, setPoint } from "./data";
@@ -33,14 +33,12 @@ export const SENSE_RESISTOR = axisRule({
     const { power, rating } = parts.values;
     const limit = OVER * rating;
     const verdict = judgeUpper({ value: power, limit, near: NEAR * rating, unit: "W" });
-    return {
-      ok: true,
-      ...verdict,
+    return judged(verdict, {
       assumed: parts.assumed,
       sentence: () =>
         `At standstill the sense resistor turns ${show(power, "W")} into heat, ${BESIDE[verdict.level]} the ${show(limit, "W")} that 60 % of its rating allow.`,
       formula: () =>
         `${parts.formula("power")} ${upperSign(verdict)} ${OVER} · ${show(rating, "W")} = ${show(limit, "W")}`,
-    };
+    });
   },
 });

@@ -2,7 +2,7 @@ import { levelRank } from "@/lib/domain/levels";
 import type { Level } from "@/lib/domain/levels";
 import type { ParameterName } from "@/lib/domain/parameters";
 import { fromRms } from "@/lib/physics/current-conventions";
-import { exceeds, judgeUpper, upperSign } from "./assessment";
+import { exceeds, judged, judgeUpper, upperSign } from "./assessment";
 import type { Assessment, Judged } from "./assessment";
 import { currentParameters, lower, set } from "./candidates";
 import { axisRule } from "./check";
@@ -34,15 +34,14 @@ function scalePart(axis: AxisView, parameter: "current_scale" | "hold_scale"): P
   const coarse = parameter === "current_scale" && scale < steps / 2;
   const level = verdict.level === "within" && coarse ? "near" : verdict.level;
   const name = parameter === "current_scale" ? "current scale" : "hold scale";
-  return {
-    ok: true,
-    ...verdict,
-    level,
-    nearLimit: null,
-    assumed: parts.assumed,
-    sentence: () => `The ${name} stands at ${plain(scale)} of ${plain(steps - 1)}${SCALE_WORDS[level]}`,
-    formula: () => `${plain(scale)} ${upperSign(verdict)} ${plain(steps)} − 1`,
-  };
+  return judged(
+    { ...verdict, level, nearLimit: null },
+    {
+      assumed: parts.assumed,
+      sentence: () => `The ${name} stands at ${plain(scale)} of ${plain(steps - 1)}${SCALE_WORDS[level]}`,
+      formula: () => `${plain(scale)} ${upperSign(verdict)} ${plain(steps)} − 1`,
+    },
+  );
 }
 
 const SCALE_WORDS = {
@@ -62,18 +61,18 @@ function agreementPart(axis: AxisView, name: CurrentParameter): Part | null {
   const apart = disagreement(text.value, fromSetPoint.value);
   const verdict = judgeUpper({ value: apart, limit: CURRENT_AGREEMENT, near: CURRENT_AGREEMENT, unit: "" });
   const what = name === "run_current" ? "run current" : "hold current";
-  return {
-    ok: true,
-    ...verdict,
-    value: Number.isFinite(apart) ? apart : null,
-    assumed: fromSetPoint.assumed,
-    sentence: () =>
-      verdict.level === "over"
-        ? `The text states a ${what} of ${showRms(text.value)}, but what it sets gives ${showRms(fromSetPoint.value)}. Neither is used until they agree.`
-        : `The ${what} of ${showRms(text.value)} agrees with what the text sets, ${showRms(fromSetPoint.value)}.`,
-    formula: () =>
-      `|${text.formula()} / (${fromSetPoint.formula()}) − 1| = ${formatNumber(apart, 2)} ${upperSign(verdict)} ${CURRENT_AGREEMENT}`,
-  };
+  return judged(
+    { ...verdict, value: Number.isFinite(apart) ? apart : null },
+    {
+      assumed: fromSetPoint.assumed,
+      sentence: () =>
+        verdict.level === "over"
+          ? `The text states a ${what} of ${showRms(text.value)}, but what it sets gives ${showRms(fromSetPoint.value)}. Neither is used until they agree.`
+          : `The ${what} of ${showRms(text.value)} agrees with what the text sets, ${showRms(fromSetPoint.value)}.`,
+      formula: () =>
+        `|${text.formula()} / (${fromSetPoint.formula()}) − 1| = ${formatNumber(apart, 2)} ${upperSign(verdict)} ${CURRENT_AGREEMENT}`,
+    },
+  );
 }
 
 /** A set-point alone contradicts nothing. */
@@ -136,18 +135,18 @@ function sensePart(axis: AxisView): Part | null {
   const verdict = judgeUpper({ value: apart, limit: CURRENT_AGREEMENT, near: SENSE_AGREEMENT, unit: "" });
   const differs = exceeds(Math.abs(reckoned / own - 1), SENSE_AGREEMENT);
   const level = verdict.level === "over" ? "over" : differs ? "near" : "within";
-  return {
-    ok: true,
-    ...verdict,
-    level,
-    assumed: parts.assumed,
-    sentence: () =>
-      level === "within"
-        ? `The text reckons with the sense resistance that the machine has, ${show(own, "Ω")}.`
-        : `The text reckons with a sense resistance of ${show(reckoned, "Ω")}, the machine has ${show(own, "Ω")}${carriedWords(axis, ratio)}`,
-    formula: () =>
-      `|${show(reckoned, "Ω")} / ${show(own, "Ω")}: current × ${plain(ratio)}| = ${formatNumber(apart, 2)} ${upperSign(verdict)} ${CURRENT_AGREEMENT}`,
-  };
+  return judged(
+    { ...verdict, level },
+    {
+      assumed: parts.assumed,
+      sentence: () =>
+        level === "within"
+          ? `The text reckons with the sense resistance that the machine has, ${show(own, "Ω")}.`
+          : `The text reckons with a sense resistance of ${show(reckoned, "Ω")}, the machine has ${show(own, "Ω")}${carriedWords(axis, ratio)}`,
+      formula: () =>
+        `|${plain(ratio)} − 1| = ${formatNumber(apart, 2)} ${upperSign(verdict)} ${CURRENT_AGREEMENT} in current, from ${show(reckoned, "Ω")} beside ${show(own, "Ω")}`,
+    },
+  );
 }
 
 /** What the winding then really carries. */

@@ -1,5 +1,5 @@
 import { travelToReach } from "@/lib/physics/profiles";
-import { exceeds, hint } from "./assessment";
+import { exceeds, hint, judged } from "./assessment";
 import type { Assessment } from "./assessment";
 import { axisRule } from "./check";
 import { fromText, gather } from "./data";
@@ -20,16 +20,14 @@ function assess(axis: AxisView): Assessment {
   const { peak, speed, acceleration, travel: length } = parts.values;
   const short = exceeds(speed, peak);
   const [unit, lengths] = [speedUnit(axis), lengthUnit(axis)];
-  return {
-    ok: true,
-    ...hint({ value: peak, applies: short, nearLimit: speed, unit }),
+  return judged(hint({ value: peak, applies: short, nearLimit: speed, unit }), {
     assumed: parts.assumed,
     sentence: () =>
       short
         ? `On its travel of ${show(length, lengths)} the axis never reaches ${show(speed, unit)}: it turns round at ${show(peak, unit)}.${neededTravel(speed, acceleration, lengths)}`
         : `The axis reaches its maximum speed of ${show(speed, unit)} on its travel of ${show(length, lengths)}.`,
     formula: () => (short ? `${parts.formula("peak")} < ${show(speed, unit)}` : parts.formula("peak")),
-  };
+  });
 }
 
 function neededTravel(speed: number, acceleration: number, unit: string): string {

@@ -1,5 +1,5 @@
 import { pulseRateLimit } from "@/lib/physics/step-rate";
-import { exceeds, judgeLower, judgeUpper, upperSign } from "./assessment";
+import { exceeds, judged, judgeLower, judgeUpper, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { lower, set, shortestPulse } from "./candidates";
 import { axisRule } from "./check";
@@ -57,14 +57,12 @@ function assess(axis: AxisView): Assessment {
   }
   if (!rate.ok) return rate;
   const verdict = judgeUpper({ value: rate.value, limit: limit.value, near: NEAR * limit.value, unit: "Hz" });
-  return {
-    ok: true,
-    ...verdict,
+  return judged(verdict, {
     assumed: rate.assumed,
     sentence: () =>
       `At maximum speed the axis asks for ${show(rate.value, "Hz")} of step pulses; ${limit.words} is ${show(limit.value, "Hz")}.`,
     formula: () => `${rate.formula()} ${upperSign(verdict)} ${show(limit.value, "Hz")}`,
-  };
+  });
 }
 
 /** A pulse shorter than the driver needs is not seen at any rate. */
@@ -72,14 +70,12 @@ function shortPulse(axis: AxisView): Assessment {
   const stated = axis.parameter("pulse_width");
   const least = shortestPulse(axis);
   if (!stated || least === null || !exceeds(least, stated.value)) return null;
-  return {
-    ok: true,
-    ...judgeLower({ value: stated.value, limit: least, near: least, unit: "s" }),
+  return judged(judgeLower({ value: stated.value, limit: least, near: least, unit: "s" }), {
     assumed: [],
     sentence: () =>
       `The step pulse of ${show(stated.value, "s")} is shorter than the ${show(least, "s")} that the driver needs to see it.`,
     formula: () => `${show(stated.value, "s")} < ${show(least, "s")}`,
-  };
+  });
 }
 
 function candidates(axis: AxisView) {

@@ -1,5 +1,5 @@
 import { formatNumber } from "@/lib/domain/units";
-import { judgeUpper, upperSign } from "./assessment";
+import { judged, judgeUpper, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { set } from "./candidates";
 import { axisRule } from "./check";
@@ -39,9 +39,7 @@ function assess(axis: AxisView): Assessment {
   const deviation = Math.abs(stated / expected - 1);
   const verdict = judgeUpper({ value: deviation, limit: OVER, near: NEAR, unit: "" });
   const unit = scaleUnit(axis);
-  return {
-    ok: true,
-    ...verdict,
+  return judged(verdict, {
     assumed: parts.assumed,
     sentence: () =>
       verdict.level === "within"
@@ -49,7 +47,7 @@ function assess(axis: AxisView): Assessment {
         : `The scale of ${showScale(stated, unit)} is ${showPercent(deviation)} off the ${showScale(expected, unit)} that the geometry gives.${likelyFactor(stated / expected)}`,
     formula: () =>
       `|${plain(stated)} / (${parts.formula("expected")}) − 1| = ${formatNumber(deviation, 2)} ${upperSign(verdict)} ${OVER}`,
-  };
+  });
 }
 
 /** The scale of the geometry, with the sign that the text gives the direction. */

@@ -1,5 +1,5 @@
 import { highestSupplyVoltage } from "@/lib/physics/supply";
-import { BESIDE, judgeUpper, upperSign } from "./assessment";
+import { BESIDE, judged, judgeUpper, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { axisRule } from "./check";
 import { gather, hardware, supplyTolerance, supplyVoltage } from "./data";
@@ -18,15 +18,13 @@ function assess(axis: AxisView): Assessment {
   const { voltage, tolerance, most } = parts.values;
   const value = highestSupplyVoltage(voltage, tolerance);
   const verdict = judgeUpper({ value, limit: most, near: NEAR * most, unit: "V" });
-  return {
-    ok: true,
-    ...verdict,
+  return judged(verdict, {
     assumed: parts.assumed,
     sentence: () =>
       `The supply reaches ${show(value, "V")} at the top of its tolerance, ${BESIDE[verdict.level]} the driver's highest operating voltage of ${show(most, "V")}.`,
     formula: () =>
       `${show(voltage, "V")} · (1 + ${plain(tolerance)}) = ${show(value, "V")} ${upperSign(verdict)} ${show(most, "V")}`,
-  };
+  });
 }
 
 /** The supply is hardware: no parameter of a text clears it. */

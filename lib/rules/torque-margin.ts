@@ -1,4 +1,4 @@
-import { exceeds, judgeLower, lowerSign } from "./assessment";
+import { exceeds, judged, judgeLower, lowerSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters, lower, raiseCurrent } from "./candidates";
 import { axisRule } from "./check";
@@ -33,15 +33,13 @@ function assess(axis: AxisView): Assessment {
   const unit = speedUnit(axis);
   if (!margin.ok) return required === 0 ? nothingRequired(limit, parts.assumed) : margin;
   const verdict = judgeLower({ value: margin.value, limit, near: NEAR * limit, unit: "" });
-  return {
-    ok: true,
-    ...verdict,
+  return judged(verdict, {
     assumed: parts.assumed,
     sentence: () =>
       `At ${show(peak, unit)} each motor can give ${show(available, "N·m")} and needs ${show(required, "N·m")}: a margin of ${showPercent(margin.value)}, where ${showPercent(limit)} are wanted ${above ? "above" : "up to"} the voltage-limit speed of ${show(limitSpeed, unit)}.`,
     formula: () =>
       `${margin.formula()} ${lowerSign(verdict)} ${plain(limit)}; ${parts.formula("available")}; ${parts.formula("required")}`,
-  };
+  });
 }
 
 /** No mass, no friction and no acceleration: any torque is enough. */

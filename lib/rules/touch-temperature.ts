@@ -1,4 +1,4 @@
-import { exceeds, hint } from "./assessment";
+import { exceeds, hint, judged } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters } from "./candidates";
 import { axisRule } from "./check";
@@ -17,26 +17,22 @@ function assess(axis: AxisView): Assessment {
       : motorCase;
   const { value, assumed } = motorCase;
   const hot = exceeds(value, HOT);
-  return {
-    ok: true,
-    ...hint({ value, applies: hot, nearLimit: HOT, unit: "°C" }),
+  return judged(hint({ value, applies: hot, nearLimit: HOT, unit: "°C" }), {
     assumed,
     sentence: () =>
       hot
         ? `The motor's case settles at ${show(value, "°C")}, hotter than the ${HOT} °C at which bare metal burns the skin within seconds.`
         : `The motor's case settles at ${show(value, "°C")}, no hotter than ${HOT} °C.`,
     formula: () => `${motorCase.formula()} ${hot ? ">" : "≤"} ${HOT} °C`,
-  };
+  });
 }
 
 function unsettled(reason: string): Assessment {
-  return {
-    ok: true,
-    ...hint({ value: null, applies: true, nearLimit: HOT, unit: "°C" }),
+  return judged(hint({ value: null, applies: true, nearLimit: HOT, unit: "°C" }), {
     assumed: [],
     sentence: () => reason,
     formula: () => "R_th·2·I²·R ≥ 254.5 K",
-  };
+  });
 }
 
 export const TOUCH_TEMPERATURE = axisRule({

@@ -64,12 +64,22 @@ interface AxisFacts {
   readonly values: ByName;
 }
 
-function axisView(
-  facts: AxisFacts,
-  before?: { readonly view: AxisView; readonly moved: ParameterName },
-): AxisView {
+/** An axis as it was, and the one parameter that is now another. */
+interface Before {
+  readonly view: AxisView;
+  readonly moved: ParameterName;
+  readonly value: ParameterValue;
+}
+
+function axisView(facts: AxisFacts, before?: Before): AxisView {
   const { input, hardware, values } = facts;
   const known = new Map<QuantityName, Computed>();
+  const parameter = (name: ParameterName) =>
+    before === undefined
+      ? values.get(name)
+      : name === before.moved
+        ? before.value
+        : before.view.parameter(name);
   const compute = (name: QuantityName): Computed => {
     if (isMachineQuantity(name)) return unusable(`${name} is a quantity of the machine.`);
     // What the changed parameter cannot move is the same as before.
@@ -82,17 +92,16 @@ function axisView(
     hardware,
     assembly: input.assembly,
     policy: input.policy,
-    parameter: (name) => values.get(name),
+    parameter,
     quantity: (name) => {
       const found = known.get(name) ?? compute(name);
       known.set(name, found);
       return found;
     },
     withValue: (name, value) => {
-      const stated = values.get(name);
+      const stated = parameter(name);
       if (!stated) return view;
-      const changed = new Map(values).set(name, { ...stated, value });
-      return axisView({ ...facts, values: changed }, { view, moved: name });
+      return axisView(facts, { view, moved: name, value: { ...stated, value } });
     },
   };
   return view;

@@ -1,4 +1,4 @@
-import { judgeTemperature, unbounded, upperSign } from "./assessment";
+import { judged, judgeTemperature, unbounded, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters, lowerCurrent } from "./candidates";
 import { axisRule } from "./check";
@@ -14,26 +14,22 @@ function assess(axis: AxisView): Assessment {
   const winding = axis.quantity("winding_c");
   const insulation = hardware(axis, "motor", "winding_limit_c");
   if (insulation.ok && !winding.ok && winding.runaway === true && winding.needs.length === 0)
-    return {
-      ok: true,
-      ...unbounded(insulation.value - OVER, insulation.value - NEAR),
+    return judged(unbounded(insulation.value - OVER, insulation.value - NEAR), {
       assumed: insulation.assumed,
       sentence: () => winding.reason,
       formula: () => "R_th·2·I²·R ≥ 254.5 K",
-    };
+    });
   const parts = gather({ winding, insulation });
   if (!parts.ok) return parts;
   const { winding: value } = parts.values;
   const limit = parts.values.insulation - OVER;
   const verdict = judgeTemperature({ value, limit, near: parts.values.insulation - NEAR });
-  return {
-    ok: true,
-    ...verdict,
+  return judged(verdict, {
     assumed: parts.assumed,
     sentence: () =>
       `Standing on run current the winding settles at ${show(value, "°C")}; at most ${show(limit, "°C")} are allowed.`,
     formula: () => `${parts.formula("winding")} ${upperSign(verdict)} ${show(limit, "°C")}`,
-  };
+  });
 }
 
 export const WINDING_TEMPERATURE = axisRule({
