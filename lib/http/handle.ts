@@ -43,7 +43,7 @@ export function handle<const O extends Operation>(
   operation: O,
   respond: (asked: Asked<O>) => Promise<unknown>,
 ) {
-  return async function route(request: Request, { params }: RouteArguments): Promise<Response> {
+  async function route(request: Request, { params }: RouteArguments): Promise<Response> {
     try {
       const context = await admit(operation, request);
       const asked = await parse(operation, { request, context, params: await params });
@@ -51,7 +51,8 @@ export function handle<const O extends Operation>(
     } catch (error) {
       return errorResponse(error);
     }
-  };
+  }
+  return Object.assign(route, { operation });
 }
 
 async function admit(operation: Operation, request: Request): Promise<Context | null> {
