@@ -68,7 +68,7 @@ export const BRAKING_VOLTAGE = machineRule({
   compares:
     "The bus voltage after all axes have braked into the capacitor with the least absolute maximum of the drivers.",
   formula: "√((V·(1 + tolerance))² + 2·E/C) ≤ V_absolute,max; E = Σ (½·m·v² + ½·n·Jm·(v/r)²)",
-  source: "Energy of a capacitor, nothing lost (form as in Servotronix CDHD2S manual p. 96)",
+  source: "Kinetic energy into the energy of a capacitor, nothing lost on the way",
   needs: [...readsOf("bus_voltage_after_braking"), "driver.absolute_max_v"],
   margin: "near above 90 % of the absolute maximum, over above it",
   caution: null,

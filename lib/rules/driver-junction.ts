@@ -54,7 +54,7 @@ export const DRIVER_JUNCTION = axisRule({
   compares:
     "The settled junction temperature of the driver with the policy's limit and with its own limit less 25 K.",
   formula: "Tj = Ta + R_th·(2·I²·R_on·(1 + 0.005/K·(Tj − T0)) + P_q + P_sw) ≤ min(policy, Tj,max − 25 K)",
-  source: "Driver data sheet; TRINAMIC TMC2300 data sheet p. 13 for the growth of the on-resistance",
+  source: "Driver data sheet; on-resistance grows by 0.5 % for each kelvin",
   needs: [...readsOf("driver_junction_c"), "driver.junction_limit_c"],
   margin: "near less than 15 K below the limit, over above it, or where the temperature never settles",
   caution: null,

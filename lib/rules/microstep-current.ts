@@ -39,7 +39,7 @@ export const MICROSTEP_CURRENT = axisRule({
   compares:
     "The lowest current that the driver can regulate in slow decay with the current of the first microstep.",
   formula: "t_min·f·V/R ≤ I_pk·sin(90°/microsteps)",
-  source: "TRINAMIC TMC2209 data sheet Rev. 1.03, sec. 6.3.1",
+  source: "Driver data sheets: the shortest on-time of a slow-decay chopper",
   needs: [...readsOf("minimum_current_peak", "winding_current_rms"), "microsteps"],
   margin: "near where the lowest current is the greater one, never over",
   caution: null,

@@ -18,7 +18,7 @@ export const SENSE_RESISTOR = axisRule({
   compares: "The heat of the sense resistor at standstill on full current with 60 % of its rating.",
   formula: "I_pk²·Rs ≤ 0.6·P_rated",
   source:
-    "TRINAMIC TMC5160 data sheet Rev. 1.14, p. 75 (worst case at standstill); 0.6 is the product's choice",
+    "Joule's law at standstill on a position of full current, the worst case; 0.6 is the product's choice",
   needs: [...readsOf("sense_resistor_power"), "driver.set_point.sense_resistor_rating_w"],
   margin: "near above 50 % of the rating, over above 60 %",
   caution: null,

@@ -226,7 +226,7 @@ export const SET_POINT = axisRule({
     "The register step with its scale; the text's current with what its set-point gives on the machine's own hardware; the text's sense resistance with the machine's own.",
   formula: "CS ≤ N − 1; |I_text/I_set − 1| ≤ 7 %; |Rs,text/Rs − 1| ≤ 1 %",
   source:
-    "TRINAMIC TMC5160 data sheet Rev. 1.14, p. 75 (upper half of the scale); 7 % = 5 % driver + 1 % resistor + rounding",
+    "Driver data sheets (upper half of the scale for fine microsteps); 7 % = 5 % driver + 1 % resistor + rounding",
   needs: [
     "run_current",
     "hold_current",
