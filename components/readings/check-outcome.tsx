@@ -30,7 +30,9 @@ function textOf(file: SentText): string {
 export function CheckOutcome({ answer, files, modelId, mayMap, onLearned }: CheckOutcomeProps) {
   return (
     <div role="region" aria-label="What the checks found" aria-live="polite" className="mt-8">
-      <p>Checked and not kept, with check rules {answer.versions.rules} and policy {answer.versions.policy}.</p>
+      <p>
+        Checked and not kept, with check rules {answer.versions.rules} and policy {answer.versions.policy}.
+      </p>
       <CheckedTexts
         checked={answer}
         files={files.map((file) => ({ path: file.path, text: textOf(file) }))}

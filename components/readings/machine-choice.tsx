@@ -73,7 +73,10 @@ export function MachineChoice({ chosen, onChoose, error, optional }: MachineChoi
         {machines.map((machine) => (
           <li key={machine.id} className="py-1">
             <Button onClick={() => onChoose(toChosen(machine))}>
-              {machine.serial} <span className="quiet">{machine.model.name}, {machine.site.name}</span>
+              {machine.serial}{" "}
+              <span className="quiet">
+                {machine.model.name}, {machine.site.name}
+              </span>
             </Button>
           </li>
         ))}

@@ -2,8 +2,7 @@ import { MAX_TEXT_BYTES } from "@/lib/schemas/files";
 
 /** A file as the API takes it. */
 export type SentText =
-  | { readonly path: string; readonly base64: string }
-  | { readonly path: string; readonly text: string };
+  { readonly path: string; readonly base64: string } | { readonly path: string; readonly text: string };
 
 export interface PastedText {
   readonly path: string;
@@ -34,7 +33,9 @@ export async function sentTexts(files: readonly File[], pasted: PastedText): Pro
   const sent: SentText[] = await Promise.all(
     files.map(async (file) => ({ path: file.name, base64: await toBase64(file) })),
   );
-  return pasted.text.trim() === "" ? sent : [...sent, { path: pasted.path.trim() || "pasted.conf", text: pasted.text }];
+  return pasted.text.trim() === ""
+    ? sent
+    : [...sent, { path: pasted.path.trim() || "pasted.conf", text: pasted.text }];
 }
 
 /** A key for one act, so that a lost answer can be asked for again; works on pages without TLS too. */

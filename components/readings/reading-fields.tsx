@@ -2,10 +2,11 @@
 
 import type { UseFormReturn } from "react-hook-form";
 import { LAYER_WORDS, LAYERS, READING_KIND_WORDS, READING_KINDS } from "@/lib/domain/readings";
-import { RadioField, TextField } from "@/components/ui/field";
+import { RadioField, SelectField, TextArea, TextField } from "@/components/ui/field";
 
 /** What is said of a reading beside its files. */
 export interface ReadingValues {
+  mode: "keep" | "check";
   kind: (typeof READING_KINDS)[number];
   layer: (typeof LAYERS)[number];
   /** As the browser has it: local time without a zone; empty: now. */
@@ -30,7 +31,49 @@ const LAYER_HELP: Record<ReadingValues["layer"], string> = {
   running: "read back from the running firmware; it beats both",
 };
 
-export function KindAndLayer({ form }: { readonly form: UseFormReturn<ReadingValues> }) {
+interface FieldsProps {
+  readonly form: UseFormReturn<ReadingValues>;
+}
+
+export function ModeChoice({ form }: FieldsProps) {
+  return (
+    <RadioField
+      label="What to do with the text"
+      {...form.register("mode")}
+      options={[
+        { value: "keep", label: "Keep it as a reading" },
+        { value: "check", label: "Check it without keeping it" },
+      ]}
+    />
+  );
+}
+
+export function PasteFields({ form, formats }: FieldsProps & { readonly formats: readonly string[] }) {
+  return (
+    <details className="mb-4">
+      <summary>Paste the text, or say its format</summary>
+      <TextArea label="Text" code rows={10} {...form.register("pasted")} />
+      <div className="field-columns">
+        <TextField
+          label="Name of the pasted text"
+          placeholder="pasted.conf"
+          optional
+          {...form.register("pastedPath")}
+        />
+        <SelectField label="Format" {...form.register("format")}>
+          <option value="auto">recognised from the text</option>
+          {formats.map((name) => (
+            <option key={name} value={name}>
+              {name}
+            </option>
+          ))}
+        </SelectField>
+      </div>
+    </details>
+  );
+}
+
+export function KindAndLayer({ form }: FieldsProps) {
   return (
     <div className="field-columns">
       <RadioField
@@ -51,7 +94,7 @@ export function KindAndLayer({ form }: { readonly form: UseFormReturn<ReadingVal
   );
 }
 
-export function ReadingDetails({ form }: { readonly form: UseFormReturn<ReadingValues> }) {
+export function ReadingDetails({ form }: FieldsProps) {
   const { errors } = form.formState;
   return (
     <div className="field-columns">

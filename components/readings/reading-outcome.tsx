@@ -45,8 +45,10 @@ export function ReadingOutcome({ kept, onAnother }: ReadingOutcomeProps) {
       </p>
       {step && (
         <p>
-          <Link href={`/changes/${step.changeId}/machines/${machineId}`}>The step of the released change</Link>:{" "}
-          {step.verifiedAt ? "verified on this machine." : (step.missing ?? "applied.")}
+          <Link href={`/changes/${step.changeId}/machines/${machineId}`}>
+            The step of the released change
+          </Link>
+          : {step.verifiedAt ? "verified on this machine." : (step.missing ?? "applied.")}
         </p>
       )}
       <DiagnosticsList documents={documents} anchors={{ paths: [] }} />

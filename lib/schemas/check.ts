@@ -211,5 +211,6 @@ export const checkAnswerSchema = z.object({
   quantities: z.array(quantitySchema),
   findings: z.array(findingSchema),
   provenance: z.array(provenanceSchema),
+  axes: z.array(z.object({ axis: z.string(), kind: z.enum(["linear", "rotary"]) })),
   versions: z.object({ rules: z.string(), policy: z.string() }),
 });

@@ -1,7 +1,9 @@
 import "server-only";
 import type { z } from "zod";
 import type { Assembly } from "@/lib/domain/assembly";
+import type { AxisKind } from "@/lib/domain/axis-kind";
 import type { KeyTable } from "@/lib/domain/key-table";
+import { axisShapes } from "@/lib/review/axis-shapes";
 import { checkConfiguration } from "@/lib/review/check";
 import type { CheckReport } from "@/lib/review/types";
 import { RULES_VERSION } from "@/lib/rules/version";
@@ -18,6 +20,7 @@ import { presentDocuments } from "./present";
 
 export interface CheckAnswer extends Omit<CheckReport, "documents"> {
   readonly documents: readonly DocumentView[];
+  readonly axes: readonly { readonly axis: string; readonly kind: AxisKind }[];
   readonly versions: { readonly rules: string; readonly policy: string };
 }
 
@@ -40,6 +43,7 @@ export async function runCheck(context: Context, input: CheckRequest): Promise<C
   return {
     documents: presentDocuments(documents),
     ...report,
+    axes: axisShapes(stored.assembly).map(({ axis, kind }) => ({ axis, kind })),
     versions: { rules: RULES_VERSION, policy: request.policy ? `${version}+sent` : String(version) },
   };
 }
