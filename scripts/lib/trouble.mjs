@@ -44,6 +44,14 @@ export function lastLines(text, count = 3) {
   return lines.slice(-count).join(" / ");
 }
 
+const TELLING = /\b(error|fatal|cannot|can't|not found|denied|refused)\b/i;
+
+/** The first lines that name a cause; the last ones where none does. */
+function cause(output) {
+  const telling = output.split("\n").filter((line) => TELLING.test(line));
+  return lastLines(telling.slice(0, 2).join("\n")) || lastLines(output) || "it printed nothing";
+}
+
 /**
  * Turns whatever was thrown while `doing` into one sentence.
  * A Trouble already is one; anything else is told with its cause.
@@ -56,7 +64,7 @@ export function explain(error, doing) {
   if (NO_RIGHT.has(error?.code) && error.path)
     return `This user may not write ${error.path} (${error.code}), which was needed while ${doing}. ${kept} Give the right to it, or work in a folder of your own.`;
   if (error instanceof CommandFailed)
-    return `${error.message} while ${doing}: ${lastLines(error.output) || "it printed nothing"}. ${kept}`;
+    return `${error.message} while ${doing}: ${cause(error.output)}. ${kept}`;
   return `Something failed while ${doing}: ${error?.message ?? error}. ${kept}`;
 }
 

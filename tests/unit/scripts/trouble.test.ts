@@ -24,7 +24,12 @@ describe("an explanation", () => {
     expect(explain(error, "starting")).toContain("This user may not write /srv/desk/state.json (EACCES)");
   });
 
-  test("of a failed command gives its last lines", () => {
+  test("of a failed command gives the first lines that name a cause", () => {
+    const output = "building\nError: module not found: ./a\nat b\nat c\nat d";
+    expect(explain(failed(output), "building")).toContain("building: Error: module not found: ./a. What was");
+  });
+
+  test("of a failed command without such lines gives its last ones", () => {
     expect(explain(failed("one\ntwo\n\nthree\nfour\n"), "installing")).toBe(
       "npm ci ended with code 1 while installing: two / three / four. What was there before is kept.",
     );
