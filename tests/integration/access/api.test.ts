@@ -92,14 +92,14 @@ describe("what a browser may send", () => {
       { params: Promise.resolve({}) },
     );
 
-  test.each([
+  test.each<Record<string, string>>([
     { origin: "https://elsewhere.test" },
     { origin: "null" },
     { "sec-fetch-site": "cross-site" },
     { "sec-fetch-site": "same-site" },
   ])("a write with the cookie from %o is refused", async (headers) => {
     asking.actor = callers.find(({ name }) => name === "admin")!.actor;
-    const response = await post(headers as Record<string, string>);
+    const response = await post(headers);
     expect(response.status).toBe(403);
     expect(await response.json()).toMatchObject({ detail: expect.stringContaining("another site") });
   });

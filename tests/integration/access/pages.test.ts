@@ -16,7 +16,7 @@ vi.mock("next/headers", () => ({
   headers: async () => new Headers({ "x-keepstep-path": "/changes?page=2" }),
 }));
 vi.mock("next/navigation", async (original) => ({
-  ...(await original<typeof import("next/navigation")>()),
+  ...(await original<object>()),
   redirect: (to: string) => {
     throw new Error(`to ${to}`);
   },

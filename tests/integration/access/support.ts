@@ -28,8 +28,8 @@ function pathOf(file: string): string {
 export async function allDoors(): Promise<Door[]> {
   const doors: Door[] = [];
   for (const file of filesNamed("app/api/v1", "route.ts")) {
-    const module = (await import(pathToFileURL(file).href)) as Record<string, Handler>;
-    for (const [method, handler] of Object.entries(module))
+    const exported = (await import(pathToFileURL(file).href)) as Record<string, Handler>;
+    for (const [method, handler] of Object.entries(exported))
       if (METHODS.includes(method)) doors.push({ method: method as Method, path: pathOf(file), handler });
   }
   return doors;
