@@ -1,5 +1,6 @@
-import { isBlank, lineEnd, afterLineEnd, skipBlanks } from "./chars";
+import { lineEnd, afterLineEnd, skipBlanks } from "./chars";
 import { cutLine } from "./lines/lex";
+import { Pieces } from "./pieces";
 import { PIECE, type Format } from "./types";
 
 export interface FormatRank {
@@ -55,22 +56,18 @@ function countLine(sample: string, start: number, end: number, counts: Counts): 
 }
 
 function countPlainLine(sample: string, from: number, end: number, counts: Counts): void {
-  const cut: number[] = [];
+  const cut = new Pieces(8);
   cutLine(sample, from, end, cut);
-  if (cut[0] === PIECE.section) counts.sections++;
-  else if (cut[0] === PIECE.key && cut.includes(PIECE.value) && isPair(sample, cut)) counts.pairs++;
-  else if (cut[0] !== PIECE.comment) counts.other++;
+  if (cut.kind(0) === PIECE.section) counts.sections++;
+  else if (cut.kind(0) === PIECE.key && isPair(sample, cut)) counts.pairs++;
+  else if (cut.kind(0) !== PIECE.comment) counts.other++;
 }
 
-/** A key with a marked separator, or with white space and one further word. Prose has more words. */
-function isPair(sample: string, cut: readonly number[]): boolean {
-  for (let i = 0; i < cut.length; i += 3) {
-    const start = cut[i + 1] ?? 0;
-    const end = cut[i + 2] ?? start;
-    if (cut[i] === PIECE.separator && !isBlank(sample.charCodeAt(start))) return true;
-    if (cut[i] === PIECE.value) return !/\s[A-Za-z]+\s/.test(sample.slice(start, end));
-  }
-  return false;
+/** A key and a value with a marked separator, or with white space and one further word. Prose has more words. */
+function isPair(sample: string, cut: Pieces): boolean {
+  if (cut.kind(1) !== PIECE.separator || cut.kind(2) !== PIECE.value) return false;
+  const marked = skipBlanks(sample, cut.start(1), cut.end(1)) < cut.end(1);
+  return marked || !/\s[A-Za-z]+\s/.test(sample.slice(cut.start(2), cut.end(2)));
 }
 
 function extension(path: string): string {

@@ -178,3 +178,9 @@ function isUnitChar(code: number): boolean {
     code === 94
   );
 }
+
+/** Reads a text that is nothing but one value, such as the inside of a quoted value; units are allowed. */
+export function readScalarText(text: string): Scalar {
+  const trimmed = text.trim();
+  return readScalar(trimmed, 0, trimmed.length, { c: false });
+}

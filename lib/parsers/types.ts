@@ -63,7 +63,7 @@ export interface Document {
   readonly format: Format;
   readonly text: string;
   /** What the lexer cut, as triples of PIECE kind, start, end (UTF-16 offsets). The pieces tile the text. */
-  readonly pieces: readonly number[];
+  readonly pieces: Readonly<Int32Array>;
   readonly entries: readonly Entry[];
   readonly diagnostics: readonly Diagnostic[];
 }

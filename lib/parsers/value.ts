@@ -85,22 +85,30 @@ function wholeText({ text, span }: ValueRange): ParsedValue {
 }
 
 /** Skips quoted stretches. A kind of quote that once found no partner is not looked for again, so that a pass stays linear. */
-function quoteSkipper(text: string, end: number): (at: number) => number {
-  const dead = new Set<number>();
-  return (at) => {
-    const quote = text.charCodeAt(at);
-    if (dead.has(quote) || !startsToken(text, at)) return at;
-    const close = closeQuote(text, at, end);
+class QuoteSkipper {
+  private dead = 0;
+
+  constructor(
+    private readonly text: string,
+    private readonly end: number,
+  ) {}
+
+  /** Offset of the closing quote, or `at` where the quote is an ordinary character. */
+  skip(at: number): number {
+    const quote = this.text.charCodeAt(at);
+    const bit = quote === CHAR.doubleQuote ? 1 : 2;
+    if ((this.dead & bit) !== 0 || !startsToken(this.text, at)) return at;
+    const close = closeQuote(this.text, at, this.end);
     if (close > 0) return close - 1;
-    dead.add(quote);
+    this.dead |= bit;
     return at;
-  };
+  }
 }
 
 /** Offset of the bracket that closes the one at `start`, or -1. Brackets in quotes do not count. */
 function closeBracket(text: string, start: number, end: number): number {
   const open: number[] = [];
-  const skipQuote = quoteSkipper(text, end);
+  const quotes = new QuoteSkipper(text, end);
   for (let i = start; i < end; i++) {
     const code = text.charCodeAt(i);
     const closer = CLOSERS.get(code);
@@ -108,7 +116,7 @@ function closeBracket(text: string, start: number, end: number): number {
     else if (code === open[open.length - 1]) {
       open.pop();
       if (open.length === 0) return i;
-    } else if (isQuote(code)) i = skipQuote(i);
+    } else if (isQuote(code)) i = quotes.skip(i);
   }
   return -1;
 }
@@ -119,28 +127,38 @@ function isSpaceAt(text: string, at: number): boolean {
   return isSpace(code) || (code === CHAR.backslash && isLineEnd(text.charCodeAt(at + 1)));
 }
 
-function trimSpace(text: string, start: number, end: number): [number, number] {
-  let from = start;
-  let to = end;
-  while (from < to && isSpaceAt(text, from)) from++;
-  while (to > from && isSpaceAt(text, to - 1)) to--;
-  return [from, to];
+function trimSpace(text: string, from: number, to: number): [number, number] {
+  const start = skipSpace(text, from, to);
+  return [start, trimEnd(text, start, to)];
+}
+
+function skipSpace(text: string, from: number, to: number): number {
+  let i = from;
+  while (i < to && isSpaceAt(text, i)) i++;
+  return i;
+}
+
+function trimEnd(text: string, from: number, to: number): number {
+  let i = to;
+  while (i > from && isSpaceAt(text, i - 1)) i--;
+  return i;
 }
 
 /** Start and end of each element between outer commas, trimmed; a trailing comma adds none. null: brackets stay open. */
 function itemRanges(text: string, start: number, end: number): number[] | null {
   const cuts: number[] = [];
   const open: number[] = [];
-  const skipQuote = quoteSkipper(text, end);
+  const quotes = new QuoteSkipper(text, end);
   let from = start;
   for (let i = start; i < end; i++) {
     const code = text.charCodeAt(i);
     const closer = CLOSERS.get(code);
     if (closer !== undefined) open.push(closer);
     else if (code === open[open.length - 1]) open.pop();
-    else if (isQuote(code)) i = skipQuote(i);
+    else if (isQuote(code)) i = quotes.skip(i);
     else if (code === CHAR.comma && open.length === 0) {
-      cuts.push(...trimSpace(text, from, i));
+      const start = skipSpace(text, from, i);
+      cuts.push(start, trimEnd(text, start, i));
       from = i + 1;
     }
   }
@@ -149,17 +167,25 @@ function itemRanges(text: string, start: number, end: number): number[] | null {
   return open.length === 0 ? cuts : null;
 }
 
-function toItems({ text, span, manner }: ValueRange, cuts: readonly number[]): ListItem[] {
+function toItems(range: ValueRange, cuts: readonly number[]): ListItem[] {
+  return takeItems(range, cuts, () => true) ?? [];
+}
+
+/** The elements; null as soon as one does not fit. */
+function takeItems(
+  { text, span, manner }: ValueRange,
+  cuts: readonly number[],
+  fits: (item: ListItem) => boolean,
+): ListItem[] | null {
   const place = new Place(text, span);
   const items: ListItem[] = [];
   for (let i = 0; i + 1 < cuts.length; i += 2) {
     const start = cuts[i] ?? 0;
     const end = cuts[i + 1] ?? start;
-    items.push({
-      raw: text.slice(start, end),
-      span: place.span(start, end),
-      value: readItem(text, start, end, manner),
-    });
+    const value = readItem(text, start, end, manner);
+    const item = { raw: text.slice(start, end), span: place.span(start, end), value };
+    if (!fits(item)) return null;
+    items.push(item);
   }
   return items;
 }
@@ -177,8 +203,7 @@ function commaItems(range: ValueRange): ListItem[] | null {
   if (!text.slice(span.start, span.end).includes(",")) return null;
   const cuts = itemRanges(text, span.start, span.end);
   if (!cuts || cuts.length < 2) return null;
-  const items = toItems(range, cuts);
-  return items.every(isPlainItem) ? items : null;
+  return takeItems(range, cuts, isPlainItem);
 }
 
 function isPlainItem(item: ListItem): boolean {

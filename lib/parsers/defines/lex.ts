@@ -1,16 +1,20 @@
 import { afterLineEnd, CHAR, isBlank, isLineEnd, isQuote, isWordChar, lineEnd, skipBlanks } from "../chars";
+import { Pieces } from "../pieces";
 import { PIECE } from "../types";
 
+/** A line has six pieces or so for every thirty characters and more. */
+const CHARACTERS_OF_A_PIECE = 6;
+
 /**
- * Cuts a C header into pieces that tile it: triples of PIECE kind, start, end. Comments, strings and spliced
+ * Cuts a C header into pieces that tile it. Comments, strings and spliced
  * lines (a backslash before the line end) follow the translation phases of ISO/IEC 9899, 5.1.1.2. A directive
  * is its word; then come a key for `#define` and `#undef`, and the rest of the logical line as a value.
  */
-export function lexDefines(text: string): number[] {
-  const out: number[] = [];
+export function lexDefines(text: string): Pieces {
+  const out = new Pieces(text.length / CHARACTERS_OF_A_PIECE);
   let at = 0;
   if (text.charCodeAt(0) === CHAR.byteOrderMark) {
-    out.push(PIECE.space, 0, 1);
+    out.add(PIECE.space, 0, 1);
     at = 1;
   }
   while (at < text.length) at = cutLine(text, at, out);
@@ -18,7 +22,7 @@ export function lexDefines(text: string): number[] {
 }
 
 /** Cuts one logical line with its line end; returns the offset after it. */
-function cutLine(text: string, start: number, out: number[]): number {
+function cutLine(text: string, start: number, out: Pieces): number {
   let at = cutBetween(text, start, text.length, out);
   if (at < text.length && !isLineEnd(text.charCodeAt(at)))
     at =
@@ -26,23 +30,19 @@ function cutLine(text: string, start: number, out: number[]): number {
         ? cutDirective(text, at, text.length, out)
         : cutCode(text, at, text.length, out);
   const after = afterLineEnd(text, at);
-  put(out, PIECE.lineEnd, at, after);
+  out.put(PIECE.lineEnd, at, after);
   return after;
 }
 
-function put(out: number[], kind: number, start: number, end: number): void {
-  if (end > start) out.push(kind, start, end);
-}
-
 /** White space, spliced lines and comments; returns the offset of what follows them. */
-function cutBetween(text: string, start: number, limit: number, out: number[]): number {
+function cutBetween(text: string, start: number, limit: number, out: Pieces): number {
   let at = start;
   for (;;) {
     const from = skipSpace(text, at, limit);
-    put(out, PIECE.space, at, from);
+    out.put(PIECE.space, at, from);
     const end = endOfComment(text, from, limit);
     if (end < 0) return from;
-    put(out, PIECE.comment, from, end);
+    out.put(PIECE.comment, from, end);
     at = end;
   }
 }
@@ -81,10 +81,10 @@ function endOfLine(text: string, start: number, limit: number): number {
 }
 
 /** Cuts a directive up to the end of its logical line or `limit`; returns that offset. `start` stands on its `#`. */
-export function cutDirective(text: string, start: number, limit: number, out: number[]): number {
+export function cutDirective(text: string, start: number, limit: number, out: Pieces): number {
   const word = skipBlanks(text, start + 1, limit);
   const wordEnd = skipWord(text, word, limit);
-  out.push(PIECE.directive, start, wordEnd);
+  out.add(PIECE.directive, start, wordEnd);
   const name = text.slice(word, wordEnd);
   let at = cutBetween(text, wordEnd, limit, out);
   if (name === "define" || name === "undef") at = cutName(text, at, limit, out);
@@ -98,23 +98,23 @@ function skipWord(text: string, start: number, limit: number): number {
 }
 
 /** The macro's name; the parameters of a function-like one are its separator. */
-function cutName(text: string, start: number, limit: number, out: number[]): number {
+function cutName(text: string, start: number, limit: number, out: Pieces): number {
   const end = skipWord(text, start, limit);
-  put(out, PIECE.key, start, end);
+  out.put(PIECE.key, start, end);
   if (end === start || text.charCodeAt(end) !== CHAR.openParen) return end;
   const stop = endOfLine(text, end, limit);
   let close = end;
   while (close < stop && text.charCodeAt(close) !== CHAR.closeParen) close++;
   if (close === stop) return end;
-  out.push(PIECE.separator, end, close + 1);
+  out.add(PIECE.separator, end, close + 1);
   return close + 1;
 }
 
 /** What follows name or directive, without the comments around it. */
-function cutBody(text: string, start: number, limit: number, out: number[]): number {
+function cutBody(text: string, start: number, limit: number, out: Pieces): number {
   const from = cutBetween(text, start, limit, out);
   const end = endOfBody(text, from, limit);
-  put(out, PIECE.value, from, end);
+  out.put(PIECE.value, from, end);
   return cutBetween(text, end, limit, out);
 }
 
@@ -156,8 +156,8 @@ function stringSkipper(text: string, limit: number): (at: number) => number {
 }
 
 /** Anything that is no directive: kept unread, though comments in it are told apart. */
-function cutCode(text: string, start: number, limit: number, out: number[]): number {
+function cutCode(text: string, start: number, limit: number, out: Pieces): number {
   const end = endOfBody(text, start, limit);
-  put(out, PIECE.unread, start, end);
+  out.put(PIECE.unread, start, end);
   return cutBetween(text, end, limit, out);
 }

@@ -1,3 +1,4 @@
+import type { Pieces } from "../pieces";
 import { PIECE } from "../types";
 
 /** A directive, a comment on lines of its own, or a run of code, in the order of the text. */
@@ -16,10 +17,10 @@ export interface HeaderLine {
 }
 
 /** Groups the pieces of a header. Comments behind a directive belong to it; neighbouring lines of code are one run. */
-export function collectLines(text: string, pieces: readonly number[]): HeaderLine[] {
+export function collectLines(text: string, pieces: Pieces): HeaderLine[] {
   const lines: HeaderLine[] = [];
-  for (let i = 0; i < pieces.length; i += 3) {
-    const kind = pieces[i];
+  for (let i = 0; i < pieces.count; i++) {
+    const kind = pieces.kind(i);
     if (kind === PIECE.directive) {
       lines.push(directiveAt(text, pieces, i));
       i = lastPieceOfLine(pieces, i);
@@ -31,32 +32,31 @@ export function collectLines(text: string, pieces: readonly number[]): HeaderLin
 
 const BARE = { word: "", key: "", body: "" };
 
-function rangeAt(pieces: readonly number[], i: number): { start: number; end: number } {
-  const start = pieces[i + 1] ?? 0;
-  return { start, end: pieces[i + 2] ?? start };
+function rangeAt(pieces: Pieces, i: number): { start: number; end: number } {
+  return { start: pieces.start(i), end: pieces.end(i) };
 }
 
-function addCode(lines: HeaderLine[], pieces: readonly number[], i: number): void {
+function addCode(lines: HeaderLine[], pieces: Pieces, i: number): void {
   const range = rangeAt(pieces, i);
   const last = lines[lines.length - 1];
   if (last?.kind === "code") lines[lines.length - 1] = { ...last, end: range.end };
   else lines.push({ ...BARE, kind: "code", at: i, ...range });
 }
 
-function lastPieceOfLine(pieces: readonly number[], from: number): number {
+function lastPieceOfLine(pieces: Pieces, from: number): number {
   let i = from;
-  while (i + 3 < pieces.length && pieces[i + 3] !== PIECE.lineEnd) i += 3;
+  while (i + 1 < pieces.count && pieces.kind(i + 1) !== PIECE.lineEnd) i++;
   return i;
 }
 
-function directiveAt(text: string, pieces: readonly number[], at: number): HeaderLine {
+function directiveAt(text: string, pieces: Pieces, at: number): HeaderLine {
   const { start, end } = rangeAt(pieces, at);
   let key = "";
   let body = "";
-  for (let i = at + 3; i < pieces.length && pieces[i] !== PIECE.lineEnd; i += 3) {
+  for (let i = at + 1; i < pieces.count && pieces.kind(i) !== PIECE.lineEnd; i++) {
     const range = rangeAt(pieces, i);
-    if (pieces[i] === PIECE.key) key = text.slice(range.start, range.end);
-    if (pieces[i] === PIECE.value) body = text.slice(range.start, range.end);
+    if (pieces.kind(i) === PIECE.key) key = text.slice(range.start, range.end);
+    if (pieces.kind(i) === PIECE.value) body = text.slice(range.start, range.end);
   }
   const word = text.slice(start + 1, end).trim();
   return { kind: "directive", word, key, body: word === "define" ? body : tidy(body), at, start, end };

@@ -3,6 +3,7 @@ import { CHAR, isBlank, isWordChar, lineEnd, afterLineEnd, skipBlanks } from "..
 import { diagnosticList, type DiagnosticList } from "../diagnostic-list";
 import { Place } from "../place";
 import type { Manner } from "../scalar";
+import { Pieces } from "../pieces";
 import { PIECE, type Document, type Entry, type ParsedValue } from "../types";
 import { readValue } from "../value";
 import { Conditions, decide, under } from "./conditions";
@@ -24,7 +25,7 @@ interface Counting {
 
 interface Reader {
   readonly text: string;
-  readonly pieces: readonly number[];
+  readonly pieces: Pieces;
   readonly place: Place;
   readonly entries: Draft[];
   readonly diagnostics: DiagnosticList;
@@ -55,7 +56,7 @@ export function parseDefines(path: string, text: string): Document {
       `“${opener}” on line ${span.line} has no #endif. All that follows counts as conditional; put the #endif where the block ends.`,
     );
   const { entries, diagnostics } = reader;
-  return { path, format: "defines", text, pieces, entries, diagnostics: diagnostics.all() };
+  return { path, format: "defines", text, pieces: pieces.triples(), entries, diagnostics: diagnostics.all() };
 }
 
 function readLine(reader: Reader, line: HeaderLine, guard: ReturnType<typeof guardOf>): void {
@@ -159,13 +160,13 @@ interface Found {
 }
 
 /** Spans of a `#define` whose directive is the piece at `at`; asked for in the order of the text. */
-function find(reader: Reader, pieces: readonly number[], at: number): Found {
+function find(reader: Reader, pieces: Pieces, at: number): Found {
   const found: Found = { key: null, parameters: false, value: null, comment: null };
   let after = 0;
-  for (let i = at + 3; i < pieces.length && pieces[i] !== PIECE.lineEnd; i += 3) {
-    const start = pieces[i + 1] ?? 0;
-    const end = pieces[i + 2] ?? start;
-    const kind = pieces[i];
+  for (let i = at + 1; i < pieces.count && pieces.kind(i) !== PIECE.lineEnd; i++) {
+    const start = pieces.start(i);
+    const end = pieces.end(i);
+    const kind = pieces.kind(i);
     if (kind === PIECE.key) found.key = reader.place.span(start, end);
     else if (kind === PIECE.separator) found.parameters = true;
     else if (kind === PIECE.value) found.value = reader.place.span(start, end);
@@ -182,7 +183,7 @@ function find(reader: Reader, pieces: readonly number[], at: number): Found {
   return found;
 }
 
-function addEntry(reader: Reader, pieces: readonly number[], at: number): Draft | null {
+function addEntry(reader: Reader, pieces: Pieces, at: number): Draft | null {
   const { text } = reader;
   const { key: keySpan, value: valueSpan, comment, parameters } = find(reader, pieces, at);
   if (!keySpan || !valueSpan) return null;
@@ -261,7 +262,7 @@ function definesAt(text: string, hash: number, limit: number): boolean {
 }
 
 function readDisabled(reader: Reader, start: number, limit: number): number {
-  const cut: number[] = [];
+  const cut = new Pieces(8);
   const end = cutDirective(reader.text, start, limit, cut);
   const entry = addEntry(reader, cut, 0);
   const { branch } = reader.conditions;

@@ -11,40 +11,39 @@ import {
   startsToken,
   trimBlanks,
 } from "../chars";
+import { Pieces } from "../pieces";
 import { PIECE } from "../types";
 
+/** A line has four pieces or so for every eight characters and more. */
+const CHARACTERS_OF_A_PIECE = 6;
+
 /**
- * Cuts a text of the line family into pieces that tile it: triples of PIECE kind, start, end. One line is
- * blank, a comment, a `[section]`, or a key with an optional separator (`=`, `:`, or white space) and value.
+ * Cuts a text of the line family into pieces that tile it. One line is blank, a comment, a `[section]`, or a key with an optional separator (`=`, `:`, or white space) and value.
  */
-export function lexLines(text: string): number[] {
-  const out: number[] = [];
+export function lexLines(text: string): Pieces {
+  const out = new Pieces(text.length / CHARACTERS_OF_A_PIECE);
   let at = 0;
   if (text.charCodeAt(0) === CHAR.byteOrderMark) {
-    out.push(PIECE.space, 0, 1);
+    out.add(PIECE.space, 0, 1);
     at = 1;
   }
   while (at < text.length) {
     const end = lineEnd(text, at);
     cutLine(text, at, end, out);
     at = afterLineEnd(text, end);
-    if (at > end) out.push(PIECE.lineEnd, end, at);
+    if (at > end) out.add(PIECE.lineEnd, end, at);
   }
   return out;
 }
 
 /** Appends the pieces of one line, or of the content of a comment that may hold a key. */
-export function cutLine(text: string, start: number, end: number, out: number[]): void {
+export function cutLine(text: string, start: number, end: number, out: Pieces): void {
   const from = skipBlanks(text, start, end);
-  put(out, PIECE.space, start, from);
+  out.put(PIECE.space, start, from);
   if (from === end) return;
   if (isCommentStart(text, from, end)) cutComment(text, from, end, out);
   else if (text.charCodeAt(from) === CHAR.openBracket) cutSection(text, from, end, out);
   else cutEntry(text, from, end, out);
-}
-
-function put(out: number[], kind: number, start: number, end: number): void {
-  if (end > start) out.push(kind, start, end);
 }
 
 function isCommentStart(text: string, at: number, end: number): boolean {
@@ -53,78 +52,83 @@ function isCommentStart(text: string, at: number, end: number): boolean {
   return code === CHAR.slash && at + 1 < end && text.charCodeAt(at + 1) === CHAR.slash;
 }
 
-function cutComment(text: string, start: number, end: number, out: number[]): void {
+function cutComment(text: string, start: number, end: number, out: Pieces): void {
   const stop = trimBlanks(text, start, end);
-  put(out, PIECE.comment, start, stop);
-  put(out, PIECE.space, stop, end);
+  out.put(PIECE.comment, start, stop);
+  out.put(PIECE.space, stop, end);
 }
 
 /** What follows a section's bracket or a closed value: blanks, then a comment or something unread. */
-function cutRest(text: string, start: number, end: number, out: number[]): void {
+function cutRest(text: string, start: number, end: number, out: Pieces): void {
   const from = skipBlanks(text, start, end);
-  put(out, PIECE.space, start, from);
+  out.put(PIECE.space, start, from);
   if (from === end) return;
   if (isCommentStart(text, from, end)) cutComment(text, from, end, out);
   else cutUnread(text, from, end, out);
 }
 
-function cutUnread(text: string, start: number, end: number, out: number[]): void {
+function cutUnread(text: string, start: number, end: number, out: Pieces): void {
   const stop = trimBlanks(text, start, end);
-  put(out, PIECE.unread, start, stop);
-  put(out, PIECE.space, stop, end);
+  out.put(PIECE.unread, start, stop);
+  out.put(PIECE.space, stop, end);
 }
 
 /** A section reaches to its bracket, or, unclosed, to the end of the line. */
-function cutSection(text: string, start: number, end: number, out: number[]): void {
+function cutSection(text: string, start: number, end: number, out: Pieces): void {
   let i = start;
   while (i < end && text.charCodeAt(i) !== CHAR.closeBracket) i++;
   const double =
     text.charCodeAt(start + 1) === CHAR.openBracket && text.charCodeAt(i + 1) === CHAR.closeBracket;
   const stop = i === end ? trimBlanks(text, start, end) : Math.min(end, i + (double ? 2 : 1));
-  put(out, PIECE.section, start, stop);
+  out.put(PIECE.section, start, stop);
   cutRest(text, stop, end, out);
 }
 
-function cutEntry(text: string, start: number, end: number, out: number[]): void {
+function cutEntry(text: string, start: number, end: number, out: Pieces): void {
   const keyEnd = endOfKey(text, start, end);
   if (keyEnd === start) return cutUnread(text, start, end, out);
   const next = skipBlanks(text, keyEnd, end);
   if (next === end) return cutBareKey(text, start, keyEnd, end, out);
   const mark = separatorLength(text, next, end);
-  if (mark > 0) return cutAssigned(text, { start, keyEnd, mark: next, after: next + mark, end }, out);
+  if (mark > 0) return cutAssigned(text, { start, keyEnd, after: next + mark, end }, out);
   if (next === keyEnd) return cutBareKey(text, start, keyEnd, end, out);
   if (isCommentStart(text, next, end)) return cutBareKey(text, start, keyEnd, end, out);
   const spaced = spacedSeparator(text, next, end);
   if (spaced < 0) {
-    out.push(PIECE.key, start, keyEnd, PIECE.separator, keyEnd, next);
+    out.add(PIECE.key, start, keyEnd);
+    out.add(PIECE.separator, keyEnd, next);
     return cutValue(text, next, end, out);
   }
   const wordsEnd = trimBlanks(text, start, spaced);
   const after = spaced + separatorLength(text, spaced, end);
-  cutAssigned(text, { start, keyEnd: wordsEnd, mark: spaced, after, end }, out);
+  cutAssigned(text, { start, keyEnd: wordsEnd, after, end }, out);
 }
 
+/** A key with its mark; `after` is the offset behind the mark. */
 interface Assigned {
   readonly start: number;
   readonly keyEnd: number;
-  readonly mark: number;
   readonly after: number;
   readonly end: number;
 }
 
-function cutAssigned(text: string, at: Assigned, out: number[]): void {
-  out.push(PIECE.key, at.start, at.keyEnd);
-  put(out, PIECE.space, at.keyEnd, at.mark);
-  out.push(PIECE.separator, at.mark, at.after);
+/** The separator takes the blanks around its mark with it, but none before a missing value. */
+function cutAssigned(text: string, at: Assigned, out: Pieces): void {
+  out.add(PIECE.key, at.start, at.keyEnd);
   const value = skipBlanks(text, at.after, at.end);
-  put(out, PIECE.space, at.after, value);
-  if (value === at.end) return;
-  if (value > at.after && isCommentStart(text, value, at.end)) cutComment(text, value, at.end, out);
-  else cutValue(text, value, at.end, out);
+  const comment = value > at.after && value < at.end && isCommentStart(text, value, at.end);
+  if (comment || value === at.end) {
+    out.add(PIECE.separator, at.keyEnd, at.after);
+    out.put(PIECE.space, at.after, value);
+    if (comment) cutComment(text, value, at.end, out);
+    return;
+  }
+  out.add(PIECE.separator, at.keyEnd, value);
+  cutValue(text, value, at.end, out);
 }
 
-function cutBareKey(text: string, start: number, keyEnd: number, end: number, out: number[]): void {
-  out.push(PIECE.key, start, keyEnd);
+function cutBareKey(text: string, start: number, keyEnd: number, end: number, out: Pieces): void {
+  out.add(PIECE.key, start, keyEnd);
   cutRest(text, keyEnd, end, out);
 }
 
@@ -172,11 +176,11 @@ function spacedSeparator(text: string, start: number, end: number): number {
 }
 
 /** The value reaches to the blanks before a trailing comment or to the end of the line. */
-function cutValue(text: string, start: number, end: number, out: number[]): void {
+function cutValue(text: string, start: number, end: number, out: Pieces): void {
   const comment = startOfComment(text, start, end);
   const stop = trimBlanks(text, start, comment);
-  put(out, PIECE.value, start, stop);
-  put(out, PIECE.space, stop, comment);
+  out.put(PIECE.value, start, stop);
+  out.put(PIECE.space, stop, comment);
   if (comment < end) cutComment(text, comment, end, out);
 }
 

@@ -1,86 +1,97 @@
-import { canonicalUnit } from "@/lib/domain/units";
 import type { Span } from "@/lib/domain/span";
-import { CHAR, isBlank, isDigit, isLetter, isQuote, isWordChar, skipBlanks, trimBlanks } from "../chars";
+import { CHAR, skipBlanks, trimBlanks } from "../chars";
 import { diagnosticList, type DiagnosticList } from "../diagnostic-list";
-import { PIECE, type Document, type Entry, type ParsedValue } from "../types";
-import { readValue, type ValueFault } from "../value";
+import { Pieces } from "../pieces";
 import type { Manner } from "../scalar";
+import { PIECE, type Document, type Entry } from "../types";
+import { readValue, type ValueFault } from "../value";
+import { isName, isTechnical, readsAsKey } from "./disabled";
 import { cutLine, lexLines } from "./lex";
+import { contentOfComment, LineEntry } from "./line-entry";
 
 const MANNER: Manner = { c: false };
 /** A key table's key has at most so many characters; a longer section name is cut, so that keys stay small. */
 const LONGEST_SECTION = 200;
 
-type Draft = { -readonly [K in keyof Entry]: Entry[K] };
-
 interface Reader {
   readonly text: string;
-  readonly entries: Draft[];
+  readonly pieces: Pieces;
+  readonly entries: LineEntry[];
   readonly diagnostics: DiagnosticList;
-  /** Enabled entry that counts for each key so far. */
-  readonly counting: Map<string, Draft>;
-  /** Disabled entries in `key value` form: kept only where the text writes its keys so. */
-  readonly doubtful: Set<Draft>;
+  /** Enabled entry that counts for each key so far: by the key up to its last dot, then by the rest. */
+  readonly counting: Map<string, Map<string, LineEntry>>;
+  /** The part of `counting` for keys of this section without a dot. */
+  inSection: Map<string, LineEntry>;
+  /** Comments that may be prose or a disabled key in `key value` form; the text's own manner decides in the end. */
+  readonly doubtful: LineEntry[];
   section: string | null;
   /** Section named in a comment, for the disabled keys below it. */
   disabledSection: string | null;
+  /** How many keys are apart from their values by white space alone, and by `=` or `:`. */
   spacedKeys: number;
   markedKeys: number;
   line: number;
   lineStart: number;
+  /** For the contents of comments. */
+  readonly scratch: Pieces;
 }
 
 /** Reads a text of the line family. Never throws on a text; what it cannot read is kept and reported. */
 export function parseLines(path: string, text: string): Document {
   const pieces = lexLines(text);
+  const root = new Map<string, LineEntry>();
   const reader: Reader = {
     text,
+    pieces,
     entries: [],
     diagnostics: diagnosticList(),
-    counting: new Map(),
-    doubtful: new Set(),
+    counting: new Map([["", root]]),
+    inSection: root,
+    doubtful: [],
     section: null,
     disabledSection: null,
     spacedKeys: 0,
     markedKeys: 0,
     line: 1,
     lineStart: 0,
+    scratch: new Pieces(8),
   };
-  for (let i = 0; i < pieces.length; i += 3) readPiece(reader, pieces, i);
+  for (let i = 0; i < pieces.count; i++) readPiece(reader, i);
+  const entries = settle(reader);
   return {
     path,
     format: "lines",
     text,
-    pieces,
-    entries: settle(reader),
+    pieces: pieces.triples(),
+    entries,
     diagnostics: reader.diagnostics.all(),
   };
 }
 
-function readPiece(reader: Reader, pieces: readonly number[], i: number): void {
-  const start = pieces[i + 1] ?? 0;
-  const end = pieces[i + 2] ?? start;
-  switch (pieces[i]) {
+function readPiece(reader: Reader, i: number): void {
+  const { pieces } = reader;
+  switch (pieces.kind(i)) {
     case PIECE.lineEnd:
       reader.line++;
-      reader.lineStart = end;
+      reader.lineStart = pieces.end(i);
       return;
     case PIECE.key:
-      return readKey(reader, pieces, i);
+      return readKey(reader, i);
     case PIECE.section:
-      return readSection(reader, start, end);
+      return readSection(reader, pieces.start(i), pieces.end(i));
     case PIECE.comment:
-      return readComment(reader, { start, end, trailing: follows(pieces, i) });
+      return standsAlone(reader, pieces.start(i))
+        ? readComment(reader, pieces.start(i), pieces.end(i))
+        : undefined;
     case PIECE.unread:
-      return reportUnread(reader, start, end);
+      return reportUnread(reader, pieces.start(i), pieces.end(i));
   }
 }
 
-/** Whether something other than white space stands before the piece on its line. */
-function follows(pieces: readonly number[], i: number): boolean {
-  for (let k = i - 3; k >= 0 && pieces[k] !== PIECE.lineEnd; k -= 3)
-    if (pieces[k] !== PIECE.space) return true;
-  return false;
+/** Whether a comment has nothing but blanks before it on its line. */
+function standsAlone({ text, lineStart }: Reader, start: number): boolean {
+  const mark = text.charCodeAt(lineStart) === CHAR.byteOrderMark ? 1 : 0;
+  return skipBlanks(text, lineStart + mark, start) === start;
 }
 
 function spanOf(reader: Reader, start: number, end: number): Span {
@@ -112,6 +123,7 @@ function readSection(reader: Reader, start: number, end: number): void {
       `The section name on line ${line} has ${name.length} characters; only the first ${LONGEST_SECTION} count in its keys.`,
     );
   reader.section = name.slice(0, LONGEST_SECTION) || null;
+  reader.inSection = countingUnder(reader, reader.section ?? "");
 }
 
 function sectionName(text: string, start: number, end: number): string {
@@ -122,182 +134,128 @@ function sectionName(text: string, start: number, end: number): string {
   return text.slice(skipBlanks(text, from, to), trimBlanks(text, from, to));
 }
 
-/** Start and end of the pieces of one key's line; a missing value is an empty range after key and separator. */
-interface Parts {
-  readonly keyStart: number;
-  readonly keyEnd: number;
-  readonly valueStart: number;
-  readonly valueEnd: number;
-  readonly marked: boolean;
-  readonly comment: readonly [number, number] | null;
+function countingUnder({ counting }: Reader, name: string): Map<string, LineEntry> {
+  const found = counting.get(name);
+  if (found) return found;
+  const made = new Map<string, LineEntry>();
+  counting.set(name, made);
+  return made;
 }
 
-function partsAt(text: string, pieces: readonly number[], i: number): Parts {
-  const keyStart = pieces[i + 1] ?? 0;
-  const keyEnd = pieces[i + 2] ?? keyStart;
-  let valueStart = keyEnd;
-  let valueEnd = keyEnd;
-  let marked = false;
-  let comment: [number, number] | null = null;
-  for (let k = i + 3; k < pieces.length && pieces[k] !== PIECE.lineEnd; k += 3) {
-    const start = pieces[k + 1] ?? 0;
-    const end = pieces[k + 2] ?? start;
-    if (pieces[k] === PIECE.separator) {
-      marked = !isBlank(text.charCodeAt(start));
-      valueStart = valueEnd = end;
-    } else if (pieces[k] === PIECE.value) {
-      valueStart = start;
-      valueEnd = end;
-    } else if (pieces[k] === PIECE.comment) comment = [start, end];
+/** The entry whose key is the piece at `i`, with the offsets of its other pieces. */
+function entryAt({ text, line, lineStart }: Reader, pieces: Pieces, i: number): LineEntry {
+  const entry = new LineEntry(text, pieces.start(i), pieces.end(i), line, lineStart);
+  for (let k = i + 1; k < pieces.count && pieces.kind(k) !== PIECE.lineEnd; k++) {
+    const kind = pieces.kind(k);
+    const start = pieces.start(k);
+    const end = pieces.end(k);
+    if (kind === PIECE.separator) {
+      entry.marked = skipBlanks(text, start, end) < end;
+      entry.valueStart = entry.valueEnd = end;
+    } else if (kind === PIECE.value) {
+      entry.valueStart = start;
+      entry.valueEnd = end;
+    } else if (kind === PIECE.comment) {
+      entry.commentStart = start;
+      entry.commentEnd = end;
+    }
   }
-  return { keyStart, keyEnd, valueStart, valueEnd, marked, comment };
+  return entry;
 }
 
-function readKey(reader: Reader, pieces: readonly number[], i: number): void {
-  const parts = partsAt(reader.text, pieces, i);
+function readKey(reader: Reader, i: number): void {
+  const entry = entryAt(reader, reader.pieces, i);
+  const { keyStart, keyEnd, valueStart, valueEnd } = entry;
   reader.disabledSection = null;
-  if (parts.valueStart === parts.keyEnd && !isName(reader.text, parts.keyStart, parts.keyEnd))
-    return reportUnread(reader, parts.keyStart, parts.keyEnd);
-  if (parts.valueEnd > parts.keyEnd) {
-    if (parts.marked) reader.markedKeys++;
+  if (valueStart === keyEnd && !isName(reader.text, keyStart, keyEnd))
+    return reportUnread(reader, keyStart, keyEnd);
+  if (valueEnd > valueStart) {
+    if (entry.marked) reader.markedKeys++;
     else reader.spacedKeys++;
+    const fault = readValueOf(reader, entry);
+    if (fault) reportFault(reader, fault, entry);
   }
-  const entry = addEntry(reader, parts, reader.section);
-  const before = reader.counting.get(entry.key);
-  if (before) shadow(reader, before, entry);
-  reader.counting.set(entry.key, entry);
+  place(reader, entry, reader.section);
+  count(reader, entry);
 }
 
-function shadow(reader: Reader, before: Draft, by: Draft): void {
+function readValueOf({ text }: Reader, entry: LineEntry): ValueFault | null {
+  const { value, fault } = readValue({ text, span: entry.valueSpan, manner: MANNER });
+  entry.value = value;
+  return fault;
+}
+
+function reportFault(reader: Reader, fault: ValueFault, entry: LineEntry): void {
+  const what = fault === "unclosed-quote" ? "a quote" : "a bracket";
+  const message = `The value of “${entry.name}” on line ${reader.line} opens ${what} that is not closed on that line. It is kept and taken as plain text; close it.`;
+  reader.diagnostics.add(fault, "warning", entry.valueSpan, message);
+}
+
+function place({ entries }: Reader, entry: LineEntry, section: string | null): void {
+  entry.section = section;
+  entry.key = section === null ? entry.name : `${section}.${entry.name}`;
+  entry.id = entries.length;
+  entries.push(entry);
+}
+
+/** Lets a new enabled entry take the place of an earlier one of the same key. */
+function count(reader: Reader, entry: LineEntry): void {
+  const { name, key } = entry;
+  const dot = name.lastIndexOf(".");
+  const rest = dot < 0 ? name : name.slice(dot + 1);
+  const under =
+    dot < 0 ? reader.inSection : countingUnder(reader, key.slice(0, key.length - rest.length - 1));
+  const before = under.get(rest);
+  if (before) shadow(reader, before, entry);
+  under.set(rest, entry);
+}
+
+function shadow(reader: Reader, before: LineEntry, by: LineEntry): void {
   before.shadowed = true;
   const message = `“${before.key}” on line ${before.keySpan.line} stands again on line ${by.keySpan.line}, and the later value counts. Both are kept; delete the one that is not wanted.`;
   reader.diagnostics.add("duplicate-key", "warning", before.keySpan, message);
 }
 
-function addEntry(reader: Reader, parts: Parts, section: string | null): Draft {
-  const { text } = reader;
-  const valueSpan = spanOf(reader, parts.valueStart, parts.valueEnd);
-  const { value, fault } = readValue({ text, span: valueSpan, manner: MANNER });
-  const name = keyName(text, parts.keyStart, parts.keyEnd);
-  const entry: Draft = {
-    id: reader.entries.length,
-    path: section === null ? [name] : [section, name],
-    key: section === null ? name : `${section}.${name}`,
-    keySpan: spanOf(reader, parts.keyStart, parts.keyEnd),
-    valueSpan,
-    raw: text.slice(parts.valueStart, parts.valueEnd),
-    value,
-    comment: parts.comment && commentText(text, parts.comment[0], parts.comment[1]),
-    commentSpan: parts.comment && spanOf(reader, parts.comment[0], parts.comment[1]),
-    disabled: false,
-    conditions: ALWAYS,
-    shadowed: false,
-  };
-  if (fault) reportFault(reader, fault, entry);
-  reader.entries.push(entry);
-  return entry;
+function readComment(reader: Reader, start: number, end: number): void {
+  const { text, scratch } = reader;
+  scratch.clear();
+  cutLine(text, contentOfComment(text, start, end), end, scratch);
+  if (scratch.kind(0) === PIECE.section) return readDisabledSection(reader);
+  if (scratch.kind(0) !== PIECE.key) return;
+  const entry = entryAt(reader, scratch, 0);
+  const { keyStart, keyEnd, valueStart, valueEnd } = entry;
+  if (valueStart === valueEnd || !isName(text, keyStart, keyEnd)) return;
+  entry.section = reader.disabledSection ?? reader.section;
+  if (entry.marked || isTechnical(text, keyStart, keyEnd)) addDisabled(reader, entry);
+  else if (STARTS_PLAIN.includes(text.charAt(valueStart))) reader.doubtful.push(entry);
 }
 
-const ALWAYS: readonly string[] = [];
-
-function reportFault(reader: Reader, fault: ValueFault, entry: Draft): void {
-  const what = fault === "unclosed-quote" ? "a quote" : "a bracket";
-  const message = `The value of “${entry.key}” on line ${reader.line} opens ${what} that is not closed on that line. It is kept and taken as plain text; close it.`;
-  reader.diagnostics.add(fault, "warning", entry.valueSpan, message);
-}
-
-/** A key in quotes loses them. */
-function keyName(text: string, start: number, end: number): string {
-  const quoted = end - start >= 2 && isQuote(text.charCodeAt(start));
-  const closed = quoted && text.charCodeAt(end - 1) === text.charCodeAt(start);
-  return closed ? text.slice(start + 1, end - 1) : text.slice(start, end);
-}
-
-/** A key that stands alone must look like one: letters, digits, _ . $ - and at least one letter or $. */
-function isName(text: string, start: number, end: number): boolean {
-  let named = false;
-  for (let i = start; i < end; i++) {
-    const code = text.charCodeAt(i);
-    if (isLetter(code) || code === DOLLAR) named = true;
-    else if (!isWordChar(code) && code !== CHAR.dot && code !== CHAR.minus) return false;
-  }
-  return named;
-}
-
-const DOLLAR = 36;
-
-function commentText(text: string, start: number, end: number): string {
-  const from = contentOfComment(text, start, end);
-  return text.slice(from, Math.max(from, end));
-}
-
-/** Offset of the first character after the marks of a comment and the blanks behind them. */
-function contentOfComment(text: string, start: number, end: number): number {
-  const mark = text.charCodeAt(start);
-  let i = start;
-  while (i < end && text.charCodeAt(i) === mark) i++;
-  return skipBlanks(text, i, end);
-}
-
-function readComment(reader: Reader, at: { start: number; end: number; trailing: boolean }): void {
-  if (at.trailing) return;
-  const { text } = reader;
-  const from = contentOfComment(text, at.start, at.end);
-  const cut: number[] = [];
-  cutLine(text, from, at.end, cut);
-  if (cut[0] === PIECE.section) return readDisabledSection(reader, cut);
-  if (cut[0] !== PIECE.key) return;
-  const parts = partsAt(text, cut, 0);
-  const probe = readValue({ text, span: spanOf(reader, parts.valueStart, parts.valueEnd), manner: MANNER });
-  if (probe.fault || !isName(text, parts.keyStart, parts.keyEnd) || !readsAsKey(text, parts, probe.value))
-    return;
-  const entry = addEntry(reader, parts, reader.disabledSection ?? reader.section);
-  entry.disabled = true;
-  if (!parts.marked) reader.doubtful.add(entry);
-}
+/** What a number, a list or a truth value begins with. */
+const STARTS_PLAIN = "0123456789+-.[{(tfynoTFYNO";
 
 /** `# [axis.y]` names the section of the disabled keys below it, when nothing else stands on its line. */
-function readDisabledSection(reader: Reader, cut: readonly number[]): void {
-  const start = cut[1] ?? 0;
-  const end = cut[2] ?? start;
-  if (cut.length > 3 || reader.text.charCodeAt(end - 1) !== CHAR.closeBracket) return;
-  reader.disabledSection = sectionName(reader.text, start, end).slice(0, LONGEST_SECTION) || null;
+function readDisabledSection(reader: Reader): void {
+  const { scratch, text } = reader;
+  const start = scratch.start(0);
+  const end = scratch.end(0);
+  if (scratch.count > 1 || text.charCodeAt(end - 1) !== CHAR.closeBracket) return;
+  reader.disabledSection = sectionName(text, start, end).slice(0, LONGEST_SECTION) || null;
 }
 
-/**
- * Tells a commented-out key from prose. After `=` any single word or readable value will do; after `:` or
- * white space, where prose is common, it must be a number in a known unit, a truth value, or a list of those.
- */
-function readsAsKey(text: string, parts: Parts, value: ParsedValue): boolean {
-  if (isPlain(value)) return true;
-  const equals = parts.marked && text.slice(parts.keyEnd, parts.valueStart).includes("=");
-  if (!equals || value.kind === "none" || value.kind === "number") return false;
-  if (value.kind === "list") return true;
-  return isQuote(text.charCodeAt(parts.valueStart)) || (value.kind === "text" && !/\s/.test(value.value));
+function addDisabled(reader: Reader, entry: LineEntry): void {
+  const fault = readValueOf(reader, entry);
+  if (fault || !readsAsKey(reader.text, entry)) return;
+  entry.disabled = true;
+  place(reader, entry, entry.section);
 }
 
-function isPlain(value: ParsedValue): boolean {
-  if (value.kind === "number") return value.unit === null || canonicalUnit(value.unit) !== null;
-  if (value.kind === "list")
-    return value.items.length > 0 && value.items.every((item) => isPlain(item.value));
-  return value.kind === "boolean";
-}
-
-/** Leaves out doubtful disabled keys where the text's own keys are not written that way, and numbers the rest. */
-function settle(reader: Reader): Entry[] {
+/** Takes the doubtful comments as disabled keys where the text writes most of its own keys so. */
+function settle(reader: Reader): readonly Entry[] {
   const { entries, doubtful } = reader;
-  if (doubtful.size === 0 || reader.spacedKeys > reader.markedKeys) return entries;
-  const kept = entries.filter((entry) => !doubtful.has(entry) || isTechnical(entry));
-  kept.forEach((entry, id) => (entry.id = id));
-  return kept;
-}
-
-/** A name that prose would not have: with a digit, an underscore, a dot or a dollar sign. */
-function isTechnical(entry: Draft): boolean {
-  const name = entry.path[entry.path.length - 1] ?? "";
-  for (let i = 0; i < name.length; i++) {
-    const code = name.charCodeAt(i);
-    if (isDigit(code) || code === CHAR.underscore || code === CHAR.dot || code === DOLLAR) return true;
-  }
-  return false;
+  const certain = entries.length;
+  if (reader.spacedKeys > reader.markedKeys) for (const entry of doubtful) addDisabled(reader, entry);
+  if (entries.length === certain) return entries;
+  entries.sort((a, b) => a.keyStart - b.keyStart);
+  entries.forEach((entry, id) => (entry.id = id));
+  return entries;
 }
