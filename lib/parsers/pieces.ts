@@ -7,7 +7,7 @@ export class Pieces {
 
   /** `expected`: how many pieces to make room for. */
   constructor(expected: number) {
-    this.data = new Int32Array(FIELDS * Math.max(16, expected));
+    this.data = new Int32Array(FIELDS * Math.ceil(Math.max(16, expected)));
   }
 
   add(kind: number, start: number, end: number): void {
