@@ -169,7 +169,7 @@ describe("driftOf", () => {
   });
 });
 
-describe("laws of driftOf", () => {
+describe("laws of driftOf", { timeout: 60_000 }, () => {
   const number = fc.integer({ min: 5, max: 300 }).map((percent) => percent / 100);
 
   it("finds no drift of a configuration from itself, whatever its numbers", () => {

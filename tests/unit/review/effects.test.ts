@@ -133,7 +133,7 @@ describe("effects", () => {
   });
 });
 
-describe("laws of effects", () => {
+describe("laws of effects", { timeout: 60_000 }, () => {
   const START = edited(
     "x",
     "colour = grey",

@@ -123,7 +123,7 @@ describe("rebaseEdits", () => {
   });
 });
 
-describe("laws of rebaseEdits", () => {
+describe("laws of rebaseEdits", { timeout: 60_000 }, () => {
   const edit = fc.constantFrom<[string, string, string]>(
     ["x", "amps = 0.85", "amps = 1.05"],
     ["x", "vmax = 300 ", "vmax = 0.5 m/s "],
