@@ -2,6 +2,7 @@ interface LockedPackage {
   readonly version?: string;
   readonly integrity?: string;
   readonly optional?: boolean;
+  readonly extraneous?: boolean;
 }
 
 interface Packages {

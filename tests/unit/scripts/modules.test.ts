@@ -8,12 +8,13 @@ describe("installed modules", () => {
       "node_modules/a": { version: "1.0.0", integrity: "sha512-a" },
       "node_modules/b": { version: "2.0.0", integrity: "sha512-b" },
       "node_modules/other-system": { version: "1.0.0", integrity: "sha512-o", optional: true },
+      "node_modules/unasked": { version: "1.0.0", integrity: "sha512-u", extraneous: true },
     },
   };
   const a = { version: "1.0.0", integrity: "sha512-a" };
   const b = { version: "2.0.0", integrity: "sha512-b" };
 
-  test("lack nothing when all are as locked; optional ones may be absent", () => {
+  test("lack nothing when all are as locked; optional and extraneous ones may be absent", () => {
     expect(missingModules(locked, { packages: { "node_modules/a": a, "node_modules/b": b } })).toEqual([]);
   });
 
