@@ -8,7 +8,7 @@ import { inTurn } from "./lock.mjs";
 import { pickPort } from "./ports.mjs";
 import { findPlace, programsFor, runAsOwner } from "./postgres.mjs";
 import { createUsers } from "./processes.mjs";
-import { CommandFailed, isDiskFull, lastLines, Trouble } from "./trouble.mjs";
+import { CommandFailed, Interrupted, isDiskFull, lastLines, Trouble } from "./trouble.mjs";
 
 const LOG_LIMIT_BYTES = 5_000_000;
 const OPEN_TO_THIS_MACHINE_ONLY = ["listen_addresses=127.0.0.1", "unix_socket_directories="];
@@ -142,7 +142,8 @@ export class Cluster {
       const answer = await query(this.url, "select 1").catch((error) => error);
       if (Array.isArray(answer)) return true;
       refusal = answer.message;
-      await delay(500, undefined, { signal: this.#signal });
+      if (this.#signal?.aborted) throw new Interrupted();
+      await delay(500);
     }
     if (!(await this.#isRunning())) return false;
     throw this.#broken(`is open, but lets nobody in ("${refusal}")`);

@@ -1,7 +1,7 @@
 import { createHash } from "node:crypto";
 import { connect, createServer } from "node:net";
 import { setTimeout as delay } from "node:timers/promises";
-import { Trouble } from "./trouble.mjs";
+import { Interrupted, Trouble } from "./trouble.mjs";
 
 /*
  * One holder for each folder and name. A lock is a Linux abstract socket: the kernel frees it when its holder ends,
@@ -37,7 +37,10 @@ export async function takeLock({ folder, name, describe }) {
 export async function inTurn({ folder, name, signal }, work) {
   const address = addressOf({ folder, name });
   let lock;
-  while (!(lock = await hold(address, () => ""))) await delay(100, undefined, { signal });
+  while (!(lock = await hold(address, () => ""))) {
+    if (signal?.aborted) throw new Interrupted();
+    await delay(100);
+  }
   try {
     return await work();
   } finally {

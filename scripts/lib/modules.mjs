@@ -2,6 +2,7 @@ import { createHash } from "node:crypto";
 import { existsSync, readFileSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import { readJson, ROOT } from "./home.mjs";
+import { inTurn } from "./lock.mjs";
 import { run } from "./run.mjs";
 import { Trouble } from "./trouble.mjs";
 
@@ -37,8 +38,15 @@ function sameModule(locked, have) {
 
 const hashOf = (file) => createHash("sha256").update(readFileSync(file)).digest("hex");
 
-/** Installs the node modules as locked, those of development included; does nothing while they are as locked. */
-export async function ensureModules({ say, signal, env = process.env }) {
+/**
+ * Installs the node modules as locked, those of development included; does nothing while they are as locked.
+ * Two commands of one folder take turns, so that the second finds what the first installed.
+ */
+export function ensureModules({ say, signal, env = process.env }) {
+  return inTurn({ folder: ROOT, name: "modules", signal }, () => installWhereLacking({ say, signal, env }));
+}
+
+async function installWhereLacking({ say, signal, env }) {
   const file = path.join(ROOT, "package-lock.json");
   const lockfile = readJson(file);
   if (!lockfile)
