@@ -3,7 +3,7 @@ import { exceeds, judged, judgeLower, judgeUpper, upperSign } from "./assessment
 import type { Assessment } from "./assessment";
 import { lower, set, shortestPulse } from "./candidates";
 import { axisRule } from "./check";
-import { hardware, missing } from "./data";
+import { axisPath, hardware, missing } from "./data";
 import { readsOf } from "./quantities/table";
 import { show } from "./show";
 import type { AxisView } from "./types";
@@ -48,13 +48,7 @@ function assess(axis: AxisView): Assessment {
   if (short) return short;
   const rate = axis.quantity("step_rate");
   const limit = rateLimit(axis);
-  if (limit === null) {
-    const paths = [
-      "controller_board.max_step_rate_hz",
-      ...LIMIT_PATHS.map((path) => `axes.${axis.axis}.${path}`),
-    ];
-    return rate.ok ? missing(...paths) : missing(...rate.needs, ...paths);
-  }
+  if (limit === null) return missing(...(rate.ok ? [] : rate.needs), ...unknownLimits(axis));
   if (!rate.ok) return rate;
   const verdict = judgeUpper({ value: rate.value, limit: limit.value, near: NEAR * limit.value, unit: "Hz" });
   return judged(verdict, {
@@ -63,6 +57,16 @@ function assess(axis: AxisView): Assessment {
       `At maximum speed the axis asks for ${show(rate.value, "Hz")} of step pulses; ${limit.words} is ${show(limit.value, "Hz")}.`,
     formula: () => `${rate.formula()} ${upperSign(verdict)} ${show(limit.value, "Hz")}`,
   });
+}
+
+/** Any one of these would do; the pulse times only together. */
+function unknownLimits(axis: AxisView): string[] {
+  const times = LIMIT_PATHS.filter((path) =>
+    path === "driver.min_pulse_high_us"
+      ? pulseHigh(axis) === null
+      : !hardware(axis, "driver", "min_pulse_low_us").ok,
+  );
+  return ["controller_board.max_step_rate_hz", ...times.map((path) => axisPath(axis, path))];
 }
 
 /** A pulse shorter than the driver needs is not seen at any rate. */
