@@ -24,15 +24,29 @@ export const LEADING_COLUMNS = 3;
 /** Pixels: widths of the leading columns, of a parameter column, and the gap before each axis. */
 export const WIDTHS = { leading: [104, 136, 272], parameter: 31, gap: 18 } as const;
 
-/** Grid tracks of every row in pixels, the gap before each axis inside its first column, and their sum. */
-export function tracksOf(columns: readonly FloorColumn[]): { template: string; width: number } {
-  const starts = new Set(columnGroups(columns).map(({ start }) => start));
+export interface FloorLayout {
+  readonly groups: readonly ColumnGroup[];
+  /** Parameter columns that open an axis, by index. */
+  readonly opens: ReadonlySet<number>;
+  /** Widths of every column in pixels; the gap before an axis lies inside its first column. */
+  readonly tracks: readonly number[];
+  readonly width: number;
+}
+
+/** Where the columns of the map stand. */
+export function floorLayout(columns: readonly FloorColumn[]): FloorLayout {
+  const groups = columnGroups(columns);
+  const opens = new Set(groups.map(({ start }) => start));
   const tracks = [
     ...WIDTHS.leading,
-    ...columns.map((_, index) => (starts.has(index) ? WIDTHS.gap + WIDTHS.parameter : WIDTHS.parameter)),
+    ...columns.map((_, index) => (opens.has(index) ? WIDTHS.gap + WIDTHS.parameter : WIDTHS.parameter)),
   ];
-  return {
-    template: tracks.map((track) => `${track}px`).join(" "),
-    width: tracks.reduce<number>((sum, track) => sum + track, 0),
-  };
+  return { groups, opens, tracks, width: tracks.reduce<number>((sum, track) => sum + track, 0) };
+}
+
+/** The column at `x` pixels from the left of a row, leading columns included; the last one beyond them all. */
+export function columnAt(x: number, tracks: readonly number[]): number {
+  let right = 0;
+  const found = tracks.findIndex((track) => (right += track) > x);
+  return found < 0 ? tracks.length - 1 : found;
 }

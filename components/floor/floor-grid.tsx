@@ -9,13 +9,14 @@ import {
   useState,
   type CSSProperties,
   type KeyboardEvent,
+  type MouseEvent,
 } from "react";
 import type { FloorColumn, FloorRow } from "@/lib/domain/floor";
 import { plural } from "@/lib/domain/sentences";
 import { axisTitle } from "@/components/findings/axis-title";
 import { usePrinting } from "./browser-state";
 import { cellOf, cellWords, columnWords } from "./cell-words";
-import { columnGroups, LEADING_COLUMNS, tracksOf, WIDTHS } from "./column-groups";
+import { columnAt, floorLayout, LEADING_COLUMNS, WIDTHS, type FloorLayout } from "./column-groups";
 import { FloorRowView } from "./floor-row";
 import { nextCell, type GridCell } from "./grid-keys";
 import type { FloorData } from "./types";
@@ -25,6 +26,8 @@ const ROW = 28;
 const HEAD = 96;
 /** Rows put on paper; more than that belongs to a filter. */
 const PRINTED_ROWS = 2000;
+/** Pixels between the margins of an A4 sheet on its side, less the frame of the sheet. */
+const PRINTED_WIDTH = 960;
 /** What the server draws before it knows the window. */
 const FIRST_RECT = { width: 1200, height: 720 };
 
@@ -33,11 +36,11 @@ export interface FloorGridProps extends FloorData {
   readonly machineBase: string;
 }
 
-function Head({ columns, opens }: { columns: readonly FloorColumn[]; opens: ReadonlySet<number> }) {
+function Head({ columns, layout }: { columns: readonly FloorColumn[]; layout: FloorLayout }) {
   return (
     <div role="rowgroup" className="floor-head">
       <div className="floor-row floor-axes" aria-hidden="true">
-        {columnGroups(columns).map(({ axis, start, count }) => (
+        {layout.groups.map(({ axis, start, count }) => (
           <span
             key={`${axis ?? ""}${start}`}
             style={{ gridColumn: `${LEADING_COLUMNS + start + 1} / span ${count}` }}
@@ -63,7 +66,7 @@ function Head({ columns, opens }: { columns: readonly FloorColumn[]; opens: Read
             aria-colindex={LEADING_COLUMNS + index + 1}
             aria-label={columnWords(column)}
             title={columnWords(column)}
-            className={opens.has(index) ? "floor-slant floor-cell-opens" : "floor-slant"}
+            className={layout.opens.has(index) ? "floor-slant floor-cell-opens" : "floor-slant"}
           >
             <span aria-hidden="true">{column.short}</span>
           </div>
@@ -112,14 +115,24 @@ function cellAt(target: EventTarget): GridCell | null {
   return element ? { row: Number(element.dataset.row), column: Number(element.dataset.column) } : null;
 }
 
+/** The cell under a press on a point, which has no element of its own. */
+function cellUnder(event: MouseEvent, { tracks }: FloorLayout): GridCell | null {
+  if (!(event.target instanceof HTMLElement) || cellAt(event.target)) return null;
+  const row = event.target.closest<HTMLElement>("[data-index]");
+  if (!row) return null;
+  return {
+    row: Number(row.dataset.index),
+    column: columnAt(event.clientX - row.getBoundingClientRect().left, tracks),
+  };
+}
+
 /** The floor as an ARIA grid: machines by parameters, worked by keyboard alone. */
 export function FloorGrid({ columns, rows, machineBase }: FloorGridProps) {
   const [active, setActive] = useState<GridCell>({ row: 0, column: 0 });
   const moved = useRef(false);
   const printing = usePrinting();
   const { scroller, virtualizer } = useRows(rows.length, active.row);
-  const opens = useMemo(() => new Set(columnGroups(columns).map(({ start }) => start)), [columns]);
-  const tracks = useMemo(() => tracksOf(columns), [columns]);
+  const layout = useMemo(() => floorLayout(columns), [columns]);
 
   useEffect(() => {
     if (!moved.current) return;
@@ -155,7 +168,7 @@ export function FloorGrid({ columns, rows, machineBase }: FloorGridProps) {
           row={row}
           index={index}
           columns={columns}
-          opens={opens}
+          layout={layout}
           top={top}
           activeColumn={active.row === index ? active.column : null}
           href={`${machineBase}/${row.machineId}`}
@@ -164,9 +177,11 @@ export function FloorGrid({ columns, rows, machineBase }: FloorGridProps) {
     );
   };
   const style = {
-    "--floor-tracks": tracks.template,
-    "--floor-width": `${tracks.width}px`,
+    "--floor-tracks": layout.tracks.map((track) => `${track}px`).join(" "),
+    "--floor-width": `${layout.width}px`,
+    "--floor-print-zoom": Math.min(1, PRINTED_WIDTH / layout.width),
     "--floor-gap": `${WIDTHS.gap}px`,
+    "--floor-parameter": `${WIDTHS.parameter}px`,
   } as CSSProperties;
   return (
     <div className="floor-grid" style={style}>
@@ -178,12 +193,18 @@ export function FloorGrid({ columns, rows, machineBase }: FloorGridProps) {
         aria-rowcount={rows.length + 1}
         aria-colcount={columns.length + LEADING_COLUMNS}
         onKeyDown={press}
+        onClick={(event) => {
+          const cell = cellUnder(event, layout);
+          if (!cell) return;
+          moved.current = true;
+          setActive(cell);
+        }}
         onFocus={(event) => {
           const cell = cellAt(event.target);
           if (cell && (cell.row !== active.row || cell.column !== active.column)) setActive(cell);
         }}
       >
-        <Head columns={columns} opens={opens} />
+        <Head columns={columns} layout={layout} />
         <div
           role="rowgroup"
           className="floor-body"

@@ -1,9 +1,9 @@
 import Link from "next/link";
 import { memo } from "react";
-import type { FloorColumn, FloorRow } from "@/lib/domain/floor";
+import type { FloorCell, FloorColumn, FloorRow } from "@/lib/domain/floor";
 import { CellMark } from "./cell-mark";
 import { cellOf, cellWords, columnWords } from "./cell-words";
-import { LEADING_COLUMNS } from "./column-groups";
+import { LEADING_COLUMNS, type FloorLayout } from "./column-groups";
 import { StandingMark } from "./standing-mark";
 
 export interface FloorRowViewProps {
@@ -11,8 +11,7 @@ export interface FloorRowViewProps {
   /** From 0. */
   readonly index: number;
   readonly columns: readonly FloorColumn[];
-  /** Columns that open an axis, by index. */
-  readonly opens: ReadonlySet<number>;
+  readonly layout: FloorLayout;
   /** Pixels from the top of the body; null while printing, where rows follow one another. */
   readonly top: number | null;
   /** Column of the cell that Tab reaches; null when it is in another row. */
@@ -20,48 +19,62 @@ export interface FloorRowViewProps {
   readonly href: string;
 }
 
+type Cell = FloorCell | "blank" | undefined;
+
 function place(index: number, column: number, activeColumn: number | null) {
   return {
     "aria-colindex": column + 1,
     "data-row": index,
     "data-column": column,
     tabIndex: column === activeColumn ? 0 : -1,
+    style: { gridColumn: column + 1 },
   };
 }
 
-function ParameterCell({
-  row,
-  column,
-  opens,
-  at,
-}: {
-  row: FloorRow;
-  column: FloorColumn;
-  opens: boolean;
-  at: ReturnType<typeof place>;
-}) {
-  const cell = cellOf(row, column);
+interface ParameterCellProps {
+  readonly cell: Cell;
+  readonly column: FloorColumn;
+  readonly opens: boolean;
+  readonly at: ReturnType<typeof place>;
+}
+
+function ParameterCell({ cell, column, opens, at }: ParameterCellProps) {
   const words = `${columnWords(column)}, ${cellWords(cell)}`;
-  const kind = cell === undefined ? "same" : cell === "blank" ? "blank" : cell.kind;
+  const drawn = cell !== undefined && cell !== "blank";
   return (
     <div
       role="gridcell"
-      className={`floor-cell floor-cell-${kind}${opens ? " floor-cell-opens" : ""}`}
+      className={`floor-cell${opens ? " floor-cell-opens" : ""}${cell === "blank" ? " floor-cell-blank" : ""}`}
       aria-label={words}
-      title={kind === "same" || kind === "blank" ? undefined : words}
+      title={drawn ? words : undefined}
       {...at}
     >
-      {cell !== undefined && cell !== "blank" && <CellMark cell={cell} />}
+      {drawn && <CellMark cell={cell} />}
     </div>
   );
 }
 
-/** One machine of the map. */
-function FloorRowPlain({ row, index, columns, opens, top, activeColumn, href }: FloorRowViewProps) {
+/** The points of what is as required, one drawing for each axis that the machine has. */
+function Points({ cells, layout }: { cells: readonly Cell[]; layout: FloorLayout }) {
+  return layout.groups.map(({ start, count }) => {
+    if (cells.slice(start, start + count).every((cell) => cell === "blank")) return null;
+    const gridColumn = `${LEADING_COLUMNS + start + 1} / span ${count}`;
+    return <div key={start} className="floor-points" role="presentation" style={{ gridColumn }} />;
+  });
+}
+
+/**
+ * One machine of the map. A row that is not being walked through holds cells only where something is off: the grid
+ * tells columns by index, and a screenful of points costs one drawing an axis instead of a thousand elements.
+ */
+function FloorRowPlain({ row, index, columns, layout, top, activeColumn, href }: FloorRowViewProps) {
+  const cells = columns.map((column) => cellOf(row, column));
+  const walked = activeColumn !== null;
   return (
     <div
       role="row"
       aria-rowindex={index + 2}
+      data-index={index}
       className={`floor-row floor-row-${row.standing}`}
       style={top === null ? undefined : { position: "absolute", top: 0, transform: `translateY(${top}px)` }}
     >
@@ -88,16 +101,31 @@ function FloorRowPlain({ row, index, columns, opens, top, activeColumn, href }: 
       <div role="gridcell" className="floor-sentence" title={row.sentence} {...place(index, 2, activeColumn)}>
         {row.sentence}
       </div>
-      {columns.map((column, at) => (
-        <ParameterCell
-          key={column.key}
-          row={row}
-          column={column}
-          opens={opens.has(at)}
-          at={place(index, at + LEADING_COLUMNS, activeColumn)}
-        />
-      ))}
+      <Points cells={cells} layout={layout} />
+      {columns.map((column, at) => {
+        const cell = cells[at];
+        if (!walked && (cell === undefined || (cell === "blank" && isBlankAxis(cells, at, layout))))
+          return null;
+        return (
+          <ParameterCell
+            key={column.key}
+            cell={cell}
+            column={column}
+            opens={layout.opens.has(at)}
+            at={place(index, at + LEADING_COLUMNS, activeColumn)}
+          />
+        );
+      })}
     </div>
+  );
+}
+
+/** Whether every cell of the axis of column `at` is blank; then no point is drawn that would have to be covered. */
+function isBlankAxis(cells: readonly Cell[], at: number, { groups }: FloorLayout): boolean {
+  const group = groups.find(({ start, count }) => start <= at && at < start + count);
+  return (
+    group !== undefined &&
+    cells.slice(group.start, group.start + group.count).every((cell) => cell === "blank")
   );
 }
 
