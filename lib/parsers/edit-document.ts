@@ -30,7 +30,7 @@ export function editDocument(document: Document, edits: readonly Edit[]): EditRe
     if (typeof placed === "string") refused.push({ edit, reason: placed });
     else splices.push(placed);
   }
-  splices.sort((a, b) => a.start - b.start || a.end - b.end);
+  splices.sort((a, b) => a.start - b.start);
   const apart = dropOverlaps(splices, refused);
   return { document: applyAll(document, apart, refused), refused };
 }
@@ -63,7 +63,7 @@ function readsAlone(format: Format, { raw, element }: Edit): boolean {
   );
 }
 
-/** Keeps the first of edits that touch the same stretch. */
+/** Of edits that touch the same stretch, keeps the one that begins first. */
 function dropOverlaps(splices: readonly Splice[], refused: RefusedEdit[]): Splice[] {
   const kept: Splice[] = [];
   for (const splice of splices) {

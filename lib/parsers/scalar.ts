@@ -55,7 +55,7 @@ function readNumber(text: string, start: number, end: number, manner: Manner): S
 }
 
 function radixAt(text: string, at: number, end: number): 2 | 10 | 16 {
-  if (text.charCodeAt(at) !== CHAR.zero || at + 2 >= end) return 10;
+  if (text.charCodeAt(at) !== CHAR.zero || at + 1 >= end) return 10;
   const mark = text.charCodeAt(at + 1) | 32;
   if (mark === 120) return 16;
   const next = text.charCodeAt(at + 2);

@@ -20,7 +20,10 @@ export interface ListItem {
   readonly value: Exclude<ParsedValue, { kind: "list" }>;
 }
 
-/** One key with its value as it stands in the text. Nothing is dropped: duplicates, disabled and conditional entries are entries. */
+/**
+ * One key with its value as it stands in the text. Nothing is dropped: duplicates, disabled and conditional entries are
+ * entries. An entry may work out its spans when asked, so read its properties; a spread copy would lack them.
+ */
 export interface Entry {
   /** Index in `Document.entries`. */
   readonly id: number;

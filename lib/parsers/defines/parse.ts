@@ -55,6 +55,7 @@ export function parseDefines(path: string, text: string): Document {
       span,
       `“${opener}” on line ${span.line} has no #endif. All that follows counts as conditional; put the #endif where the block ends.`,
     );
+  reportUnclosedComment(reader);
   const { entries, diagnostics } = reader;
   return { path, format: "defines", text, pieces: pieces.triples(), entries, diagnostics: diagnostics.all() };
 }
@@ -148,7 +149,7 @@ function readUndef(reader: Reader, key: string): void {
   const left = counting.fresh.filter((entry) => !entry.shadowed);
   for (const entry of left)
     entry.conditions = under(entry.conditions, `unless #undef under ${branch.conditions.at(-1)}`);
-  counting.doubtful.push(...left);
+  for (const entry of left) counting.doubtful.push(entry);
   counting.fresh = [];
 }
 
@@ -229,7 +230,6 @@ function readComment(reader: Reader, start: number, end: number): void {
   const block = text.charCodeAt(start + 1) === CHAR.star;
   const closed = block && end - start >= 4 && text.startsWith("*/", end - 2);
   const limit = closed ? end - 2 : end;
-  if (block && !closed) reportUnclosed(reader, start, end);
   let at = start + 2;
   while (at < limit) {
     const from = skipDecoration(text, at, limit);
@@ -239,10 +239,15 @@ function readComment(reader: Reader, start: number, end: number): void {
   }
 }
 
-function reportUnclosed(reader: Reader, start: number, end: number): void {
-  const span = reader.place.span(start, end);
+/** A comment that is not closed reaches to the end of the text, so it is the last piece. */
+function reportUnclosedComment({ text, pieces, diagnostics }: Reader): void {
+  const last = pieces.count - 1;
+  const start = pieces.start(last);
+  if (pieces.kind(last) !== PIECE.comment || text.charCodeAt(start + 1) !== CHAR.star) return;
+  if (text.length - start >= 4 && text.endsWith("*/")) return;
+  const span = new Place(text).span(start, text.length);
   const message = `The comment that opens on line ${span.line} is not closed, so the rest of the text is a comment. Everything is kept; put “*/” where it ends.`;
-  reader.diagnostics.add("unclosed-comment", "warning", span, message);
+  diagnostics.add("unclosed-comment", "warning", span, message);
 }
 
 /** Blanks, stars and slashes that lead a line of a comment. */

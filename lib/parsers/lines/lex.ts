@@ -3,7 +3,6 @@ import {
   CHAR,
   closeQuote,
   isBlank,
-  isLetter,
   isQuote,
   isWordChar,
   lineEnd,
@@ -156,9 +155,8 @@ function separatorLength(text: string, at: number, end: number): number {
 }
 
 /**
- * Offset of the separator of a key of several words (`Max speed = 300`, `Max speed: 300`), or -1. Each word
- * begins with a letter; a `:` must be followed by white space; a second `=` on the line means that the first
- * word was the key.
+ * Offset of the separator of a key of several words (`Max speed = 300`, `Max speed (mm/s): 300`), or -1. A `:`
+ * must be followed by white space; a second `=` on the line means that the first word was the key.
  */
 function spacedSeparator(text: string, start: number, end: number): number {
   let i = start;
@@ -166,13 +164,18 @@ function spacedSeparator(text: string, start: number, end: number): number {
     const code = text.charCodeAt(i);
     if (code === CHAR.equals) break;
     if (code === CHAR.colon) return i + 1 === end || isBlank(text.charCodeAt(i + 1)) ? i : -1;
-    if (isBlank(code)) continue;
-    if (isBlank(text.charCodeAt(i - 1)) && !isLetter(code)) return -1;
-    if (!isWordChar(code) && code !== CHAR.minus && code !== CHAR.dot) return -1;
+    if (!isBlank(code) && !isKeyChar(code)) return -1;
+    if (code === CHAR.slash && isBlank(text.charCodeAt(i - 1))) return -1;
   }
   if (i === end) return -1;
-  const second = text.indexOf("=", i + 1);
-  return second >= 0 && second < end ? -1 : i;
+  for (let k = i + 1; k < end; k++) if (text.charCodeAt(k) === CHAR.equals) return -1;
+  return i;
+}
+
+/** What the words of a key may hold: letters of any language, digits, _ - . and a unit in parentheses. */
+function isKeyChar(code: number): boolean {
+  if (isWordChar(code) || code > 127) return true;
+  return "-.()/%^".includes(String.fromCharCode(code));
 }
 
 /** The value reaches to the blanks before a trailing comment or to the end of the line. */
