@@ -10,6 +10,7 @@ import { travelField, type ModelFormData, type ModelFormValues } from "@/lib/sch
 import { ItemSelect } from "./item-select";
 import { errorAt, SchemaForm } from "./schema-form";
 import { unlockSentence } from "./unlock-sentence";
+import { registered } from "./registered";
 
 export type ModelForm = UseFormReturn<ModelFormValues, unknown, ModelFormData>;
 
@@ -39,14 +40,14 @@ export function AxisFields({ form, index, count, choices, onMove, onRemove }: Ax
           help="As the key table and the texts call it; upper and lower case are the same."
           error={error("axis")}
           maxLength={40}
-          {...form.register(`${at}.axis`)}
+          {...registered(form, `${at}.axis`)}
         />
         <TextField
           label="Motors"
           help="Motors that share the load, each with its own driver."
           error={error("motor_count")}
           inputMode="numeric"
-          {...form.register(`${at}.motor_count`)}
+          {...registered(form, `${at}.motor_count`)}
         />
         {PARTS.map((part) => (
           <ItemSelect
@@ -55,7 +56,7 @@ export function AxisFields({ form, index, count, choices, onMove, onRemove }: Ax
             choices={choices}
             chosen={axis[part]}
             error={error(part)}
-            {...form.register(`${at}.${part}`)}
+            {...registered(form, `${at}.${part}`)}
           />
         ))}
         <TravelFields form={form} index={index} choices={choices} />
@@ -63,7 +64,7 @@ export function AxisFields({ form, index, count, choices, onMove, onRemove }: Ax
           label="Coupled with"
           help="Axes whose motors move together with this one, as with crossed belts; names separated by commas."
           error={error("coupled_with")}
-          {...form.register(`${at}.coupled_with`)}
+          {...registered(form, `${at}.coupled_with`)}
         />
       </div>
       <details className="mb-4">
@@ -106,7 +107,7 @@ function TravelFields({ form, index, choices }: Pick<AxisFieldsProps, "form" | "
           autoComplete="off"
           error={errorAt(form.formState.errors, `${at}.${field}`)}
           {...(unlocks === null ? {} : { help: unlocks })}
-          {...form.register(`${at}.${field}`)}
+          {...registered(form, `${at}.${field}`)}
         />
       );
     });

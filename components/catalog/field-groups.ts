@@ -1,7 +1,7 @@
 import type { CatalogKind } from "@/lib/domain/catalog";
 import type { FormField } from "@/lib/schemas/form-fields";
 
-export type FieldSubject = CatalogKind | "load";
+export type FieldSubject = CatalogKind | "load" | "sense_resistor";
 
 export interface FieldGroupPlan {
   readonly legend: string;

@@ -13,6 +13,7 @@ import { typedSchema, typedValues, type FieldData } from "@/lib/schemas/form-fie
 import { SaveTrouble } from "./save-trouble";
 import { SchemaForm } from "./schema-form";
 import { showFieldErrors, useSave } from "./use-save";
+import { registered } from "./registered";
 
 export interface ItemFormProps {
   readonly kind: CatalogKind;
@@ -64,16 +65,16 @@ export function ItemForm({ kind, item }: ItemFormProps) {
             error={errors.code?.message}
             help="Short, as on drawings and labels; it stays."
             maxLength={40}
-            {...form.register("code")}
+            {...registered(form, "code")}
           />
         )}
-        <TextField label="Name" error={errors.name?.message} maxLength={200} {...form.register("name")} />
+        <TextField label="Name" error={errors.name?.message} maxLength={200} {...registered(form, "name")} />
         <TextArea
           label="Evidence"
           rows={2}
           help="Where these data come from: which sheet and issue, or who measured them, when."
           error={errors.evidence?.message}
-          {...form.register("evidence")}
+          {...registered(form, "evidence")}
         />
       </FieldGroup>
       <SchemaForm subject={kind} schema={CATALOG_DATA[kind]} form={form} prefix="data" />
@@ -86,7 +87,7 @@ export function ItemForm({ kind, item }: ItemFormProps) {
           </p>
         </Notice>
       )}
-      <div className="acts">
+      <div className="acts mt-4">
         <Button type="submit" variant="primary" busy={save.isPending}>
           {item
             ? `Save as version ${item.version + 1}`

@@ -107,7 +107,7 @@ export function KeyTableEditor({ table, axes, mayWrite }: KeyTableEditorProps) {
         </Notice>
       )}
       {mayWrite && (
-        <div className="acts">
+        <div className="acts mt-3">
           <Button onClick={() => edit.add(empty)}>Add a row</Button>
         </div>
       )}
@@ -134,7 +134,7 @@ export function KeyTableEditor({ table, axes, mayWrite }: KeyTableEditorProps) {
           {wrong > 0 && (
             <p className="field-error">Put right the rows that are marked before saving: {wrong}.</p>
           )}
-          <div className="acts">
+          <div className="acts mt-4">
             <Button variant="primary" busy={save.isPending} disabled={wrong > 0} onClick={submit}>
               Save as version {table.version + 1}
             </Button>

@@ -23,6 +23,7 @@ import { ItemSelect } from "./item-select";
 import { SaveTrouble } from "./save-trouble";
 import { errorAt } from "./schema-form";
 import { showFieldErrors, useSave } from "./use-save";
+import { registered } from "./registered";
 
 export interface ModelFormProps {
   /** Null: a new model. */
@@ -61,7 +62,7 @@ export function ModelFormSheet({ model, choices }: ModelFormProps) {
           </p>
         </Notice>
       )}
-      <div className="acts">
+      <div className="acts mt-4">
         <Button type="submit" variant="primary" busy={save.isPending}>
           {model ? `Save as version ${model.version + 1}` : "Make the machine model"}
         </Button>
@@ -86,10 +87,10 @@ function MachineFields({ form, choices, isNew }: PartProps & { readonly isNew: b
           help="Short, as on drawings and labels; it stays."
           error={error("code")}
           maxLength={40}
-          {...form.register("code")}
+          {...registered(form, "code")}
         />
       )}
-      <TextField label="Name" error={error("name")} maxLength={200} {...form.register("name")} />
+      <TextField label="Name" error={error("name")} maxLength={200} {...registered(form, "name")} />
       {(["supply", "controller_board"] as const).map((part) => (
         <ItemSelect
           key={part}
@@ -97,7 +98,7 @@ function MachineFields({ form, choices, isNew }: PartProps & { readonly isNew: b
           choices={choices}
           chosen={hardware[part]}
           error={error(`hardware.${part}`)}
-          {...form.register(`hardware.${part}`)}
+          {...registered(form, `hardware.${part}`)}
         />
       ))}
       <TextField
@@ -107,11 +108,12 @@ function MachineFields({ form, choices, isNew }: PartProps & { readonly isNew: b
         inputMode="decimal"
         autoComplete="off"
         error={error("hardware.enclosure_rise_k")}
-        {...form.register("hardware.enclosure_rise_k")}
+        {...registered(form, "hardware.enclosure_rise_k")}
       />
       <CheckboxField
         label="Machines of this model can read back what they run or have stored"
         help="Without it, a technician signs a statement in place of the read-back."
+        defaultChecked={form.getValues("hardware.has_read_back")}
         {...form.register("hardware.has_read_back")}
       />
     </FieldGroup>
@@ -160,7 +162,7 @@ function AxesFields({ form, choices }: PartProps) {
           <p>Axis {removed.axis.axis || removed.index + 1} is taken out. It is gone once you save.</p>
         </Notice>
       )}
-      <div className="acts">
+      <div className="acts mb-6">
         <Button onClick={() => append(axisFormValues())}>Add an axis</Button>
       </div>
     </SheetSection>

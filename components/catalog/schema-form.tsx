@@ -3,7 +3,6 @@
 import { useWatch, type FieldValues, type Path, type UseFormReturn } from "react-hook-form";
 import type { z } from "zod";
 import { FieldGroup, SelectField, TextField } from "@/components/ui/field";
-import { unlockedBy } from "@/lib/rules/unlocks";
 import {
   choiceWords,
   formFields,
@@ -12,7 +11,8 @@ import {
   type TypedValues,
 } from "@/lib/schemas/form-fields";
 import { groupedFields, isAsked, type FieldSubject } from "./field-groups";
-import { unlockSentence } from "./unlock-sentence";
+import { registered, type Registered } from "./registered";
+import { unlockSentence, unlocksOf } from "./unlock-sentence";
 
 export interface SchemaFormProps<T extends FieldValues> {
   readonly subject: FieldSubject;
@@ -56,10 +56,10 @@ export function SchemaForm<T extends FieldValues>({
                 key={field.path}
                 field={field}
                 unlocks={
-                  hints && typed(field.path) === "" ? unlockSentence(unlockedBy(subject, field.path)) : null
+                  hints && typed(field.path) === "" ? unlockSentence(unlocksOf(subject, field.path)) : null
                 }
                 error={errorAt(form.formState.errors, `${prefix}.${field.path}`)}
-                control={form.register(`${prefix}.${field.path}` as Path<T>)}
+                control={registered(form, `${prefix}.${field.path}` as Path<T>)}
               />
             ))}
         </FieldGroup>
@@ -72,7 +72,7 @@ interface SchemaFieldProps {
   readonly field: FormField;
   readonly unlocks: string | null;
   readonly error: string | undefined;
-  readonly control: ReturnType<UseFormReturn["register"]>;
+  readonly control: Registered;
 }
 
 function SchemaField({ field, unlocks, error, control }: SchemaFieldProps) {

@@ -126,14 +126,11 @@ interface SuggestionLineProps {
 }
 
 function SuggestionLine({ suggestion, onAccept }: SuggestionLineProps) {
-  const { parameter, axis, unit, basis, score, reason } = suggestion;
+  const { parameter, axis, unit, basis, reason } = suggestion;
   const words = [axis ? `${parameterLabel(parameter)} of ${axis}` : parameterLabel(parameter), unit, basis];
   return (
     <p>
-      {words.filter(Boolean).join(", ")}{" "}
-      <span className="quiet">
-        ({Math.round(score * 100)}&nbsp;% likely: {reason})
-      </span>{" "}
+      {words.filter(Boolean).join(", ")} <span className="quiet">{reason}</span>{" "}
       {onAccept && (
         <Button variant="quiet" onClick={onAccept} aria-label={`Accept ${words.filter(Boolean).join(", ")}`}>
           accept

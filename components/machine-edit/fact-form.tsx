@@ -5,6 +5,7 @@ import { useRouter } from "next/navigation";
 import { useState } from "react";
 import { useForm, useWatch } from "react-hook-form";
 import { ItemSelect } from "@/components/catalog/item-select";
+import { registered } from "@/components/catalog/registered";
 import { SaveTrouble } from "@/components/catalog/save-trouble";
 import { SchemaForm } from "@/components/catalog/schema-form";
 import { showFieldErrors, useSave } from "@/components/catalog/use-save";
@@ -32,17 +33,19 @@ export function FactForm({ machineId, axes, choices }: FactFormProps) {
   const [part, setPart] = useState<DifferingPart>("sense_resistor");
   return (
     <>
-      <SelectField
-        label="Part that differs"
-        value={part}
-        onChange={(event) => setPart(differingPartSchema.parse(event.target.value))}
-      >
-        {DIFFERING_PARTS.map((option) => (
-          <option key={option} value={option}>
-            {partWords(option)}
-          </option>
-        ))}
-      </SelectField>
+      <div className="field-columns">
+        <SelectField
+          label="Part that differs"
+          value={part}
+          onChange={(event) => setPart(differingPartSchema.parse(event.target.value))}
+        >
+          {DIFFERING_PARTS.map((option) => (
+            <option key={option} value={option}>
+              {partWords(option)}
+            </option>
+          ))}
+        </SelectField>
+      </div>
       <PartForm key={part} part={part} machineId={machineId} axes={axes} choices={choices} />
     </>
   );
@@ -66,12 +69,11 @@ function PartForm({ part, machineId, axes, choices }: FactFormProps & { readonly
   const itemId = useWatch({ control: form.control, name: "itemId" });
   const { errors } = form.formState;
   const kind = catalogKindSchema.safeParse(part).data;
-  const subject = part === "sense_resistor" ? "driver" : part;
   return (
     <form onSubmit={(event) => void submit(event)} noValidate>
       <div className="field-columns">
         {!isMachinePart(part) && (
-          <SelectField label="Axis" error={errors.axis?.message} {...form.register("axis")}>
+          <SelectField label="Axis" error={errors.axis?.message} {...registered(form, "axis")}>
             <option value="">every axis</option>
             {axes.map((axis) => (
               <option key={axis} value={axis}>
@@ -87,7 +89,7 @@ function PartForm({ part, machineId, axes, choices }: FactFormProps & { readonly
             choices={choices}
             chosen={itemId}
             error={errors.itemId?.message}
-            {...form.register("itemId")}
+            {...registered(form, "itemId")}
           />
         )}
         <TextArea
@@ -95,14 +97,14 @@ function PartForm({ part, machineId, axes, choices }: FactFormProps & { readonly
           rows={2}
           help="Who read which marking or measured it, with what, when."
           error={errors.evidence?.message}
-          {...form.register("evidence")}
+          {...registered(form, "evidence")}
         />
       </div>
       {!isCatalogPart(part) && errors.itemId && <p className="field-error">{errors.itemId.message}</p>}
       <details open={!isCatalogPart(part)}>
         <summary>Values of this machine alone</summary>
         <div className="pt-4">
-          <SchemaForm subject={subject} schema={factSchema(part)} form={form} prefix="data" hints={false} />
+          <SchemaForm subject={part} schema={factSchema(part)} form={form} prefix="data" hints={false} />
         </div>
       </details>
       <SaveTrouble error={save.error} onLoad={save.reset} />
@@ -111,7 +113,7 @@ function PartForm({ part, machineId, axes, choices }: FactFormProps & { readonly
           <p>Recorded. The machine is being checked again.</p>
         </Notice>
       )}
-      <div className="acts">
+      <div className="acts mt-4">
         <Button type="submit" variant="primary" busy={save.isPending}>
           Record the {partWords(part)}
         </Button>

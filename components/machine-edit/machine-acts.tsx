@@ -12,8 +12,8 @@ export interface MachineActsProps {
 
 /** Move, take out of service, put into service, retire: each with its reason, each undone by another. */
 export function MachineActs({ machine, sites }: MachineActsProps) {
-  const { id, version, state } = machine;
-  const at = (act: string) => ({ path: `/machines/${id}/${act}`, ifMatch: version });
+  const { id, state } = machine;
+  const at = (act: string) => ({ path: `/machines/${id}/${act}` });
   const others = sites.filter((site) => site.id !== machine.siteId);
   return (
     <>

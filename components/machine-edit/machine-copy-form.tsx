@@ -64,7 +64,7 @@ export function MachineCopyForm({ machine, sites, facts }: MachineCopyFormProps)
           <p>{sentenceOf(copy.error)}</p>
         </Notice>
       )}
-      <div className="acts">
+      <div className="acts mt-4">
         <Button type="submit" busy={copy.isPending}>
           Add the copy
         </Button>

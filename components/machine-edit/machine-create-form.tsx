@@ -3,6 +3,7 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useRouter } from "next/navigation";
 import { useForm } from "react-hook-form";
+import { registered } from "@/components/catalog/registered";
 import { SaveTrouble } from "@/components/catalog/save-trouble";
 import { showFieldErrors, useSave } from "@/components/catalog/use-save";
 import { Button } from "@/components/ui/button";
@@ -44,9 +45,9 @@ export function MachineCreateForm({ models, sites, modelId }: MachineCreateFormP
         error={errors.serial?.message}
         maxLength={80}
         autoComplete="off"
-        {...form.register("serial")}
+        {...registered(form, "serial")}
       />
-      <SelectField label="Machine model" error={errors.modelId?.message} {...form.register("modelId")}>
+      <SelectField label="Machine model" error={errors.modelId?.message} {...registered(form, "modelId")}>
         <option value="">choose</option>
         {models.map(({ id, label }) => (
           <option key={id} value={id}>
@@ -58,7 +59,7 @@ export function MachineCreateForm({ models, sites, modelId }: MachineCreateFormP
         label="Site"
         help="Its ambient temperature is what the machine is checked at."
         error={errors.siteId?.message}
-        {...form.register("siteId")}
+        {...registered(form, "siteId")}
       >
         <option value="">choose</option>
         {sites.map(({ id, label }) => (
@@ -67,9 +68,9 @@ export function MachineCreateForm({ models, sites, modelId }: MachineCreateFormP
           </option>
         ))}
       </SelectField>
-      <TextArea label="Note" optional rows={2} error={errors.note?.message} {...form.register("note")} />
+      <TextArea label="Note" optional rows={2} error={errors.note?.message} {...registered(form, "note")} />
       <SaveTrouble error={save.error} onLoad={save.reset} />
-      <div className="acts">
+      <div className="acts mt-4">
         <Button type="submit" variant="primary" busy={save.isPending}>
           Add the machine
         </Button>

@@ -3,6 +3,7 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useRouter } from "next/navigation";
 import { useForm } from "react-hook-form";
+import { registered } from "@/components/catalog/registered";
 import { SaveTrouble } from "@/components/catalog/save-trouble";
 import { showFieldErrors, useSave } from "@/components/catalog/use-save";
 import { Button } from "@/components/ui/button";
@@ -34,9 +35,9 @@ export function MachineFactsForm({ machine }: { readonly machine: MachineView })
           error={errors.serial?.message}
           maxLength={80}
           autoComplete="off"
-          {...form.register("serial")}
+          {...registered(form, "serial")}
         />
-        <TextArea label="Note" optional rows={2} error={errors.note?.message} {...form.register("note")} />
+        <TextArea label="Note" optional rows={2} error={errors.note?.message} {...registered(form, "note")} />
       </div>
       <SaveTrouble error={save.error} onLoad={save.reset} />
       {save.isSuccess && (
@@ -44,7 +45,7 @@ export function MachineFactsForm({ machine }: { readonly machine: MachineView })
           <p>Saved. What stood before is on the record.</p>
         </Notice>
       )}
-      <div className="acts">
+      <div className="acts mt-4">
         <Button type="submit" variant="primary" busy={save.isPending}>
           Save
         </Button>

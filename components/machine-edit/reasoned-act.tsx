@@ -11,7 +11,6 @@ import { Notice } from "@/components/ui/notice";
 export interface ReasonedActProps {
   /** Below /api/v1. */
   readonly path: string;
-  readonly ifMatch: number;
   readonly title: string;
   readonly note: ReactNode;
   readonly label: string;
@@ -22,14 +21,15 @@ export interface ReasonedActProps {
 }
 
 /** An act upon a machine that takes a reason, in a form of its own. */
-export function ReasonedAct({ path, ifMatch, title, note, label, body, children }: ReasonedActProps) {
+export function ReasonedAct({ path, title, note, label, body, children }: ReasonedActProps) {
   const router = useRouter();
   const act = useSave<unknown>({ onSaved: () => router.refresh() });
   const errors = fieldErrors(act.error);
   const submit = (event: FormEvent<HTMLFormElement>): void => {
     event.preventDefault();
-    const typed = Object.fromEntries(new FormData(event.currentTarget));
-    act.mutate({ method: "POST", path, body: { ...body, ...typed }, ifMatch });
+    const form = event.currentTarget;
+    const typed = Object.fromEntries(new FormData(form));
+    act.mutate({ method: "POST", path, body: { ...body, ...typed } }, { onSuccess: () => form.reset() });
   };
   return (
     <form className="field-group" onSubmit={submit} noValidate>
@@ -44,7 +44,7 @@ export function ReasonedAct({ path, ifMatch, title, note, label, body, children 
           <p>{sentenceOf(act.error)}</p>
         </Notice>
       )}
-      <div className="acts">
+      <div className="acts mt-4">
         <Button type="submit" busy={act.isPending}>
           {label}
         </Button>

@@ -61,7 +61,7 @@ export default async function EditMachinePage({ params }: { readonly params: Pro
       {mayWrite && (
         <>
           <SheetSection title="Site and state">
-            <MachineActs key={machine.version} machine={machine} sites={siteChoices} />
+            <MachineActs machine={machine} sites={siteChoices} />
           </SheetSection>
           <SheetSection title="Add a machine like this one">
             <MachineCopyForm
