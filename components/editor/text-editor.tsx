@@ -1,0 +1,77 @@
+"use client";
+
+import Editor, { type OnMount } from "@monaco-editor/react";
+import { useEffect, useRef, useState } from "react";
+import { LEVEL_WORDS } from "@/lib/domain/levels";
+import type { LineMark } from "@/components/revision/marked-text";
+import { defineTheme } from "./monaco-setup";
+
+export interface TextEditorProps {
+  readonly path: string;
+  readonly text: string;
+  readonly marks: readonly LineMark[];
+  /** Line to put in sight and the cursor on; a new object each time it is asked for. */
+  readonly goTo: { readonly line: number } | null;
+  readonly onChange: (text: string) => void;
+}
+
+type Instance = Parameters<OnMount>[0];
+
+const OPTIONS = {
+  minimap: { enabled: false },
+  glyphMargin: true,
+  fontFamily: "var(--font-code)",
+  fontSize: 13,
+  lineHeight: 22,
+  scrollBeyondLastLine: false,
+  automaticLayout: true,
+  wordWrap: "off",
+  renderWhitespace: "trailing",
+  unicodeHighlight: { invisibleCharacters: true, ambiguousCharacters: true },
+  accessibilitySupport: "auto",
+  tabFocusMode: true,
+  fixedOverflowWidgets: true,
+  scrollbar: { alwaysConsumeMouseWheel: false },
+} as const;
+
+/** Monaco with a level mark beside each line that a finding rests on. Tab leaves it (Ctrl+M changes that). */
+export function TextEditor({ path, text, marks, goTo, onChange }: TextEditorProps) {
+  const [editor, setEditor] = useState<Instance | null>(null);
+  const marking = useRef<ReturnType<Instance["createDecorationsCollection"]> | null>(null);
+  useEffect(() => {
+    if (!editor) return;
+    marking.current ??= editor.createDecorationsCollection();
+    marking.current.set(
+      marks.map(({ line, level, sentence }) => ({
+        range: { startLineNumber: line, startColumn: 1, endLineNumber: line, endColumn: 1 },
+        options: {
+          glyphMarginClassName: `glyph glyph-${level}`,
+          glyphMarginHoverMessage: { value: `${LEVEL_WORDS[level]}: ${sentence}` },
+        },
+      })),
+    );
+  }, [editor, marks]);
+  useEffect(() => {
+    if (!editor || !goTo) return;
+    editor.revealLineInCenter(goTo.line);
+    editor.setPosition({ lineNumber: goTo.line, column: 1 });
+    editor.focus();
+  }, [editor, goTo]);
+  return (
+    <Editor
+      height="min(70vh, 640px)"
+      path={path}
+      defaultLanguage="plaintext"
+      value={text}
+      beforeMount={defineTheme}
+      theme="keepstep"
+      options={{ ...OPTIONS, ariaLabel: `Text of ${path}. Press Ctrl+M to let Tab move inside the text.` }}
+      loading={<p className="quiet">Opening the editor …</p>}
+      onMount={(opened) => {
+        marking.current = null;
+        setEditor(opened);
+      }}
+      onChange={(changed) => onChange(changed ?? "")}
+    />
+  );
+}
