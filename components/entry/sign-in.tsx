@@ -2,6 +2,7 @@
 
 import { signIn } from "next-auth/react";
 import { useState, type FormEvent } from "react";
+import { SubmitButton } from "@/components/forms/submit-button";
 import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
@@ -69,9 +70,7 @@ export function SignInForm({ next }: { readonly next: string }) {
         required
       />
       <div className="acts">
-        <Button type="submit" variant="primary" busy={busy}>
-          Sign in
-        </Button>
+        <SubmitButton busy={busy}>Sign in</SubmitButton>
       </div>
     </form>
   );

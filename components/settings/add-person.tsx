@@ -6,8 +6,9 @@ import { useForm, type FieldErrors, type UseFormRegister } from "react-hook-form
 import { z } from "zod";
 import { apiCall } from "@/components/api";
 import { Refusal } from "@/components/forms/refusal";
+import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
-import { Button, ButtonLink } from "@/components/ui/button";
+import { ButtonLink } from "@/components/ui/button";
 import { createUserSchema, type CreateUser, type UserView } from "@/lib/schemas/people";
 import { PasswordField } from "./password-field";
 import { PersonFields, type SiteChoice, type TypedPerson } from "./person-fields";
@@ -43,9 +44,7 @@ export function AddPerson({ sites }: { readonly sites: readonly SiteChoice[] }) 
       />
       <Refusal error={save.error} title="Not added" />
       <div className="acts">
-        <Button type="submit" variant="primary" busy={save.isPending}>
-          Add the person
-        </Button>
+        <SubmitButton busy={save.isPending}>Add the person</SubmitButton>
         <ButtonLink href="/settings/people">Leave it</ButtonLink>
       </div>
     </form>

@@ -5,8 +5,8 @@ import { useForm } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
 import { Refusal } from "@/components/forms/refusal";
+import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
-import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
 import { updateUserSchema, type UpdateUser, type UserView } from "@/lib/schemas/people";
 import { PersonFields, type SiteChoice, type TypedPerson } from "./person-fields";
@@ -40,9 +40,7 @@ export function EditPerson({ person, sites }: EditPersonProps) {
         </Notice>
       )}
       <div className="acts">
-        <Button type="submit" variant="primary" busy={save.isPending}>
-          Save
-        </Button>
+        <SubmitButton busy={save.isPending}>Save</SubmitButton>
       </div>
     </form>
   );

@@ -5,8 +5,8 @@ import { useForm, useWatch } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
 import { Refusal } from "@/components/forms/refusal";
+import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
-import { Button } from "@/components/ui/button";
 import { CheckboxField, SelectField, TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { ROLE_WORDS, SCOPE_WORDS } from "@/lib/domain/role-words";
@@ -66,9 +66,7 @@ export function NewTokenForm() {
       <Refusal error={save.error} title="No token made" />
       {save.data && <TokenOnce made={save.data} />}
       <div className="acts">
-        <Button type="submit" variant="primary" busy={save.isPending}>
-          Make the token
-        </Button>
+        <SubmitButton busy={save.isPending}>Make the token</SubmitButton>
       </div>
     </form>
   );

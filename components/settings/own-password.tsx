@@ -4,8 +4,8 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { apiCall } from "@/components/api";
 import { Refusal } from "@/components/forms/refusal";
+import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
-import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { PASSWORD_MIN } from "@/lib/domain/password";
@@ -47,9 +47,7 @@ export function OwnPasswordForm({ email }: { readonly email: string }) {
         </Notice>
       )}
       <div className="acts">
-        <Button type="submit" variant="primary" busy={save.isPending}>
-          Change my password
-        </Button>
+        <SubmitButton busy={save.isPending}>Change my password</SubmitButton>
       </div>
     </form>
   );

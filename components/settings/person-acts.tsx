@@ -5,8 +5,8 @@ import { useForm } from "react-hook-form";
 import { apiCall } from "@/components/api";
 import { ActButton } from "@/components/forms/act-button";
 import { Refusal } from "@/components/forms/refusal";
+import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
-import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import {
@@ -70,9 +70,9 @@ export function ResetPasswordForm({ person }: { readonly person: Pick<UserView, 
         </Notice>
       )}
       <div className="acts">
-        <Button type="submit" busy={save.isPending}>
+        <SubmitButton variant="plain" busy={save.isPending}>
           Give a new password
-        </Button>
+        </SubmitButton>
       </div>
     </form>
   );

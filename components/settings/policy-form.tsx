@@ -5,8 +5,8 @@ import { useForm } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
 import { Refusal } from "@/components/forms/refusal";
+import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
-import { Button } from "@/components/ui/button";
 import { FieldGroup, TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { savePolicySchema, type PolicyVersionView } from "@/lib/schemas/policies";
@@ -79,9 +79,7 @@ export function PolicyForm({ current }: { readonly current: PolicyVersionView })
         </Notice>
       )}
       <div className="acts">
-        <Button type="submit" variant="primary" busy={save.isPending}>
-          Save as a new version
-        </Button>
+        <SubmitButton busy={save.isPending}>Save as a new version</SubmitButton>
       </div>
     </form>
   );

@@ -6,8 +6,9 @@ import { useForm } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
 import { Refusal } from "@/components/forms/refusal";
+import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
-import { Button, ButtonLink } from "@/components/ui/button";
+import { ButtonLink } from "@/components/ui/button";
 import { TextField } from "@/components/ui/field";
 import { createSiteSchema, type SiteView } from "@/lib/schemas/sites";
 import { typedNumber } from "@/lib/schemas/typed-field";
@@ -65,9 +66,7 @@ export function SiteForm({ site }: { readonly site: SiteView | null }) {
       />
       <Refusal error={save.error} title="Not saved" />
       <div className="acts">
-        <Button type="submit" variant="primary" busy={save.isPending}>
-          {site ? "Save" : "Add the site"}
-        </Button>
+        <SubmitButton busy={save.isPending}>{site ? "Save" : "Add the site"}</SubmitButton>
         <ButtonLink href="/settings/sites">Leave it</ButtonLink>
       </div>
     </form>
