@@ -26,6 +26,16 @@ function drift(layers: LayerReading[], { text = TEXT, assembly = ASSEMBLY } = {}
   return driftOf({ required, counted: countedValues(layers), assembly, policy: POLICY, asOf: NOW });
 }
 
+/**
+ * Motor case of X in °C at a run current in A rms: copper loss P = 2·I²·R·(234.5 + T)/254.5 with the winding at
+ * T = 25 + 8.5·P, solved for T; case 25 + 7·P.
+ */
+function caseAt(current: number): number {
+  const loss = (2 * current ** 2 * 2.1) / 254.5;
+  const winding = (25 + 8.5 * loss * 234.5) / (1 - 8.5 * loss);
+  return 25 + 7 * loss * (234.5 + winding);
+}
+
 describe("driftOf", () => {
   it("finds a machine that reads as required on baseline", () => {
     expect(drift([layer(TEXT)])).toMatchObject({ level: null, items: [], sentence: "on baseline" });
@@ -145,6 +155,82 @@ describe("driftOf", () => {
       ["run_current", "over"],
       ["corner_speed", "within"],
     ]);
+  });
+
+  it("lays what values do only together to each of them", () => {
+    const weaker = edited("x", "amps = 0.85", "amps = 0.35");
+    const faster = edited("x", "acc = 6000", "acc = 12000");
+    expect([drift([layer(weaker)]).level, drift([layer(faster)]).level]).toEqual(["within", "within"]);
+    const both = drift([layer(edited("x", "acc = 6000", "acc = 12000", weaker))]);
+    expect(both.items.map(({ parameter, level }) => [parameter, level])).toEqual([
+      ["run_current", "over"],
+      ["acceleration", "over"],
+    ]);
+    expect(both.sentence).toMatch(/^X torque margin/);
+  });
+
+  it("takes what values do together for the truth where one makes up for the other", () => {
+    const low = edited("x", "amps = 0.85", "amps = 0.2");
+    const { level, items } = drift([layer(edited("x", "acc = 6000", "acc = 1000", low))]);
+    expect([level, items.length]).toEqual(["within", 2]);
+  });
+
+  it("says so where a limit that was passed already is passed further, and not where it is passed less", () => {
+    const text = edited("x", "amps = 0.85", "amps = 1.45");
+    const more = drift([layer(edited("x", "amps = 0.85", "amps = 1.49"))], { text });
+    expect([more.level, more.sentence]).toEqual([
+      "over",
+      `X motor case ${caseAt(1.45).toFixed(0)} → ${caseAt(1.49).toFixed(0)} °C`,
+    ]);
+    expect(drift([layer(TEXT)], { text })).toMatchObject({
+      level: "within",
+      sentence: "X run current 1.45 → 0.85 A rms, no effect on a limit",
+    });
+  });
+
+  it("knows the brake that holds a load", () => {
+    const [x, z] = ASSEMBLY.axes;
+    const assembly = { ...ASSEMBLY, axes: [x!, { ...z!, load: { ...z?.load, holding_brake: true } }] };
+    const { level, sentence } = drift([layer(edited("z", "standby = 1.0", "standby = 0.1"))], { assembly });
+    expect([level, sentence]).toEqual(["near", "Z hold 0.3 of the load: the brake alone holds it"]);
+  });
+
+  it("names the check in words where its value has no name of its own", () => {
+    const { level, sentence } = drift([layer(edited("x", "vmax = 300", "vmax = 20"))]);
+    expect([level, sentence]).toEqual([
+      "near",
+      "X maximum speed 300 → 20 mm/s: cruising at a resonance near limit",
+    ]);
+  });
+
+  it("says where no check rests on a value", () => {
+    const { level, sentence } = drift([layer(TEXT.replace("supply = 24 V", "supply = 36 V"))]);
+    expect([level, sentence]).toEqual(["within", "Supply voltage 24 → 36 V, no check rests on it"]);
+  });
+
+  it("compares a hold current in per cent with one in amperes as currents", () => {
+    const text = edited("x", "amps = 0.85", "amps = 1.0");
+    expect(
+      drift([layer(edited("x", "standby = 0.5   # A", "standby = 50 %", text))], { text }).level,
+    ).toBeNull();
+    const { items } = drift([layer(edited("x", "standby = 0.5   # A", "standby = 40 %", text))], { text });
+    expect(items[0]).toMatchObject({ parameter: "hold_current", share: expect.closeTo(-0.2, 9) });
+  });
+
+  it("asks for the basis of a current that was read without one", () => {
+    const reading = layer(TEXT);
+    const parameters = reading.parameters.map((value) =>
+      value.axis === "x" && value.parameter === "run_current" ? { ...value, basis: null } : value,
+    );
+    const { level, sentence } = drift([{ ...reading, parameters }]);
+    expect([level, sentence]).toEqual(["cannot", "X run current has no basis, peak or rms"]);
+  });
+
+  it("counts the parameters of an axis that were not read, and joins axes", () => {
+    const few = TEXT.replace("vmax = 20 ", "# vmax = 20 ").replace("acc = 200 ", "# acc = 200 ");
+    expect(drift([layer(few)]).sentence).toBe("2 parameters of Z not read");
+    const machineOnly = TEXT.slice(0, TEXT.indexOf("[axis.x]"));
+    expect(drift([layer(machineOnly)]).sentence).toBe("X and Z not read");
   });
 
   it("ranks one value with a consequence above several without", () => {
