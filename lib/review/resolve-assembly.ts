@@ -220,7 +220,10 @@ function asFields(data: unknown): Fields {
   return typeof data === "object" && data !== null ? { ...data } : {};
 }
 
-/** Without the keys whose value is undefined, so that equal hardware is equal data. */
+/**
+ * Without the keys whose value is undefined, so that equal hardware is equal data. The cast is safe: only optional keys
+ * of T can hold undefined.
+ */
 function withoutEmpty<T extends object>(data: T): T {
   return Object.fromEntries(Object.entries(data).filter(([, value]) => value !== undefined)) as T;
 }
