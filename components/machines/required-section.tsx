@@ -5,7 +5,7 @@ import { onAxis } from "@/lib/review/axis-word";
 import type { DeviationView, MachineSheet } from "@/lib/schemas/machines-read";
 import { MarkedText } from "@/components/revision/marked-text";
 import { DateTime } from "@/components/ui/date-time";
-import { fileSize } from "@/components/ui/file-drop";
+import { fileSize } from "@/components/ui/file-size";
 
 export interface RequiredSectionProps {
   readonly machineId: string;

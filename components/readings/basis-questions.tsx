@@ -11,7 +11,7 @@ import { Button } from "@/components/ui/button";
 import { LevelMark } from "@/components/ui/level-mark";
 
 /** The currents of which nobody has said yet whether they are peak or rms. */
-export function withoutBasis(parameters: readonly ParameterValue[]): ParameterValue[] {
+function withoutBasis(parameters: readonly ParameterValue[]): ParameterValue[] {
   return parameters.filter(
     ({ parameter, basis, unit }) => needsBasis(parameter) && basis === null && unit !== "%",
   );

@@ -9,7 +9,8 @@ export interface PastedText {
   readonly text: string;
 }
 
-async function toBase64(file: File): Promise<string> {
+/** The bytes of a file as the API takes them. */
+export async function toBase64(file: File): Promise<string> {
   const bytes = new Uint8Array(await file.arrayBuffer());
   let binary = "";
   const CHUNK = 0x8000;

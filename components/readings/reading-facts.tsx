@@ -5,7 +5,7 @@ import type { Level } from "@/lib/domain/levels";
 import type { ReadingStanding } from "@/lib/schemas/readings";
 import { DateTime } from "@/components/ui/date-time";
 import { Facts, type Fact } from "@/components/ui/facts";
-import { fileSize } from "@/components/ui/file-drop";
+import { fileSize } from "@/components/ui/file-size";
 import { LevelMark } from "@/components/ui/level-mark";
 
 interface FactsOfReading {

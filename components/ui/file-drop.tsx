@@ -1,8 +1,8 @@
 "use client";
 
 import { useId, useRef, useState, type DragEvent, type ReactNode } from "react";
-import { plural } from "@/lib/domain/sentences";
 import { Button } from "./button";
+import { fileSize } from "./file-size";
 
 export interface FileDropProps {
   readonly label: ReactNode;
@@ -13,13 +13,6 @@ export interface FileDropProps {
   readonly accept?: string | undefined;
   readonly help?: ReactNode;
   readonly error?: string | undefined;
-}
-
-/** "12 bytes", "3.4 kB", "1.2 MB"; decimal multiples (IEC 80000-13). */
-export function fileSize(bytes: number): string {
-  if (bytes < 1000) return plural(bytes, "byte");
-  if (bytes < 1_000_000) return `${(bytes / 1000).toFixed(1)} kB`;
-  return `${(bytes / 1_000_000).toFixed(1)} MB`;
 }
 
 /** Files by name: a second file of the same name takes the place of the first. */

@@ -2,7 +2,6 @@ import "server-only";
 import { QueryTypes } from "sequelize";
 import { columnKey, type FloorColumn } from "@/lib/domain/floor";
 import { parameterDefinition, parameterRank, type ParameterName } from "@/lib/domain/parameters";
-import { onAxis } from "@/lib/review/axis-word";
 import { sequelize } from "@/lib/server/sequelize";
 
 interface Place {
@@ -73,7 +72,7 @@ function toColumn(
     axis,
     parameter,
     short,
-    label: onAxis(axis, axis === null ? label : label.toLowerCase()),
+    label,
     modelIds: [...modelIds],
   };
 }

@@ -1,7 +1,6 @@
 import "server-only";
 import { columnKey } from "@/lib/domain/floor";
 import type { FloorCell } from "@/lib/domain/floor";
-import { parameterLabel } from "@/lib/domain/parameters";
 import { showValue } from "@/lib/review/show-value";
 import type { DriftItem } from "@/lib/review/drift-types";
 import { DriftItemRow, Machine, MachineStatus } from "@/models/machines";
@@ -78,22 +77,20 @@ function deviationCells(
     edits.map(({ axis, parameter }) => {
       const key = columnKey(axis, parameter);
       const value = report?.parameters.find((own) => columnKey(own.axis, own.parameter) === key);
-      const shown = value ? `: ${showValue(parameter, value)}` : "";
-      const title = `${parameterLabel(parameter)}${shown}, permitted deviation until ${untilOn}`;
+      const shown = value ? `${showValue(parameter, value)}, ` : "";
+      const title = `${shown}until ${untilOn}`;
       return [key, { kind: "deviation", title }] as [string, FloorCell];
     }),
   );
 }
 
+/** The title goes without the parameter's name and the word for its kind, which whoever shows the cell puts before it. */
 function cellOf({ kind, parameter, required, actual, share, level, staleDays }: DriftItem): FloorCell {
   const asked = required ? `required ${showValue(parameter, required)}` : "not required";
-  const label = parameterLabel(parameter);
-  if (kind !== "differs") {
-    const since = staleDays === null ? "not read" : `not read for ${staleDays} days`;
-    return { kind: "not_read", title: `${label}: ${since}, ${asked}` };
-  }
+  if (kind !== "differs")
+    return { kind: "not_read", title: staleDays === null ? asked : `for ${staleDays} days, ${asked}` };
   const found = actual ? showValue(parameter, actual) : "not read";
-  return { kind: "drift", share: share ?? 0, level, title: `${label}: ${found}, ${asked}` };
+  return { kind: "drift", share: share ?? 0, level, title: `${found}, ${asked}` };
 }
 
 async function keepItems(tx: Tx, machineId: string, items: readonly DriftItem[]): Promise<void> {
