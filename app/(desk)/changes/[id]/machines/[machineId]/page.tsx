@@ -1,0 +1,122 @@
+import type { Metadata } from "next";
+import Link from "next/link";
+import { notFound } from "next/navigation";
+import { z } from "zod";
+import { AsLeftStep } from "@/components/implementation/as-left-step";
+import { DownloadStep } from "@/components/implementation/download-step";
+import { TestStep } from "@/components/implementation/test-step";
+import { Tests } from "@/components/changes/machines-progress";
+import { DateTime } from "@/components/ui/date-time";
+import { Notice } from "@/components/ui/notice";
+import { Sheet, SheetHead, SheetSection } from "@/components/ui/sheet";
+import { TitleBlock } from "@/components/ui/title-block";
+import { load, pageActor } from "@/lib/http/page-actor";
+import { may } from "@/lib/policies/decide";
+import { machinesOfChange } from "@/lib/services/changes/machines-of-change";
+import { showStep, type StepDetail } from "@/lib/services/implementation/steps";
+
+interface StepPageProps {
+  readonly params: Promise<{ id: string; machineId: string }>;
+}
+
+export const metadata: Metadata = { title: "Implementation step" };
+
+const ids = z.object({ id: z.uuid(), machineId: z.uuid() });
+
+export default async function StepPage({ params }: StepPageProps) {
+  const context = await pageActor("changes.read");
+  const asked = ids.safeParse(await params);
+  if (!asked.success) notFound();
+  const { id, machineId } = asked.data;
+  const step = await load(showStep(context, id, machineId));
+  const place = (await load(machinesOfChange(context, id))).find((one) => one.machineId === machineId);
+  const mayWork = may(context.actor, "verifications.create") && step.verifiedAt === null && !place?.endedAt;
+  return (
+    <Sheet>
+      <SheetHead
+        kicker={
+          <>
+            <Link href={`/changes/${id}`}>{step.changeLabel}</Link> {step.title}
+          </>
+        }
+        title={`${step.serial}: apply and prove`}
+        subtitle={`${step.modelName}, ${step.siteName}`}
+      />
+      <Progress step={step} ended={place?.endedAt ?? null} />
+      {mayWork && <Work step={step} />}
+      <SheetSection title="Tests on this machine">
+        {place && place.verifications.length > 0 ? (
+          <Tests tests={place.verifications} />
+        ) : (
+          <p className="quiet">None is recorded yet.</p>
+        )}
+      </SheetSection>
+      <TitleBlock
+        legalOwner="The team that runs these machines"
+        title={step.title}
+        documentType="Implementation step"
+        identificationNumber={`${step.changeLabel}, ${step.serial}`}
+        revision="1"
+        sheet="1 of 1"
+        dateOfIssue={<DateTime value={step.releasedAt} dateOnly />}
+        creator="–"
+        status={step.verifiedAt ? "verified" : step.appliedAt ? "applied" : "released"}
+        approvedBy={<Link href={`/changes/${id}`}>see the change</Link>}
+      />
+    </Sheet>
+  );
+}
+
+function Progress({ step, ended }: { readonly step: StepDetail; readonly ended: string | null }) {
+  if (ended) return <Notice title="Backed out">This change was backed out on this machine.</Notice>;
+  if (step.verifiedAt)
+    return (
+      <Notice title="Verified">
+        Verified <DateTime value={step.verifiedAt} />. Nothing is missing.
+      </Notice>
+    );
+  return <Notice title="Still missing">{step.missing}</Notice>;
+}
+
+function Work({ step }: { readonly step: StepDetail }) {
+  const { changeId, machineId, serial, downloadedAt, appliedAt, axes, hasReadBack } = step;
+  return (
+    <>
+      <SheetSection
+        title="1. Download the text"
+        note={downloadedAt ? <DateTime value={downloadedAt} /> : "the exact text for this machine"}
+      >
+        <DownloadStep
+          changeId={changeId}
+          machineId={machineId}
+          serial={serial}
+          again={downloadedAt !== null}
+        />
+      </SheetSection>
+      <SheetSection title="2. Apply it">
+        <p className="caution">
+          Motors and drivers may be hot. Expect unexpected motion at power-on and at the first move; keep
+          hands out. A raised load can fall when holding current is cut: block it first. Local rules and a
+          competent person stand above this page.
+        </p>
+      </SheetSection>
+      <SheetSection
+        title="3. Read it back"
+        note={
+          appliedAt ? (
+            <DateTime value={appliedAt} />
+          ) : hasReadBack ? (
+            "stored or running values"
+          ) : (
+            "the as-left file"
+          )
+        }
+      >
+        <AsLeftStep machineId={machineId} serial={serial} hasReadBack={hasReadBack} />
+      </SheetSection>
+      <SheetSection title="4. Record the test">
+        <TestStep changeId={changeId} machineId={machineId} axes={axes} hasReadBack={hasReadBack} />
+      </SheetSection>
+    </>
+  );
+}
