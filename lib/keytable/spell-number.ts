@@ -43,7 +43,7 @@ function expand(text: string): string {
 }
 
 function trimZeros(text: string): string {
-  return text.includes(".") ? text.replace(/\.?0+$/, "") : text;
+  return text.includes(".") ? text.replace(/\.?0*$/, "") : text;
 }
 
 function decimalsOf(was: string): number {

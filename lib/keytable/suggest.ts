@@ -17,6 +17,7 @@ export interface SuggestInput {
 
 const MOST = 3;
 const LEAST_SCORE = 0.35;
+const LONGEST_COMMENT = 200;
 
 /** What a key without a rule may be, best first, from its name, unit, comment and the size of its value. At most three. */
 export function suggestParameters(input: SuggestInput): Suggestion[] {
@@ -57,8 +58,15 @@ function readName(words: readonly string[], axisNames: readonly string[], input:
     if (says) for (const concept of says) concepts.set(concept, word);
     else if (!isNeutral(word) && !axisNames.includes(word) && !isUnitWord(word)) unexplained++;
   }
-  const basis = concepts.has("rms") ? "rms" : concepts.has("peak") ? "peak" : null;
-  return { concepts, unexplained, axis: axisOf(words, input), unit: unitClue(words, input), basis };
+  const unit = unitClue(words, input);
+  return { concepts, unexplained, axis: axisOf(words, input), unit, basis: basisOf(concepts, input) };
+}
+
+/** The basis that the name or the comment says. */
+function basisOf(concepts: ReadonlyMap<string, string>, { comment }: SuggestInput): Basis | null {
+  const said = comment === null ? "" : comment.slice(0, LONGEST_COMMENT).toLowerCase();
+  if (concepts.has("rms") || /\brms\b/.test(said)) return "rms";
+  return concepts.has("peak") || /\bpeak\b/.test(said) ? "peak" : null;
 }
 
 function isUnitWord(word: string): boolean {
@@ -87,7 +95,7 @@ function unitClue(words: readonly string[], { value, comment }: SuggestInput): U
 
 function commentUnit(comment: string | null): string | null {
   if (comment === null) return null;
-  for (const word of comment.slice(0, 200).split(/[\s()[\],;:]+/)) {
+  for (const word of comment.slice(0, LONGEST_COMMENT).split(/[\s()[\],;:]+/)) {
     const unit = /^[A-Za-z]$/.test(word) ? null : canonicalUnit(word);
     if (unit !== null) return unit;
   }

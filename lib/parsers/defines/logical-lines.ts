@@ -1,7 +1,7 @@
 import type { Pieces } from "../pieces";
 import { PIECE } from "../types";
 
-/** A directive, a comment on lines of its own, or a run of code, in the order of the text. */
+/** A directive, a comment on lines of its own, or the first line of a run of code, in the order of the text. */
 export interface HeaderLine {
   readonly kind: "directive" | "comment" | "code";
   /** `define`, `if` ...; empty for comments and code. */
@@ -16,16 +16,28 @@ export interface HeaderLine {
   readonly end: number;
 }
 
-/** Groups the pieces of a header. Comments behind a directive belong to it; neighbouring lines of code are one run. */
+/**
+ * Groups the pieces of a header. Comments behind a directive belong to it. Code up to the next directive is one run,
+ * comments between its lines or not, and stands for itself by its first line.
+ */
 export function collectLines(text: string, pieces: Pieces): HeaderLine[] {
   const lines: HeaderLine[] = [];
+  let inCode = false;
   for (let i = 0; i < pieces.count; i++) {
     const kind = pieces.kind(i);
     if (kind === PIECE.directive) {
       lines.push(directiveAt(text, pieces, i));
       i = lastPieceOfLine(pieces, i);
-    } else if (kind === PIECE.comment) lines.push({ ...BARE, kind: "comment", at: i, ...rangeAt(pieces, i) });
-    else if (kind === PIECE.unread) addCode(lines, pieces, i);
+      inCode = false;
+    } else if (kind === PIECE.comment || (kind === PIECE.unread && !inCode)) {
+      inCode ||= kind === PIECE.unread;
+      lines.push({
+        ...BARE,
+        kind: kind === PIECE.comment ? "comment" : "code",
+        at: i,
+        ...rangeAt(pieces, i),
+      });
+    }
   }
   return lines;
 }
@@ -34,13 +46,6 @@ const BARE = { word: "", key: "", body: "" };
 
 function rangeAt(pieces: Pieces, i: number): { start: number; end: number } {
   return { start: pieces.start(i), end: pieces.end(i) };
-}
-
-function addCode(lines: HeaderLine[], pieces: Pieces, i: number): void {
-  const range = rangeAt(pieces, i);
-  const last = lines[lines.length - 1];
-  if (last?.kind === "code") lines[lines.length - 1] = { ...last, end: range.end };
-  else lines.push({ ...BARE, kind: "code", at: i, ...range });
 }
 
 function lastPieceOfLine(pieces: Pieces, from: number): number {

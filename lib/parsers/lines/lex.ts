@@ -72,15 +72,20 @@ function cutUnread(text: string, start: number, end: number, out: Pieces): void 
   out.put(PIECE.space, stop, end);
 }
 
-/** A section reaches to its bracket, or, unclosed, to the end of the line. */
+/** A section reaches to its bracket, or, unclosed, to a trailing comment or the end of the line. */
 function cutSection(text: string, start: number, end: number, out: Pieces): void {
-  let i = start;
-  while (i < end && text.charCodeAt(i) !== CHAR.closeBracket) i++;
-  const double =
-    text.charCodeAt(start + 1) === CHAR.openBracket && text.charCodeAt(i + 1) === CHAR.closeBracket;
-  const stop = i === end ? trimBlanks(text, start, end) : Math.min(end, i + (double ? 2 : 1));
+  const stop = endOfSection(text, start, end);
   out.put(PIECE.section, start, stop);
   cutRest(text, stop, end, out);
+}
+
+function endOfSection(text: string, start: number, end: number): number {
+  let i = start;
+  while (i < end && text.charCodeAt(i) !== CHAR.closeBracket) i++;
+  if (i === end) return trimBlanks(text, start, startOfComment(text, start, end));
+  const double =
+    text.charCodeAt(start + 1) === CHAR.openBracket && text.charCodeAt(i + 1) === CHAR.closeBracket;
+  return Math.min(end, i + (double ? 2 : 1));
 }
 
 function cutEntry(text: string, start: number, end: number, out: Pieces): void {
