@@ -36,6 +36,6 @@ export function formatDateTime(instant: Date, timeZone: string): ShownDateTime {
   return {
     date: `${parts.year?.padStart(4, "0")}-${parts.month}-${parts.day}`,
     time: `${parts.hour}:${parts.minute}`,
-    zone: (parts.timeZoneName ?? "UTC").replace("GMT", "UTC"),
+    zone: (parts.timeZoneName ?? "").replace(/^GMT(?:[+-]00:00)?|^$/, "UTC"),
   };
 }
