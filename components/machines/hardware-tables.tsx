@@ -85,7 +85,7 @@ function Row({ part, path, data, fitted, own }: RowProps) {
       <td>
         <Item part={part} item={fitted[path]} />
       </td>
-      <td>
+      <td className="min-w-80">
         <Values part={part} data={data} />
       </td>
       <td>
