@@ -1,18 +1,34 @@
 import { AxeBuilder } from "@axe-core/playwright";
-import type { Page } from "@playwright/test";
+import type { Browser, Page, Response } from "@playwright/test";
 import { test as base, expect } from "@playwright/test";
 import type { DemoPerson } from "../../scripts/demo-people.mjs";
 import { demoPeople } from "../../scripts/demo-people.mjs";
 
 type Role = DemoPerson["role"];
+type Session = Awaited<ReturnType<ReturnType<Browser["contexts"]>[number]["storageState"]>>;
+
+/** Pixels: the narrowest window that people use here. */
+export const PHONE = { width: 390, height: 844 };
+
+interface DeskOptions {
+  /** The test asks for what is refused, and the browser writes the answer's status to the console. */
+  readonly asksForRefusals: boolean;
+}
 
 interface DeskFixtures {
-  /** Signs the page in as the demo's first person of this role. */
-  readonly signIn: (role: Role, page?: Page) => Promise<DemoPerson>;
+  /** A page of its own, as the demo's first person of this role. */
+  readonly pageAs: (role: Role, viewport?: typeof PHONE) => Promise<Page>;
   /** Finds no serious violation on the page as it stands. */
   readonly expectAccessible: (page?: Page) => Promise<void>;
+  /** A page of its own where nobody is signed in. */
+  readonly pageOfNobody: () => Promise<Page>;
   /** Watched pages must not write errors to the console nor ask any other host. */
   readonly watch: (page: Page) => void;
+}
+
+interface WorkerFixtures {
+  /** Sessions of people who have signed in before. */
+  readonly sessions: Map<Role, Session>;
 }
 
 /** The demo's first person of this role. */
@@ -22,10 +38,19 @@ export function personOf(role: Role): DemoPerson {
   return person;
 }
 
+const REFUSED = /^Failed to load resource: the server responded with a status of 4\d\d/;
+
+interface Watching {
+  readonly faults: string[];
+  readonly home: string;
+  readonly asksForRefusals: boolean;
+}
+
 /** What a page did that no page of ours may do; filled while it is used. */
-function watchPage(page: Page, faults: string[], home: string): void {
+function watchPage(page: Page, { faults, home, asksForRefusals }: Watching): void {
   page.on("console", (message) => {
-    if (message.type() === "error") faults.push(`console: ${message.text()} (${page.url()})`);
+    if (message.type() !== "error" || (asksForRefusals && REFUSED.test(message.text()))) return;
+    faults.push(`console: ${message.text()} (${page.url()})`);
   });
   page.on("pageerror", (error) => faults.push(`error: ${error.message} (${page.url()})`));
   page.on("request", (request) => {
@@ -34,12 +59,33 @@ function watchPage(page: Page, faults: string[], home: string): void {
   });
 }
 
-async function signInAs(page: Page, person: DemoPerson): Promise<void> {
-  await page.goto("/sign-in");
+/** Waits until the page's scripts have taken over what the server drew: from then on a press is heard. */
+export async function awake(page: Page): Promise<void> {
+  await page.waitForFunction(() =>
+    Object.keys(document.querySelector("main") ?? {}).some((name) => name.startsWith("__reactProps")),
+  );
+}
+
+/** Opens an address and waits until the page can be used. */
+export async function visit(page: Page, path: string): Promise<Response | null> {
+  const response = await page.goto(path);
+  await awake(page);
+  return response;
+}
+
+/** Fills the sign-in form and sends it. */
+export async function enter(page: Page, person: Pick<DemoPerson, "email" | "password">): Promise<void> {
   await page.getByLabel("E-mail address").fill(person.email);
-  await page.getByLabel("Password").fill(person.password);
+  await page.getByLabel("Password", { exact: true }).fill(person.password);
   await page.getByRole("button", { name: "Sign in" }).click();
+}
+
+/** Signs a page in and waits for the desk. */
+export async function signIn(page: Page, person: Pick<DemoPerson, "email" | "password">): Promise<void> {
+  await visit(page, "/sign-in");
+  await enter(page, person);
   await page.waitForURL((url) => !url.pathname.startsWith("/sign-in"));
+  await awake(page);
 }
 
 async function findSeriousViolations(page: Page): Promise<string[]> {
@@ -52,26 +98,44 @@ async function findSeriousViolations(page: Page): Promise<string[]> {
 }
 
 /** A browser test in which every page is watched; further pages are given to `watch`. */
-export const test = base.extend<DeskFixtures>({
-  watch: async ({ baseURL }, provide) => {
+export const test = base.extend<DeskOptions & DeskFixtures, WorkerFixtures>({
+  asksForRefusals: [false, { option: true }],
+  sessions: [
+    async ({ browser: _ }, provide) => {
+      await provide(new Map());
+    },
+    { scope: "worker" },
+  ],
+  watch: async ({ baseURL, asksForRefusals }, provide) => {
     const faults: string[] = [];
     const home = new URL(baseURL ?? "").host;
-    await provide((page) => watchPage(page, faults, home));
+    await provide((page) => watchPage(page, { faults, home, asksForRefusals }));
     expect(faults).toEqual([]);
   },
-  page: async ({ page, watch }, provide) => {
-    watch(page);
-    await provide(page);
-  },
-  signIn: async ({ page }, provide) => {
-    await provide(async (role, other = page) => {
-      const person = personOf(role);
-      await signInAs(other, person);
-      return person;
+  pageOfNobody: async ({ browser, watch }, provide) => {
+    await provide(async () => {
+      const page = await (await browser.newContext()).newPage();
+      watch(page);
+      return page;
     });
   },
-  expectAccessible: async ({ page }, provide) => {
-    await provide(async (other = page) => expect(await findSeriousViolations(other)).toEqual([]));
+  pageAs: async ({ browser, watch, sessions }, provide) => {
+    await provide(async (role, viewport) => {
+      const session = sessions.get(role);
+      const context = await browser.newContext({
+        ...(session ? { storageState: session } : {}),
+        ...(viewport ? { viewport } : {}),
+      });
+      const page = await context.newPage();
+      watch(page);
+      if (session) return page;
+      await signIn(page, personOf(role));
+      sessions.set(role, await context.storageState());
+      return page;
+    });
+  },
+  expectAccessible: async ({ page: own }, provide) => {
+    await provide(async (page = own) => expect(await findSeriousViolations(page)).toEqual([]));
   },
 });
 
