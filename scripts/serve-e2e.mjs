@@ -1,5 +1,6 @@
 import { openWorld, TEST_TSCONFIG } from "./lib/e2e-world.mjs";
 import { ensureHome, homeFolder } from "./lib/home.mjs";
+import { interruption } from "./lib/interruption.mjs";
 import { createProgress } from "./lib/progress.mjs";
 import { explain } from "./lib/trouble.mjs";
 import { undoAll } from "./lib/undo.mjs";
@@ -8,13 +9,10 @@ import { undoAll } from "./lib/undo.mjs";
  * Serves the desk of the end-to-end tests until it is told to stop: `npx playwright test` starts it by itself.
  * PORT says where.
  */
-const interrupt = new AbortController();
-const { signal } = interrupt;
+const signal = interruption();
 const progress = createProgress();
 const undo = [];
 const asked = new Promise((resolve) => signal.addEventListener("abort", resolve, { once: true }));
-
-for (const name of ["SIGINT", "SIGTERM", "SIGHUP"]) process.on(name, () => interrupt.abort());
 
 try {
   const env = { ...process.env, NEXT_TELEMETRY_DISABLED: "1", KEEPSTEP_TSCONFIG: TEST_TSCONFIG };

@@ -10,6 +10,7 @@ import { ensureTables, hasPeople, identifyDatabase, loadDemo } from "./lib/data.
 import { ensureDatabase, query } from "./lib/database.mjs";
 import { undoAll } from "./lib/undo.mjs";
 import { ensureHome, homeFolder, readJson, writeJson } from "./lib/home.mjs";
+import { interruption } from "./lib/interruption.mjs";
 import { takeLock } from "./lib/lock.mjs";
 import { startMailCatcher } from "./lib/mail-catcher.mjs";
 import { demandNode, ensureModules } from "./lib/modules.mjs";
@@ -25,15 +26,12 @@ const DATABASE = "keepstep";
 /** Where `--until` may end a start: for the tests of a start that goes wrong. */
 const STOPS = ["postgres", "modules", "database", "tables", "demo", "build", "mail"];
 
-const interrupt = new AbortController();
-const { signal } = interrupt;
+const signal = interruption();
 const progress = createProgress();
 /** How to undo what was started, in order; done backwards at the end, however it ends. */
 const undo = [];
 let doing = "starting";
 let served = false;
-
-for (const name of ["SIGINT", "SIGTERM", "SIGHUP"]) process.on(name, () => interrupt.abort());
 
 /** One step: shown while it runs; `what` completes the sentence "there was no space left while …". */
 async function step(title, what, work) {

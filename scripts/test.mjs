@@ -6,6 +6,7 @@ import { testCluster } from "./lib/cluster.mjs";
 import { countPlaywright, countVitest, total } from "./lib/counts.mjs";
 import { ensureChromium, openWorld, TEST_DIST_DIR, TEST_TSCONFIG } from "./lib/e2e-world.mjs";
 import { ensureHome, homeFolder, readJson, ROOT } from "./lib/home.mjs";
+import { interruption } from "./lib/interruption.mjs";
 import { takeLock } from "./lib/lock.mjs";
 import { demandNode, ensureModules } from "./lib/modules.mjs";
 import { pickPort } from "./lib/ports.mjs";
@@ -18,12 +19,9 @@ import { undoAll } from "./lib/undo.mjs";
 const PARTS = ["static", "unit", "build", "integration", "e2e"];
 const SHOWN_LINES = 80;
 
-const interrupt = new AbortController();
-const { signal } = interrupt;
+const signal = interruption();
 const progress = createProgress();
 const results = [];
-
-for (const name of ["SIGINT", "SIGTERM", "SIGHUP"]) process.on(name, () => interrupt.abort());
 
 const binary = (file) => path.join(ROOT, "node_modules", file);
 

@@ -27,7 +27,7 @@ async function buildWhereChanged({ distDir, say, signal, env }) {
     env: { ...env, NODE_ENV: "production", KEEPSTEP_DIST_DIR: distDir, KEEPSTEP_TYPES_PROVEN: "1" },
     signal,
     name: "next build",
-    onLine: (line) => /^[✓○] |\.\.\.$/.test(line) && say(`building, ${line.replace(/^[✓○] /, "")}`),
+    onLine: (line) => /\.\.\.$|^✓ Compiled/.test(line) && say(`building, ${line.replace(/^✓ /, "")}`),
   });
   writeFileSync(stamp, sources);
   say("built");

@@ -6,7 +6,7 @@ import { ROOT } from "./home.mjs";
 import { endChild } from "./run.mjs";
 import { Interrupted, lastLines, Trouble } from "./trouble.mjs";
 
-const READY_WITHIN_MS = 60_000;
+const READY_WITHIN_MS = 120_000;
 
 /**
  * Starts the built desk on 127.0.0.1 and waits until it says that it is well.

@@ -1,6 +1,6 @@
 import { chmodSync, cpSync, existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
-import { afterEach, beforeEach, describe, expect, test } from "vitest";
+import { afterEach, beforeEach, describe, expect, test, vi } from "vitest";
 import type { Ended } from "../support/start";
 import {
   fakePostgres,
@@ -10,11 +10,15 @@ import {
   processesOf,
   removeHome,
   ROOT,
+  startByNpm,
   startDesk,
 } from "../support/start";
 
 const FULL_DISK = path.join(ROOT, "tests/support/full-disk.mjs");
+const PATIENCE = { timeout: 60_000, interval: 200 };
 const NOBODY = 65_534;
+
+vi.setConfig({ testTimeout: 180_000, hookTimeout: 120_000 });
 
 let home: string;
 let port: string;
@@ -168,6 +172,22 @@ describe("another start", () => {
     expect(readFileSync(path.join(home, "cluster.json"), "utf8")).toBe(kept);
   });
 });
+
+test.each(["SIGTERM", "SIGINT", "SIGHUP", "SIGKILL"] as const)(
+  "all ends when the npm that runs it gets %s",
+  async (signal) => {
+    const env = {
+      KEEPSTEP_HOME: home,
+      PORT: port,
+      KEEPSTEP_POSTGRES_HOME: fakePostgres(home, "exec sleep 60"),
+    };
+    const npm = startByNpm(env, ["--until=database"]);
+    await npm.said("Node modules");
+    await vi.waitFor(() => expect(processesOf(home).join()).toContain("sleep"), PATIENCE);
+    npm.child.kill(signal);
+    await vi.waitFor(() => expect(processesOf(home)).toEqual([]), PATIENCE);
+  },
+);
 
 describe("a given DATABASE_URL", () => {
   test("is used, and no cluster is made", async () => {

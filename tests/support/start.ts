@@ -7,7 +7,7 @@ import path from "node:path";
 import { setTimeout as delay } from "node:timers/promises";
 
 export const ROOT = path.resolve(__dirname, "../..");
-const TEST_ONLY = /^(DATABASE_URL|SMTP_URL|NEXTAUTH_|VITEST|NODE_ENV|NODE_OPTIONS|PORT$|TZ$)/;
+const TEST_ONLY = /^(DATABASE_URL|SMTP_URL|NEXTAUTH_|npm_|VITEST|NODE_ENV|NODE_OPTIONS|PORT$|TZ$)/;
 
 export interface Ended {
   readonly code: number | null;
@@ -48,11 +48,17 @@ export function startDesk(
   { args = [], root = ROOT, ...options }: SpawnOptions & { args?: readonly string[]; root?: string } = {},
 ): Started {
   const script = path.join(root, "scripts/start.mjs");
-  const child = spawn(process.execPath, [script, ...args], {
-    cwd: root,
-    env: cleanEnvironment(env),
-    ...options,
-  });
+  return watch(
+    spawn(process.execPath, [script, ...args], { cwd: root, env: cleanEnvironment(env), ...options }),
+  );
+}
+
+/** Runs `npm start`, as a person does. */
+export function startByNpm(env: Readonly<Record<string, string>>, args: readonly string[]): Started {
+  return watch(spawn("npm", ["start", "--", ...args], { cwd: ROOT, env: cleanEnvironment(env) }));
+}
+
+function watch(child: ChildProcess): Started {
   let output = "";
   let sentence = "";
   child.stdout?.setEncoding("utf8").on("data", (chunk: string) => (output += chunk));
