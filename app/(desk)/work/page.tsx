@@ -18,7 +18,7 @@ export default async function WorkPage({ searchParams }: { readonly searchParams
   const context = await pageActor("changes.read");
   const { query: asked, typed, errors } = await readParams(query, searchParams);
   const steps = await load(listSteps(context, asked));
-  const sites = await load(listSites(context));
+  const { items: sites } = await load(listSites(context, { retired: "no" }));
   const filtered = Object.keys(typed).length > 0;
   return (
     <Sheet>
