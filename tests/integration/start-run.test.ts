@@ -73,67 +73,51 @@ afterEach(async () => {
 
 afterAll(() => removeHome(home));
 
-test(
-  "the first start serves the demo fleet, prints a sign-in for each role, and ends whole on Ctrl-C",
-  async () => {
-    const started = await start();
-    expect((await ask("health")).status).toBe(200);
-    token = makeToken();
-    expect(token).toMatch(/^ks_[\w-]{20,}$/);
-    expect(await machinesByToken()).toBe(200);
-    await stop(started, "SIGINT");
-    const { output } = await started.ended;
-    for (const { role, email, password } of demoPeople())
-      expect(output).toMatch(new RegExp(`${role}\\s+${email}\\s+${password}`));
-  },
-  LONG_MS,
-);
+test("the first start serves the demo fleet, prints a sign-in for each role, and ends whole on Ctrl-C", async () => {
+  const started = await start();
+  expect((await ask("health")).status).toBe(200);
+  token = makeToken();
+  expect(token).toMatch(/^ks_[\w-]{20,}$/);
+  expect(await machinesByToken()).toBe(200);
+  await stop(started, "SIGINT");
+  const { output } = await started.ended;
+  for (const { role, email, password } of demoPeople())
+    expect(output).toMatch(new RegExp(`${role}\\s+${email}\\s+${password}`));
+});
 
 test("a token can be made while the desk stands still, and nothing is left running", () => {
   expect(makeToken()).toMatch(/^ks_/);
   expect(processesOf(home)).toEqual([]);
 });
 
-test(
-  "the next start takes seconds, keeps all data, and loads the demo no second time",
-  async () => {
-    const from = Date.now();
-    const started = await start();
-    expect(Date.now() - from).toBeLessThan(60_000);
-    expect(await machinesByToken()).toBe(200);
-    await stop(started, "SIGTERM");
-    const { output } = await started.ended;
-    expect(output).toContain("Demo fleet: loaded before");
-    expect(output).toContain("Tables: up to date");
-    expect(output).toContain("Desk: up to date");
-  },
-  LONG_MS,
-);
+test("the next start takes seconds, keeps all data, and loads the demo no second time", async () => {
+  const from = Date.now();
+  const started = await start();
+  expect(Date.now() - from).toBeLessThan(60_000);
+  expect(await machinesByToken()).toBe(200);
+  await stop(started, "SIGTERM");
+  const { output } = await started.ended;
+  expect(output).toContain("Demo fleet: loaded before");
+  expect(output).toContain("Tables: up to date");
+  expect(output).toContain("Desk: up to date");
+});
 
-test(
-  "a start after one that was killed ends what that one left, and serves again",
-  async () => {
-    const killed = await start();
-    killed.child.kill("SIGKILL");
-    await killed.ended;
-    expect(processesOf(home)).not.toEqual([]);
-    const started = await start();
-    expect(await machinesByToken()).toBe(200);
-    await stop(started, "SIGTERM");
-  },
-  LONG_MS,
-);
+test("a start after one that was killed ends what that one left, and serves again", async () => {
+  const killed = await start();
+  killed.child.kill("SIGKILL");
+  await killed.ended;
+  expect(processesOf(home)).not.toEqual([]);
+  const started = await start();
+  expect(await machinesByToken()).toBe(200);
+  await stop(started, "SIGTERM");
+});
 
-test(
-  "a server that ends by itself is told, and everything else is ended",
-  async () => {
-    const started = await start();
-    const server = /Server: process (\d+)/.exec(started.output())?.[1];
-    process.kill(Number(server), "SIGKILL");
-    const { code, sentence } = await started.ended;
-    expect(code).toBe(1);
-    expect(sentence).toMatch(/^Keepstep stopped\. The server ended by itself \(SIGKILL\)/);
-    expect(processesOf(home)).toEqual([]);
-  },
-  LONG_MS,
-);
+test("a server that ends by itself is told, and everything else is ended", async () => {
+  const started = await start();
+  const server = /Server: process (\d+)/.exec(started.output())?.[1];
+  process.kill(Number(server), "SIGKILL");
+  const { code, sentence } = await started.ended;
+  expect(code).toBe(1);
+  expect(sentence).toMatch(/^Keepstep stopped\. The server ended by itself \(SIGKILL\)/);
+  expect(processesOf(home)).toEqual([]);
+});
