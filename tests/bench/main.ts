@@ -1,5 +1,6 @@
 import { runCheckBench } from "./check";
 import { runParseBench } from "./parse";
+import { runRulesBench } from "./rules";
 
 /** Prints what was measured on this machine. */
-for (const line of [...runParseBench(), ...runCheckBench()]) console.log(line);
+for (const line of [...runParseBench(), ...runRulesBench(), ...runCheckBench()]) console.log(line);
