@@ -1,4 +1,5 @@
 import { loader } from "@monaco-editor/react";
+import type * as Monaco from "monaco-editor";
 import * as monaco from "monaco-editor/editor.js";
 import "monaco-editor/features/register.all.js";
 
@@ -9,7 +10,7 @@ self.MonacoEnvironment = {
 };
 
 // The trimmed entry has the same shape as the full one, which the loader's types name.
-loader.config({ monaco: monaco as unknown as typeof import("monaco-editor") });
+loader.config({ monaco: monaco as unknown as typeof Monaco });
 
 function variable(name: string): string {
   return getComputedStyle(document.documentElement).getPropertyValue(name).trim();
