@@ -49,9 +49,11 @@ export function SignInForm({ next }: { readonly next: string }) {
   return (
     <form id={FORM_ID} onSubmit={(event) => void submit(event)}>
       {refusal !== null && (
-        <Notice title="Not signed in" live="alert">
-          <p>{refusal}</p>
-        </Notice>
+        <div className="mb-4">
+          <Notice title="Not signed in" live="alert">
+            <p>{refusal}</p>
+          </Notice>
+        </div>
       )}
       <TextField
         label="E-mail address"

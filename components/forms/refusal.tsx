@@ -5,8 +5,10 @@ import { Notice } from "@/components/ui/notice";
 export function Refusal({ error, title = "Not done" }: { readonly error: unknown; readonly title?: string }) {
   if (error === null || error === undefined) return null;
   return (
-    <Notice title={title} live="alert">
-      <p>{sentenceOf(error)}</p>
-    </Notice>
+    <div className="my-4">
+      <Notice title={title} live="alert">
+        <p>{sentenceOf(error)}</p>
+      </Notice>
+    </div>
   );
 }

@@ -12,7 +12,7 @@ export function VerifyChain() {
   const verify = useMutation({ mutationFn: () => apiCall<ChainVerdictView>("GET", "/record/verify") });
   return (
     <>
-      <div className="acts">
+      <div className="acts my-4">
         <Button busy={verify.isPending} onClick={() => verify.mutate()}>
           Verify the chain
         </Button>

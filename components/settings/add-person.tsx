@@ -5,10 +5,10 @@ import { useRouter } from "next/navigation";
 import { useForm, type FieldErrors, type UseFormRegister } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
-import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
-import { ButtonLink } from "@/components/ui/button";
+import { Button, ButtonLink } from "@/components/ui/button";
 import { createUserSchema, type CreateUser, type UserView } from "@/lib/schemas/people";
 import { PasswordField } from "./password-field";
 import { PersonFields, type SiteChoice, type TypedPerson } from "./person-fields";
@@ -30,7 +30,7 @@ export function AddPerson({ sites }: { readonly sites: readonly SiteChoice[] }) 
   });
   const { errors } = form.formState;
   return (
-    <form noValidate onSubmit={(event) => void form.handleSubmit((values) => save.mutate(values))(event)}>
+    <Form onSubmit={form.handleSubmit((values) => save.mutate(values))}>
       <PersonFields
         register={form.register as unknown as UseFormRegister<TypedPerson>}
         errors={errors as FieldErrors<TypedPerson>}
@@ -44,9 +44,11 @@ export function AddPerson({ sites }: { readonly sites: readonly SiteChoice[] }) 
       />
       <Refusal error={save.error} title="Not added" />
       <div className="acts">
-        <SubmitButton busy={save.isPending}>Add the person</SubmitButton>
+        <Button type="submit" variant="primary" busy={save.isPending}>
+          Add the person
+        </Button>
         <ButtonLink href="/settings/people">Leave it</ButtonLink>
       </div>
-    </form>
+    </Form>
   );
 }

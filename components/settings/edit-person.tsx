@@ -4,9 +4,10 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
-import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
+import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
 import { updateUserSchema, type UpdateUser, type UserView } from "@/lib/schemas/people";
 import { PersonFields, type SiteChoice, type TypedPerson } from "./person-fields";
@@ -31,7 +32,7 @@ export function EditPerson({ person, sites }: EditPersonProps) {
     send: (body: UpdateUser) => apiCall<UserView>("PUT", `/users/${person.id}`, { body }),
   });
   return (
-    <form noValidate onSubmit={(event) => void form.handleSubmit((values) => save.mutate(values))(event)}>
+    <Form onSubmit={form.handleSubmit((values) => save.mutate(values))}>
       <PersonFields register={form.register} errors={form.formState.errors} sites={sites} />
       <Refusal error={save.error} title="Not saved" />
       {save.isSuccess && (
@@ -40,8 +41,10 @@ export function EditPerson({ person, sites }: EditPersonProps) {
         </Notice>
       )}
       <div className="acts">
-        <SubmitButton busy={save.isPending}>Save</SubmitButton>
+        <Button type="submit" variant="primary" busy={save.isPending}>
+          Save
+        </Button>
       </div>
-    </form>
+    </Form>
   );
 }

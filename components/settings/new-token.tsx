@@ -4,9 +4,10 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm, useWatch } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
-import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
+import { Button } from "@/components/ui/button";
 import { CheckboxField, SelectField, TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { ROLE_WORDS, SCOPE_WORDS } from "@/lib/domain/role-words";
@@ -39,7 +40,7 @@ export function NewTokenForm() {
   const role = useWatch({ control: form.control, name: "role" });
   const { errors } = form.formState;
   return (
-    <form noValidate onSubmit={(event) => void form.handleSubmit((values) => save.mutate(values))(event)}>
+    <Form onSubmit={form.handleSubmit((values) => save.mutate(values))}>
       <TextField
         label="Name"
         help="Which script it is for, and on which machine."
@@ -66,9 +67,11 @@ export function NewTokenForm() {
       <Refusal error={save.error} title="No token made" />
       {save.data && <TokenOnce made={save.data} />}
       <div className="acts">
-        <SubmitButton busy={save.isPending}>Make the token</SubmitButton>
+        <Button type="submit" variant="primary" busy={save.isPending}>
+          Make the token
+        </Button>
       </div>
-    </form>
+    </Form>
   );
 }
 

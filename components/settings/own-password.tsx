@@ -3,9 +3,10 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { apiCall } from "@/components/api";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
-import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
+import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { PASSWORD_MIN } from "@/lib/domain/password";
@@ -25,7 +26,7 @@ export function OwnPasswordForm({ email }: { readonly email: string }) {
   });
   const { errors } = form.formState;
   return (
-    <form noValidate onSubmit={(event) => void form.handleSubmit((values) => save.mutate(values))(event)}>
+    <Form onSubmit={form.handleSubmit((values) => save.mutate(values))}>
       <input type="email" autoComplete="username" value={email} readOnly hidden />
       <TextField
         label="Password you have now"
@@ -47,8 +48,10 @@ export function OwnPasswordForm({ email }: { readonly email: string }) {
         </Notice>
       )}
       <div className="acts">
-        <SubmitButton busy={save.isPending}>Change my password</SubmitButton>
+        <Button type="submit" variant="primary" busy={save.isPending}>
+          Change my password
+        </Button>
       </div>
-    </form>
+    </Form>
   );
 }

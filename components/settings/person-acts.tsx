@@ -4,9 +4,10 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { apiCall } from "@/components/api";
 import { ActButton } from "@/components/forms/act-button";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
-import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
+import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import {
@@ -52,7 +53,7 @@ export function ResetPasswordForm({ person }: { readonly person: Pick<UserView, 
   });
   const { errors } = form.formState;
   return (
-    <form noValidate onSubmit={(event) => void form.handleSubmit((values) => save.mutate(values))(event)}>
+    <Form onSubmit={form.handleSubmit((values) => save.mutate(values))}>
       <PasswordField label="New password" error={errors.password?.message} {...form.register("password")} />
       <TextField
         label="Reason"
@@ -70,10 +71,10 @@ export function ResetPasswordForm({ person }: { readonly person: Pick<UserView, 
         </Notice>
       )}
       <div className="acts">
-        <SubmitButton variant="plain" busy={save.isPending}>
+        <Button type="submit" busy={save.isPending}>
           Give a new password
-        </SubmitButton>
+        </Button>
       </div>
-    </form>
+    </Form>
   );
 }

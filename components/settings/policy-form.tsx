@@ -4,9 +4,10 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
-import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
+import { Button } from "@/components/ui/button";
 import { FieldGroup, TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { savePolicySchema, type PolicyVersionView } from "@/lib/schemas/policies";
@@ -59,7 +60,7 @@ export function PolicyForm({ current }: { readonly current: PolicyVersionView })
     />
   );
   return (
-    <form noValidate onSubmit={(event) => void form.handleSubmit((values) => save.mutate(values))(event)}>
+    <Form onSubmit={form.handleSubmit((values) => save.mutate(values))}>
       <FieldGroup legend="Margins">
         {field("torque_margin_below_limit_speed")}
         {field("torque_margin_above_limit_speed")}
@@ -79,8 +80,10 @@ export function PolicyForm({ current }: { readonly current: PolicyVersionView })
         </Notice>
       )}
       <div className="acts">
-        <SubmitButton busy={save.isPending}>Save as a new version</SubmitButton>
+        <Button type="submit" variant="primary" busy={save.isPending}>
+          Save as a new version
+        </Button>
       </div>
-    </form>
+    </Form>
   );
 }

@@ -5,10 +5,10 @@ import { useRouter } from "next/navigation";
 import { useForm } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
-import { SubmitButton } from "@/components/forms/submit-button";
 import { useSave } from "@/components/forms/use-save";
-import { ButtonLink } from "@/components/ui/button";
+import { Button, ButtonLink } from "@/components/ui/button";
 import { TextField } from "@/components/ui/field";
 import { createSiteSchema, type SiteView } from "@/lib/schemas/sites";
 import { typedNumber } from "@/lib/schemas/typed-field";
@@ -44,7 +44,7 @@ export function SiteForm({ site }: { readonly site: SiteView | null }) {
   });
   const { errors } = form.formState;
   return (
-    <form noValidate onSubmit={(event) => void form.handleSubmit((values) => save.mutate(values))(event)}>
+    <Form onSubmit={form.handleSubmit((values) => save.mutate(values))}>
       <TextField
         label="Code"
         help={site ? "A code stays as it is." : "Short, as on drawings and labels."}
@@ -66,9 +66,11 @@ export function SiteForm({ site }: { readonly site: SiteView | null }) {
       />
       <Refusal error={save.error} title="Not saved" />
       <div className="acts">
-        <SubmitButton busy={save.isPending}>{site ? "Save" : "Add the site"}</SubmitButton>
+        <Button type="submit" variant="primary" busy={save.isPending}>
+          {site ? "Save" : "Add the site"}
+        </Button>
         <ButtonLink href="/settings/sites">Leave it</ButtonLink>
       </div>
-    </form>
+    </Form>
   );
 }

@@ -46,7 +46,7 @@ export default async function RecordPage({ searchParams }: { readonly searchPara
         identificationNumber={newest ? `to no. ${newest.seq}` : "–"}
         revision="–"
         sheet={`${query.page} of ${Math.max(1, Math.ceil(found.total / found.pageSize))}`}
-        dateOfIssue={<DateTime value={context.now.toISOString()} />}
+        dateOfIssue={<DateTime value={context.now.toISOString()} dateOnly />}
         creator={context.actor.name}
         status="append-only"
         approvedBy="–"
