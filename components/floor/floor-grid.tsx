@@ -64,11 +64,13 @@ function Head({ columns, layout }: { columns: readonly FloorColumn[]; layout: Fl
             key={column.key}
             role="columnheader"
             aria-colindex={LEADING_COLUMNS + index + 1}
-            aria-label={columnWords(column)}
             title={columnWords(column)}
             className={layout.opens.has(index) ? "floor-slant floor-cell-opens" : "floor-slant"}
           >
-            <span aria-hidden="true">{column.short}</span>
+            <span className="visually-hidden">{columnWords(column)}</span>
+            <span className="floor-slant-word" aria-hidden="true">
+              {column.short}
+            </span>
           </div>
         ))}
       </div>

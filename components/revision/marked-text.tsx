@@ -29,6 +29,8 @@ export interface MarkedTextProps {
 
 /** Lines in one block: blocks out of sight cost no layout. */
 const BLOCK = 200;
+/** Pixels of a line, as the style sheet has it. */
+const LINE = 24;
 
 function marksByLine(marks: readonly LineMark[]): Map<number, LineMark[]> {
   const byLine = new Map<number, LineMark[]>();
@@ -46,6 +48,16 @@ function Margin({ marks, letters }: { marks: readonly LineMark[] | undefined; le
   );
 }
 
+/** A marked line's number is a link to it, for passing on; the others are plain, so that Tab goes from mark to mark. */
+function LineNumber({ number, id }: { number: number; id: string | null }) {
+  if (id === null) return <span className="line-number">{number}</span>;
+  return (
+    <a className="line-number" href={`#${id}`} aria-label={`line ${number}`}>
+      {number}
+    </a>
+  );
+}
+
 /** A configuration text with line numbers, addresses (#L12) and a level mark at each line that a finding rests on. */
 export function MarkedText({ text, path, index = 0, marks = [], letters = {}, notes = {} }: MarkedTextProps) {
   const lines = splitLines(text).map(withoutLineEnd);
@@ -56,7 +68,7 @@ export function MarkedText({ text, path, index = 0, marks = [], letters = {}, no
     <div className="code-sheet" role="group" aria-label={`Text of ${path}`} style={widest}>
       {blocks.map((start) => {
         const block = lines.slice(start, start + BLOCK);
-        const height = { containIntrinsicBlockSize: `auto ${block.length * 22}px` };
+        const height = { containIntrinsicBlockSize: `auto ${block.length * LINE}px` };
         return (
           <ol key={start} className="code-lines code-block" start={start + 1} style={height}>
             {block.map((line, offset) => {
@@ -64,9 +76,7 @@ export function MarkedText({ text, path, index = 0, marks = [], letters = {}, no
               return (
                 <li key={number} id={lineId(index, number)} className="code-line">
                   <Margin marks={byLine.get(number)} letters={letters[number] ?? []} />
-                  <a className="line-number" href={`#${lineId(index, number)}`} aria-label={`line ${number}`}>
-                    {number}
-                  </a>
+                  <LineNumber number={number} id={byLine.has(number) ? lineId(index, number) : null} />
                   <span className="line-text">
                     <CodeText text={line} />
                   </span>
