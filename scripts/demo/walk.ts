@@ -16,11 +16,11 @@ export interface Walk {
   readonly now: Date;
 }
 
-export type Draft = Parameters<typeof createChange>[1];
+export type Draft = Omit<Parameters<typeof createChange>[1], "note">;
 
 /** Drafts a change on a day before now. */
 export function draft({ people, now }: Walk, daysAgo: number, change: Draft): Promise<ChangeBrief> {
-  return createChange(at(people.engineer.actor, now, daysAgo), change);
+  return createChange(at(people.engineer.actor, now, daysAgo), { ...change, note: "" });
 }
 
 export async function submit({ people, now }: Walk, daysAgo: number, id: string): Promise<void> {
