@@ -7,7 +7,7 @@ import type { CheckInput } from "@/lib/review/types";
 
 const AXES = ["x", "y", "z", "a", "b"];
 const KEYS = 400;
-const WARM_UP = 50;
+const WARM_UP = 300;
 const RUNS = 200;
 
 /** Known keys of one axis: key, value, rule. */
@@ -102,6 +102,7 @@ function keyTable(): KeyTable {
 }
 
 interface Timing {
+  readonly fastest: number;
   readonly median: number;
   readonly p95: number;
 }
@@ -120,7 +121,12 @@ function timings(one: () => unknown, other: () => unknown): [Timing, Timing] {
 
 function summary(times: readonly number[]): Timing {
   const sorted = [...times].sort((a, b) => a - b);
-  return { median: sorted[Math.floor(RUNS / 2)] ?? NaN, p95: sorted[Math.floor(RUNS * 0.95)] ?? NaN };
+  const at = (share: number): number => sorted[Math.floor(RUNS * share)] ?? NaN;
+  return { fastest: at(0), median: at(0.5), p95: at(0.95) };
+}
+
+function words({ median, p95, fastest }: Timing): string {
+  return `median ${median.toFixed(2)} ms, p95 ${p95.toFixed(2)} ms, fastest ${fastest.toFixed(2)} ms`;
 }
 
 /** Text → findings for a 5-axis, 400-key text beside the time that the package `yaml` takes just to parse the same content. */
@@ -137,10 +143,11 @@ export function runCheckBench(): string[] {
     () => checkConfiguration(input),
     () => parse(yaml),
   );
+  const share = (check.median / parsed.median).toFixed(2);
+  const fastest = (check.fastest / parsed.fastest).toFixed(2);
   return [
-    `text → findings, ${AXES.length} axes, ${report.documents[0]?.entries ?? 0} keys, ${report.findings.length} findings: ` +
-      `median ${check.median.toFixed(2)} ms, p95 ${check.p95.toFixed(2)} ms`,
-    `yaml, parsing the same content only: median ${parsed.median.toFixed(2)} ms, p95 ${parsed.p95.toFixed(2)} ms`,
-    `share of the time of yaml: ${(check.median / parsed.median).toFixed(2)} (aim: 0.20)`,
+    `text → findings, ${AXES.length} axes, ${report.documents[0]?.entries ?? 0} keys, ${report.findings.length} findings: ${words(check)}`,
+    `yaml, parsing the same content only: ${words(parsed)}`,
+    `share of the time of yaml: ${share}, of the fastest runs ${fastest} (aim: 0.20)`,
   ];
 }
