@@ -210,43 +210,50 @@ function viaFactor(unit: Unit, written: string, context: UnitContext): Conversio
   return { ok: true, value: unit.factor };
 }
 
+/** By kind of axis. */
+const INSIDE: Readonly<Record<Dimension, Readonly<Record<AxisKind, string>>>> = {
+  current: { linear: "A", rotary: "A" },
+  voltage: { linear: "V", rotary: "V" },
+  resistance: { linear: "Ω", rotary: "Ω" },
+  length: { linear: "m", rotary: "rad" },
+  speed: { linear: "m/s", rotary: "rad/s" },
+  acceleration: { linear: "m/s²", rotary: "rad/s²" },
+  jerk: { linear: "m/s³", rotary: "rad/s³" },
+  scale: { linear: "1/mm", rotary: "1/deg" },
+  time: { linear: "s", rotary: "s" },
+  frequency: { linear: "Hz", rotary: "Hz" },
+  count: { linear: "", rotary: "" },
+  boolean: { linear: "", rotary: "" },
+  torque: { linear: "N·m", rotary: "N·m" },
+  inertia: { linear: "kg·m²", rotary: "kg·m²" },
+  inductance: { linear: "H", rotary: "H" },
+  share: { linear: "%", rotary: "%" },
+};
+
 /** Unit in which a dimension is kept inside; the scale is 1/mm or 1/deg, everything else SI. */
 export function insideUnit(dimension: Dimension, kind: AxisKind): string {
-  const linear = kind === "linear";
-  const INSIDE: Record<Dimension, string> = {
-    current: "A",
-    voltage: "V",
-    resistance: "Ω",
-    length: linear ? "m" : "rad",
-    speed: linear ? "m/s" : "rad/s",
-    acceleration: linear ? "m/s²" : "rad/s²",
-    jerk: linear ? "m/s³" : "rad/s³",
-    scale: linear ? "1/mm" : "1/deg",
-    time: "s",
-    frequency: "Hz",
-    count: "",
-    boolean: "",
-    torque: "N·m",
-    inertia: "kg·m²",
-    inductance: "H",
-    share: "%",
-  };
-  return INSIDE[dimension];
+  return INSIDE[dimension][kind];
 }
 
+interface Shown {
+  readonly unit: string;
+  readonly factor: number;
+}
+
+const SHOWN: ReadonlyMap<string, Shown> = new Map([
+  ["m/s", { unit: "mm/s", factor: 1e3 }],
+  ["m/s²", { unit: "mm/s²", factor: 1e3 }],
+  ["m/s³", { unit: "mm/s³", factor: 1e3 }],
+  ["m", { unit: "mm", factor: 1e3 }],
+  ["rad", { unit: "deg", factor: 1 / DEG }],
+  ["rad/s", { unit: "deg/s", factor: 1 / DEG }],
+  ["rad/s²", { unit: "deg/s²", factor: 1 / DEG }],
+  ["rad/s³", { unit: "deg/s³", factor: 1 / DEG }],
+]);
+
 /** The unit that people on the floor read: mm/s rather than m/s. Returns the factor from inside to shown. */
-export function shownUnit(unit: string): { readonly unit: string; readonly factor: number } {
-  const SHOWN: Record<string, { unit: string; factor: number }> = {
-    "m/s": { unit: "mm/s", factor: 1e3 },
-    "m/s²": { unit: "mm/s²", factor: 1e3 },
-    "m/s³": { unit: "mm/s³", factor: 1e3 },
-    m: { unit: "mm", factor: 1e3 },
-    rad: { unit: "deg", factor: 1 / DEG },
-    "rad/s": { unit: "deg/s", factor: 1 / DEG },
-    "rad/s²": { unit: "deg/s²", factor: 1 / DEG },
-    "rad/s³": { unit: "deg/s³", factor: 1 / DEG },
-  };
-  return SHOWN[unit] ?? { unit, factor: 1 };
+export function shownUnit(unit: string): Shown {
+  return SHOWN.get(unit) ?? { unit, factor: 1 };
 }
 
 /** A number to at most `digits` significant digits, without exponent in the usual range and without trailing zeros. */
@@ -261,8 +268,12 @@ export function formatNumber(value: number, digits = 3): string {
     : trimZeros(value.toFixed(Math.min(decimals, 12)));
 }
 
+/** Without the zeros that end a fraction, and without its point where nothing is left of it. */
 function trimZeros(text: string): string {
-  return text.includes(".") ? text.replace(/\.?0+$/, "") : text;
+  if (!text.includes(".")) return text;
+  let end = text.length;
+  while (text.charAt(end - 1) === "0") end--;
+  return text.slice(0, text.charAt(end - 1) === "." ? end - 1 : end);
 }
 
 const SMALLER: Record<string, readonly [number, string][]> = {

@@ -18,8 +18,8 @@ export interface CompiledTable {
   readonly elements: ReadonlyMap<string, readonly Target[]>;
   /** Keys whose elements some rule names, with `true` where one does so by `{axis}`. */
   readonly lists: ReadonlyMap<string, boolean>;
-  /** Rules with `{axis}` as the text before and after it, to recognise axes that the machine does not have. */
-  readonly patterns: readonly { readonly before: string; readonly after: string }[];
+  /** Rules with `{axis}` as the texts after it by the text before it, to recognise axes that the machine does not have. */
+  readonly patterns: ReadonlyMap<string, ReadonlySet<string>>;
 }
 
 const AXIS = "{axis}";
@@ -38,11 +38,11 @@ export function compileTable({
   const keys = new Map<string, Target[]>();
   const elements = new Map<string, Target[]>();
   const lists = new Map<string, boolean>();
-  const patterns: { before: string; after: string }[] = [];
+  const patterns = new Map<string, Set<string>>();
   for (const rule of keyTable.rules) {
     if (rule.layer && layer && rule.layer !== layer) continue;
     const key = rule.key.toLowerCase();
-    if (key.includes(AXIS)) patterns.push(patternOf(key));
+    notePattern(patterns, key);
     for (const [name, target] of expand(rule, key, axes)) add(keys, name, target);
     for (const [name, target] of expandElements(rule, key, axes)) add(elements, name, target);
     noteList(lists, key);
@@ -60,9 +60,14 @@ function sameTarget(one: Target, other: Target): boolean {
   return one.axis === other.axis && one.rule.parameter === other.rule.parameter && !one.fault && !other.fault;
 }
 
-function patternOf(key: string): { before: string; after: string } {
+function notePattern(patterns: Map<string, Set<string>>, key: string): void {
   const at = key.indexOf(AXIS);
-  return { before: key.slice(0, at), after: key.slice(at + AXIS.length) };
+  if (at < 0) return;
+  const before = key.slice(0, at);
+  const after = key.slice(at + AXIS.length);
+  const known = patterns.get(before);
+  if (known) known.add(after);
+  else patterns.set(before, new Set([after]));
 }
 
 function expand(rule: KeyRule, key: string, axes: readonly AxisShape[]): [string, Target][] {

@@ -189,6 +189,7 @@ function reportFault(found: Found, { target, key, span, file }: Place): void {
 /** So many unmapped keys are looked at for axes that the machine does not have. */
 const MOST_UNKNOWN = 500;
 const AXIS_NAME = /^[a-z]\d?$/;
+const LONGEST_AXIS_NAME = 2;
 
 /** One sentence for each short axis name that the key table's patterns find in the text and the machine lacks. */
 function reportUnknownAxes({ table, unmapped, axes, diagnostics }: Found): void {
@@ -209,10 +210,13 @@ function reportUnknownAxes({ table, unmapped, axes, diagnostics }: Found): void 
 }
 
 function axisByPattern(key: string, { patterns }: CompiledTable): string | null {
-  for (const { before, after } of patterns) {
-    if (!key.startsWith(before) || !key.endsWith(after)) continue;
-    const name = key.slice(before.length, key.length - after.length);
-    if (AXIS_NAME.test(name)) return name;
+  for (const [before, afters] of patterns) {
+    if (!key.startsWith(before)) continue;
+    for (let length = 1; length <= LONGEST_AXIS_NAME; length++) {
+      const end = before.length + length;
+      const name = key.slice(before.length, end);
+      if (AXIS_NAME.test(name) && afters.has(key.slice(end))) return name;
+    }
   }
   return null;
 }
