@@ -4,11 +4,11 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
+import { Done } from "@/components/forms/done";
 import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { useSave } from "@/components/forms/use-save";
 import { Button } from "@/components/ui/button";
-import { Notice } from "@/components/ui/notice";
 import { updateUserSchema, type UpdateUser, type UserView } from "@/lib/schemas/people";
 import { PersonFields, type SiteChoice, type TypedPerson } from "./person-fields";
 
@@ -36,9 +36,9 @@ export function EditPerson({ person, sites }: EditPersonProps) {
       <PersonFields register={form.register} errors={form.formState.errors} sites={sites} />
       <Refusal error={save.error} title="Not saved" />
       {save.isSuccess && (
-        <Notice live="status">
+        <Done>
           <p>Saved. A changed role counts from the person’s next click on.</p>
-        </Notice>
+        </Done>
       )}
       <div className="acts">
         <Button type="submit" variant="primary" busy={save.isPending}>

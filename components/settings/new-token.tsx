@@ -4,12 +4,12 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm, useWatch } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
+import { Done } from "@/components/forms/done";
 import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { useSave } from "@/components/forms/use-save";
 import { Button } from "@/components/ui/button";
 import { CheckboxField, SelectField, TextField } from "@/components/ui/field";
-import { Notice } from "@/components/ui/notice";
 import { ROLE_WORDS, SCOPE_WORDS } from "@/lib/domain/role-words";
 import { ROLES, SCOPES, scopeSchema, type Role, type Scope } from "@/lib/domain/roles";
 import { scopesOf } from "@/lib/policies/scopes";
@@ -102,7 +102,7 @@ function ScopeFields({ role, error, register }: ScopeFieldsProps) {
 
 function TokenOnce({ made }: { readonly made: NewToken }) {
   return (
-    <Notice title={`The token ${made.name}`} live="status">
+    <Done title={`The token ${made.name}`}>
       <p>Copy it now: it is shown this once, and only its hash is kept.</p>
       <p>
         <code className="code break-all">{made.token}</code>
@@ -110,6 +110,6 @@ function TokenOnce({ made }: { readonly made: NewToken }) {
       <p>
         Scopes: {made.scopes.join(", ")}. It goes out as <code className="code">Authorization: Bearer</code>.
       </p>
-    </Notice>
+    </Done>
   );
 }

@@ -3,12 +3,12 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { apiCall } from "@/components/api";
+import { Done } from "@/components/forms/done";
 import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { useSave } from "@/components/forms/use-save";
 import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/field";
-import { Notice } from "@/components/ui/notice";
 import { PASSWORD_MIN } from "@/lib/domain/password";
 import { changePasswordSchema, type ChangePassword, type EndedSessions } from "@/lib/schemas/people";
 import { PasswordField } from "./password-field";
@@ -43,9 +43,9 @@ export function OwnPasswordForm({ email }: { readonly email: string }) {
       />
       <Refusal error={save.error} title="Not changed" />
       {save.data && (
-        <Notice live="status">
+        <Done>
           <p>Your password is changed. Other sessions of yours that were ended: {save.data.endedSessions}.</p>
-        </Notice>
+        </Done>
       )}
       <div className="acts">
         <Button type="submit" variant="primary" busy={save.isPending}>

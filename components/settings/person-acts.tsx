@@ -4,12 +4,12 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { apiCall } from "@/components/api";
 import { ActButton } from "@/components/forms/act-button";
+import { Done } from "@/components/forms/done";
 import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { useSave } from "@/components/forms/use-save";
 import { Button } from "@/components/ui/button";
 import { TextField } from "@/components/ui/field";
-import { Notice } from "@/components/ui/notice";
 import {
   resetPasswordSchema,
   type EndedSessions,
@@ -63,12 +63,12 @@ export function ResetPasswordForm({ person }: { readonly person: Pick<UserView, 
       />
       <Refusal error={save.error} title="Not changed" />
       {save.data && (
-        <Notice live="status">
+        <Done>
           <p>
             The password is changed. Sessions ended: {save.data.endedSessions}. Give {person.name} the new
             password by a safe way.
           </p>
-        </Notice>
+        </Done>
       )}
       <div className="acts">
         <Button type="submit" busy={save.isPending}>

@@ -4,12 +4,12 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { z } from "zod";
 import { apiCall } from "@/components/api";
+import { Done } from "@/components/forms/done";
 import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { useSave } from "@/components/forms/use-save";
 import { Button } from "@/components/ui/button";
 import { FieldGroup, TextField } from "@/components/ui/field";
-import { Notice } from "@/components/ui/notice";
 import { savePolicySchema, type PolicyVersionView } from "@/lib/schemas/policies";
 import { typedNumber } from "@/lib/schemas/typed-field";
 import { POLICY_WORDS, shownShare, storedShare, type PolicyField } from "./policy-words";
@@ -75,9 +75,9 @@ export function PolicyForm({ current }: { readonly current: PolicyVersionView })
       />
       <Refusal error={save.error} title="Not saved" />
       {save.data && (
-        <Notice live="status">
+        <Done>
           <p>Version {save.data.version} stands. The fleet is being checked again.</p>
-        </Notice>
+        </Done>
       )}
       <div className="acts">
         <Button type="submit" variant="primary" busy={save.isPending}>

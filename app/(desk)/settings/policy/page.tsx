@@ -39,7 +39,7 @@ export default async function PolicyPage() {
       />
       {may(context.actor, "policies.write") && (
         <SheetSection title="Change" note="The whole fleet is checked again with a new version.">
-          <PolicyForm key={current.version} current={current} />
+          <PolicyForm current={current} />
         </SheetSection>
       )}
       <SheetSection title="Versions" note="Newest first">
