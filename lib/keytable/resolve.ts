@@ -120,9 +120,10 @@ function collect(found: Found, at: At): void {
     found.unmapped.push({ file, entry, element: null, key: entry.key });
     return;
   }
+  const { document } = at;
   const { valueSpan: span, raw, value } = entry;
   for (const target of targets)
-    addPlace(found, { ...at, element: null, key: entry.key, span, raw, value, target });
+    addPlace(found, { document, file, entry, element: null, key: entry.key, span, raw, value, target });
 }
 
 function collectList(found: Found, at: At, whole: readonly Target[] | undefined): void {
