@@ -7,7 +7,7 @@ import { readArguments } from "./lib/arguments.mjs";
 import { ensureBuild } from "./lib/build.mjs";
 import { Cluster } from "./lib/cluster.mjs";
 import { ensureTables, hasPeople, identifyDatabase, loadDemo } from "./lib/data.mjs";
-import { ensureDatabase, query } from "./lib/database.mjs";
+import { dropDatabase, ensureDatabase, query } from "./lib/database.mjs";
 import { undoAll } from "./lib/undo.mjs";
 import { ensureHome, homeFolder, readJson, writeJson } from "./lib/home.mjs";
 import { interruption } from "./lib/interruption.mjs";
@@ -75,16 +75,26 @@ function keptState(home) {
   return { state, keep };
 }
 
-async function openDatabase(home, say) {
-  const given = process.env.DATABASE_URL;
-  if (!given) {
-    const cluster = new Cluster({ home, signal });
-    undo.push(() => cluster.stop());
-    await cluster.start(say);
-    const url = await ensureDatabase(cluster.url, DATABASE);
-    say(`ready on port ${new URL(url).port}`);
+/** The desk's database in a cluster of this folder's own. */
+async function openOwnDatabase({ home, state, keep, say }) {
+  const cluster = new Cluster({ home, signal });
+  undo.push(() => cluster.stop());
+  await cluster.start(say);
+  const url = await ensureDatabase(cluster.url, DATABASE);
+  const words = `ready on port ${new URL(url).port}`;
+  if (!state.demoLoading || state.demoLoading !== (await identifyDatabase(url))) {
+    say(words);
     return url;
   }
+  // Nobody has worked here yet: a start serves only after the loading, which was interrupted.
+  await dropDatabase(cluster.url, DATABASE);
+  await ensureDatabase(cluster.url, DATABASE);
+  keep({ demoLoading: undefined });
+  say(`${words}, begun anew since the loading of the demo fleet was interrupted`);
+  return url;
+}
+
+async function openGivenDatabase(given, say) {
   const address = new URL(given).host + new URL(given).pathname;
   await query(given, "select 1").catch((error) => {
     throw new Trouble(
@@ -95,14 +105,26 @@ async function openDatabase(home, say) {
   return given;
 }
 
-/** The demo fleet is loaded once for each database, and never into one where others already work. */
+function openDatabase(setting) {
+  const given = process.env.DATABASE_URL;
+  return given ? openGivenDatabase(given, setting.say) : openOwnDatabase(setting);
+}
+
+/** Loads the demo fleet once for each database, and never where others already work. Gives whether it is there. */
 async function fillOnce({ url, state, keep, say, env }) {
   const id = await identifyDatabase(url);
-  if (state.demoLoaded.includes(id)) return say("loaded before");
-  if (process.env.DATABASE_URL && (await hasPeople(url)))
-    return say("left out, since people already use this database");
+  if (state.demoLoaded.includes(id)) {
+    say("loaded before");
+    return true;
+  }
+  if (state.demoLoading !== id && (await hasPeople(url))) {
+    say("left out, since people already use this database");
+    return false;
+  }
+  keep({ demoLoading: id });
   await loadDemo({ url, say, signal, env });
-  keep({ demoLoaded: [...state.demoLoaded, id] });
+  keep({ demoLoading: undefined, demoLoaded: [...state.demoLoaded, id] });
+  return true;
 }
 
 async function openMail({ home, state, keep, say }) {
@@ -145,7 +167,7 @@ function greet({ home, address, demo }) {
 /** Everything in order; ends early after the step that `until` names. */
 async function start({ home, port, until }) {
   const env = { ...process.env, NEXT_TELEMETRY_DISABLED: "1" };
-  const demo = process.env.KEEPSTEP_DEMO !== "0";
+  const wantsDemo = process.env.KEEPSTEP_DEMO !== "0";
   const distDir = process.env.KEEPSTEP_DIST_DIR || ".next";
   doing = "making the folder for the data";
   await prepare(home, port);
@@ -156,12 +178,14 @@ async function start({ home, port, until }) {
   if (until === "postgres") return;
   await step("Node modules", "installing the node modules", (say) => ensureModules({ say, signal }));
   if (until === "modules") return;
-  const url = await step("Database", "starting the database", (say) => openDatabase(home, say));
+  const url = await step("Database", "starting the database", (say) =>
+    openDatabase({ home, state, keep, say }),
+  );
   if (until === "database") return;
   await step("Tables", "bringing the tables up to date", (say) => ensureTables({ url, say, signal, env }));
   if (until === "tables") return;
-  if (demo)
-    await step("Demo fleet", "loading the demo fleet", (say) => fillOnce({ url, state, keep, say, env }));
+  const fill = (say) => fillOnce({ url, state, keep, say, env });
+  const demo = wantsDemo && (await step("Demo fleet", "loading the demo fleet", fill));
   if (until === "demo") return;
   await step("Desk", "building the desk", (say) => ensureBuild({ distDir, say, signal, env }));
   if (until === "build") return;

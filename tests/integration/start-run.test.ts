@@ -1,5 +1,6 @@
 import { execFileSync } from "node:child_process";
 import path from "node:path";
+import { setTimeout as delay } from "node:timers/promises";
 import { afterAll, afterEach, beforeAll, expect, test, vi } from "vitest";
 import { demoPeople } from "../../scripts/demo-people.mjs";
 import { isFree } from "../../scripts/lib/ports.mjs";
@@ -16,6 +17,7 @@ import {
 
 /** The first start may have to build the desk. */
 const LONG_MS = 400_000;
+const PATIENCE = { timeout: 60_000, interval: 50 };
 const READY = "Keepstep is ready";
 
 vi.setConfig({ testTimeout: LONG_MS, hookTimeout: LONG_MS });
@@ -73,7 +75,17 @@ afterEach(async () => {
 
 afterAll(() => removeHome(home));
 
-test("the first start serves the demo fleet, prints a sign-in for each role, and ends whole on Ctrl-C", async () => {
+test("a start that is stopped while it loads the demo fleet leaves nothing running", async () => {
+  desk = startDesk(settings(), { args: ["--until=demo"] });
+  await desk.said("Tables");
+  await vi.waitFor(() => expect(processesOf(home).join()).toContain("scripts/seed.ts"), PATIENCE);
+  await delay(2_000);
+  desk.child.kill("SIGTERM");
+  expect((await desk.ended).code).toBe(130);
+  expect(processesOf(home)).toEqual([]);
+});
+
+test("the next start serves the demo fleet, prints a sign-in for each role, and ends whole on Ctrl-C", async () => {
   const started = await start();
   expect((await ask("health")).status).toBe(200);
   token = makeToken();
@@ -81,6 +93,7 @@ test("the first start serves the demo fleet, prints a sign-in for each role, and
   expect(await machinesByToken()).toBe(200);
   await stop(started, "SIGINT");
   const { output } = await started.ended;
+  expect(output).toContain("begun anew since the loading of the demo fleet was interrupted");
   for (const { role, email, password } of demoPeople())
     expect(output).toMatch(new RegExp(`${role}\\s+${email}\\s+${password}`));
 });
@@ -90,7 +103,7 @@ test("a token can be made while the desk stands still, and nothing is left runni
   expect(processesOf(home)).toEqual([]);
 });
 
-test("the next start takes seconds, keeps all data, and loads the demo no second time", async () => {
+test("a further start takes seconds, keeps all data, and loads the demo no second time", async () => {
   const from = Date.now();
   const started = await start();
   expect(Date.now() - from).toBeLessThan(60_000);
