@@ -31,14 +31,27 @@ export function installedPostgres(env = process.env) {
 
 /** Makes sure that PostgreSQL's server programs are here; installs them where that is allowed. */
 export async function ensurePostgres({ say, signal, env = process.env }) {
-  if (installedPostgres(env).length === 0)
+  if (installedPostgres(env).length === 0) {
     await installDebian({ what: "PostgreSQL", packages: ["postgresql"], say, signal, env });
+    await stopDebiansOwn({ signal, env });
+  }
   const [newest] = installedPostgres(env);
   if (!newest)
     throw new Trouble(
       "PostgreSQL was installed, but its program initdb cannot be found. Nothing else was changed. Set KEEPSTEP_POSTGRES_HOME to the folder that holds its versions.",
     );
   say(newest.version ? `version ${newest.version}` : newest.bin);
+}
+
+/** Right after an install Debian starts a cluster of its own, which nobody here asked for: it is kept, but stopped. */
+async function stopDebiansOwn({ signal, env }) {
+  if (!findProgram("pg_lsclusters", env)) return;
+  const { output } = await run("pg_lsclusters", ["-h"], { signal, env, anyCode: true });
+  for (const line of output.split("\n")) {
+    const [version, name, , status] = line.trim().split(/\s+/);
+    if (status?.startsWith("online"))
+      await run("pg_ctlcluster", [version, name, "stop"], { signal, env, anyCode: true });
+  }
 }
 
 /** The programs of the version that the data folder was made with; of the newest for a folder yet to be made. */
