@@ -8,8 +8,8 @@ const report = process.env.KEEPSTEP_E2E_REPORT;
 export default defineConfig({
   testDir: "tests/e2e",
   workers: 1,
-  timeout: 120_000,
-  expect: { timeout: 10_000 },
+  timeout: 180_000,
+  expect: { timeout: 20_000 },
   forbidOnly: true,
   reporter: [["list"], ...(report ? [["json", { outputFile: report }] as const] : [])],
   use: {
@@ -17,7 +17,6 @@ export default defineConfig({
     locale: "en-GB",
     timezoneId: "Pacific/Chatham",
     screenshot: "only-on-failure",
-    trace: "retain-on-failure",
     launchOptions: {
       executablePath: process.env.CHROMIUM_PATH ?? "/usr/bin/chromium",
       args: [

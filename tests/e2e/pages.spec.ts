@@ -55,7 +55,7 @@ const machine = (page: Page) => firstOf(page, "/machines?level=over");
 const model = (page: Page) => firstOf(page, "/machine-models");
 
 async function showsEditor(page: Page): Promise<void> {
-  await expect(page.getByRole("textbox", { name: /^Text of / })).toBeVisible();
+  await expect(page.getByRole("textbox", { name: /^Text of / })).toBeAttached();
   await expect(page.getByRole("group", { name: "Findings of the text as it stands" })).toBeVisible();
 }
 
