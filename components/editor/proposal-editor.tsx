@@ -2,6 +2,7 @@
 
 import { useState, useSyncExternalStore } from "react";
 import { fieldErrors } from "@/components/api";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { Button } from "@/components/ui/button";
 import { DateTime } from "@/components/ui/date-time";
@@ -26,12 +27,11 @@ export function ProposalEditor({ start, change }: ProposalEditorProps) {
   const { files, fields, answer, save } = proposal;
   const fresh = !change || change.state === "draft";
   return (
-    <form
-      onSubmit={(event) => {
+    <Form
+      onSubmit={async (event) => {
         event.preventDefault();
         save.mutate(false);
       }}
-      noValidate
     >
       <KeptNotice place={proposal.place} onRestore={proposal.restore} />
       <div className="editor-columns">
@@ -70,7 +70,7 @@ export function ProposalEditor({ start, change }: ProposalEditorProps) {
         </Button>
         {change?.state === "approved" && <p className="caution">Saving voids the approval.</p>}
       </div>
-    </form>
+    </Form>
   );
 }
 

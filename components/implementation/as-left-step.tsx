@@ -4,6 +4,7 @@ import { useRef, useState } from "react";
 import { LAYER_WORDS, LAYERS, type Layer } from "@/lib/domain/readings";
 import type { CreatedReading } from "@/lib/schemas/readings";
 import { apiCall, fieldErrors } from "@/components/api";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { useSave } from "@/components/forms/use-save";
 import { filesTrouble, newActKey, sentTexts } from "@/components/readings/read-files";
@@ -43,9 +44,8 @@ export function AsLeftStep({ machineId, serial, hasReadBack }: AsLeftStepProps) 
   });
   const errors = fieldErrors(save.error);
   return (
-    <form
-      noValidate
-      onSubmit={(event) => {
+    <Form
+      onSubmit={async (event) => {
         event.preventDefault();
         const found = filesTrouble(files, { path: "", text: pasted });
         setTrouble(found);
@@ -96,6 +96,6 @@ export function AsLeftStep({ machineId, serial, hasReadBack }: AsLeftStepProps) 
           <p>{save.data.step?.missing ?? "It reads back what is required."}</p>
         </Notice>
       )}
-    </form>
+    </Form>
   );
 }

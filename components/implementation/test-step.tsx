@@ -4,6 +4,7 @@ import { useRef, useState } from "react";
 import type { MeasuredTemperature } from "@/lib/domain/changes";
 import { MAX_ATTACHMENT_BYTES } from "@/lib/schemas/changes";
 import { apiCall, fieldErrors } from "@/components/api";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { useSave } from "@/components/forms/use-save";
 import { newActKey, toBase64 } from "@/components/readings/read-files";
@@ -97,9 +98,8 @@ export function TestStep({ changeId, machineId, axes, hasReadBack }: TestStepPro
   });
   const errors = fieldErrors(save.error);
   return (
-    <form
-      noValidate
-      onSubmit={(event) => {
+    <Form
+      onSubmit={async (event) => {
         event.preventDefault();
         const found = trouble(typed, files);
         setWrong(found);
@@ -173,6 +173,6 @@ export function TestStep({ changeId, machineId, axes, hasReadBack }: TestStepPro
           <p>{save.data.missing ?? "Nothing is missing."}</p>
         </Notice>
       )}
-    </form>
+    </Form>
   );
 }

@@ -2,6 +2,7 @@
 
 import { useState } from "react";
 import { useForm, useWatch } from "react-hook-form";
+import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { Button } from "@/components/ui/button";
 import { SelectField } from "@/components/ui/field";
@@ -89,7 +90,7 @@ export function ReadingForm({
   if (send.data?.kind === "kept") return <ReadingOutcome kept={send.data.kept} onAnother={another} />;
   return (
     <>
-      <form onSubmit={submit} noValidate>
+      <Form onSubmit={submit}>
         {mayKeep && <ModeChoice form={form} />}
         <MachineChoice
           chosen={machine}
@@ -117,7 +118,7 @@ export function ReadingForm({
             {mode === "keep" ? "Keep the reading" : "Check the text"}
           </Button>
         </div>
-      </form>
+      </Form>
       {send.data?.kind === "checked" && (
         <CheckOutcome {...send.data} mayMap={mayMap} onLearned={() => void submit()} />
       )}
