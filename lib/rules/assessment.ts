@@ -1,5 +1,6 @@
 import type { LimitSense } from "@/lib/domain/findings";
 import type { Level } from "@/lib/domain/levels";
+import { OUT_OF_RANGE } from "./data";
 import type { Missing } from "./types";
 
 /** What a check makes of one axis (or the machine), before it becomes a finding. */
@@ -29,7 +30,9 @@ interface Grounds {
 }
 
 /** A verdict with its words, written out field by field: it is made anew for each value that a clearing value tries. */
-export function judged(verdict: Verdict, grounds: Grounds): Judged {
+export function judged(verdict: Verdict, grounds: Grounds): Judged | Missing {
+  if (!isFiniteOrNull(verdict.value) || !isFiniteOrNull(verdict.limit) || !isFiniteOrNull(verdict.nearLimit))
+    return OUT_OF_RANGE;
   return {
     ok: true,
     level: verdict.level,
@@ -45,6 +48,10 @@ export function judged(verdict: Verdict, grounds: Grounds): Judged {
   };
 }
 
+function isFiniteOrNull(value: number | null): boolean {
+  return value === null || Number.isFinite(value);
+}
+
 interface Bounds {
   readonly value: number;
   /** Where `over` begins, and where `near` does; a value exactly there is still on the good side. */
@@ -57,7 +64,7 @@ interface Bounds {
 const NOISE = 1e-9;
 
 export function exceeds(value: number, limit: number): boolean {
-  return value - limit > NOISE * Math.max(Math.abs(value), Math.abs(limit));
+  return value > limit + NOISE * Math.abs(limit);
 }
 
 function upperLevel(value: number, limit: number, near: number): Judged["level"] {
@@ -80,7 +87,15 @@ export function judgeUpper({ value, limit, near, unit }: Bounds): Verdict {
 export function judgeTemperature(bounds: Omit<Bounds, "unit">): Verdict {
   const { value, limit, near } = bounds;
   const level = upperLevel(value, limit, near);
-  return { level, value, limit, nearLimit: near, limitSense: "upper", margin: limit - value, unit: "°C" };
+  return {
+    level,
+    value,
+    limit,
+    nearLimit: near,
+    limitSense: "upper",
+    margin: finite(limit - value),
+    unit: "°C",
+  };
 }
 
 /** Judges against a lower limit; the margin is (value − limit)/limit. */

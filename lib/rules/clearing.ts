@@ -20,20 +20,39 @@ export interface Candidate {
 /** Level of the check with another value (SI) of the candidate's parameter. */
 export type Probe = (candidate: Candidate, value: number) => Level;
 
-/** The first candidate that ends `over`, with its value rounded to the safe side in the text's own unit; null for none. */
+interface Solution {
+  readonly candidate: Candidate;
+  readonly stated: ParameterValue;
+  readonly value: number;
+}
+
+/**
+ * The first candidate that ends `over`, with its value rounded to the safe side in the text's own unit; null for none.
+ * Among neighbours that are all lowered it is the one that has to give way least.
+ */
 export function clearingValue(candidates: readonly Candidate[], probe: Probe): ClearingValue | null {
+  let best: Solution | null = null;
   for (const candidate of candidates) {
-    const stated = candidate.view.parameter(candidate.parameter);
-    const value = stated && solved(candidate, stated, (tried) => probe(candidate, tried));
-    if (stated && value !== null && value !== undefined)
-      return {
-        axis: candidate.view.axis,
-        parameter: candidate.parameter,
-        value,
-        unit: stated.unit,
-      };
+    if (best && candidate.aim.kind !== "lower") break;
+    const found = solution(candidate, probe);
+    if (found && (!best || remaining(found) > remaining(best))) best = found;
+    if (best && best.candidate.aim.kind !== "lower") break;
   }
-  return null;
+  if (!best) return null;
+  const { candidate, stated, value } = best;
+  return { axis: candidate.view.axis, parameter: candidate.parameter, value, unit: stated.unit };
+}
+
+function solution(candidate: Candidate, probe: Probe): Solution | null {
+  const stated = candidate.view.parameter(candidate.parameter);
+  if (!stated) return null;
+  const value = solved(candidate, stated, (tried) => probe(candidate, tried));
+  return value === null ? null : { candidate, stated, value };
+}
+
+/** Share of the present value that is left. */
+function remaining({ value, stated }: Solution): number {
+  return stated.value === 0 ? 0 : value / stated.value;
 }
 
 function solved(

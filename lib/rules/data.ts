@@ -24,13 +24,16 @@ export function unusable(reason: string, ...needs: readonly string[]): Missing {
   return { ok: false, needs, reason, refused: needs };
 }
 
+/** A number too large to reckon with is as good as missing. */
+export const OUT_OF_RANGE = unusable("The numbers are out of the range that can be reckoned with.");
+
 export function given(value: number, assumed = NONE): Known {
   return { ok: true, value, assumed };
 }
 
-/** A computed value; a number too large to reckon with is as good as missing. */
+/** A computed value with its formula. */
 export function computed(value: number, assumed: readonly string[], formula: () => string): Computed {
-  if (!Number.isFinite(value)) return unusable("The numbers are out of the range that can be reckoned with.");
+  if (!Number.isFinite(value)) return OUT_OF_RANGE;
   return { ok: true, value, assumed, formula };
 }
 

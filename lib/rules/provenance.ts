@@ -108,7 +108,8 @@ function tolerance(axis: AxisView, name: CurrentParameter): number | null {
   const method = axis.hardware.driver?.set_point?.method;
   if (method === undefined || method === "direct") return null;
   const resistor = method === "transconductance" ? 0 : RESISTOR_SPREAD;
-  return DRIVER_SPREAD + resistor + typingSpread(leading(axis, name));
+  const spread = DRIVER_SPREAD + resistor + typingSpread(leading(axis, name));
+  return Number.isFinite(spread) ? spread : null;
 }
 
 function leading(axis: AxisView, name: CurrentParameter): ParameterValue | undefined {

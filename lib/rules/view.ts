@@ -71,6 +71,12 @@ interface Before {
   readonly value: ParameterValue;
 }
 
+/** Field by field: a search for a clearing value tries dozens. */
+function withNumber(stated: ParameterValue, value: number): ParameterValue {
+  const { axis, parameter, unit, basis, typed, source } = stated;
+  return { axis, parameter, value, unit, basis, typed, source };
+}
+
 function axisView(facts: AxisFacts, before?: Before): AxisView {
   const { input, hardware, values } = facts;
   const known = new Map<QuantityName, Computed>();
@@ -100,8 +106,7 @@ function axisView(facts: AxisFacts, before?: Before): AxisView {
     },
     withValue: (name, value) => {
       const stated = parameter(name);
-      if (!stated) return view;
-      return axisView(facts, { view, moved: name, value: { ...stated, value } });
+      return stated ? axisView(facts, { view, moved: name, value: withNumber(stated, value) }) : view;
     },
   };
   return view;

@@ -57,7 +57,8 @@ function fromDriveTrain(axis: AxisView, reckon: typeof radiusPerRadian): Datum {
 function travelPerTurn(axis: AxisView): Datum {
   const travel = fromDriveTrain(axis, travelPerMotorTurn);
   if (!travel.ok) return travel;
-  return { ...travel, value: axis.kind === "rotary" ? (travel.value * 180) / Math.PI : travel.value * 1000 };
+  const { value, assumed } = travel;
+  return given(axis.kind === "rotary" ? (value * 180) / Math.PI : value * 1000, assumed);
 }
 
 export const EXPECTED_SCALE: QuantityDefinition = {

@@ -69,7 +69,7 @@ function torqueTemperature(axis: AxisView): Datum {
   const winding = axis.quantity("winding_c");
   const limit = hardware(axis, "motor", "winding_limit_c");
   if (winding.ok)
-    return { ...winding, value: limit.ok ? Math.min(winding.value, limit.value) : winding.value };
+    return given(limit.ok ? Math.min(winding.value, limit.value) : winding.value, winding.assumed);
   if (winding.runaway === true) return limit;
   return given(20, winding.needs);
 }

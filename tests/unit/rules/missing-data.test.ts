@@ -264,7 +264,7 @@ describe("any data missing", () => {
       }),
       { numRuns: 100, seed: 7 },
     );
-  });
+  }, 60_000);
 
   it("leaves a finding of every check on a machine of which nothing is known", () => {
     const { result } = world({}, { axes: [{ axis: "x" }] });
@@ -291,7 +291,7 @@ describe("the needs of a check", () => {
       }),
       { numRuns: 100, seed: 7 },
     );
-  });
+  }, 60_000);
 });
 
 /** A path as `Rule.needs` spells it: "axes.x.motor.r" is "motor.r", "axes.x.travel_mm" is "axis.travel_mm". */
