@@ -1,8 +1,10 @@
 import { parameterRank } from "@/lib/domain/parameters";
 import type { ParameterValue } from "@/lib/domain/values";
 import { resolve, type Resolved, type ResolveInput, type UnmappedPlace } from "./resolve";
-import { suggestParameters } from "./suggest";
-import type { AxisShape, Mapping, UnmappedKey } from "./types";
+import { suggester } from "./suggest";
+import type { AxisShape, Mapping, Suggestion, UnmappedKey } from "./types";
+
+type Suggest = ReturnType<typeof suggester>;
 
 /** So many unmapped keys get suggestions; a text with more is hardly a configuration. */
 const MOST_SUGGESTED = 1000;
@@ -14,9 +16,12 @@ const MOST_SUGGESTED = 1000;
  */
 export function mapDocuments(input: ResolveInput): Mapping {
   const { values, unmapped, diagnostics } = resolve(input);
+  const suggest = suggester(input.axes);
   return {
     parameters: inOrder([...values.values()].map(toValue), input.axes),
-    unmapped: unmapped.map((place, index) => toUnmapped(place, index, input)),
+    unmapped: unmapped.map((place, index) =>
+      toUnmapped(place, input, index < MOST_SUGGESTED ? suggest : null),
+    ),
     diagnostics: diagnostics.map((list) => list.all()),
   };
 }
@@ -49,20 +54,23 @@ function toValue({ place, reading }: Resolved): ParameterValue {
   };
 }
 
+/** The suggestions are an own property that is worked out when first read: many a reader of a report needs none. */
 function toUnmapped(
   { file, entry, element, key }: UnmappedPlace,
-  index: number,
-  { documents, axes }: { documents: ResolveInput["documents"]; axes: readonly AxisShape[] },
+  { documents, axes }: ResolveInput,
+  suggest: Suggest | null,
 ): UnmappedKey {
   const item = element !== null && entry.value.kind === "list" ? entry.value.items[element] : undefined;
   const raw = item?.raw ?? entry.raw;
   const value = item?.value ?? entry.value;
+  let found: readonly Suggestion[] | null = suggest ? null : [];
   return {
     path: documents[file]?.path ?? "",
     line: (item?.span ?? entry.keySpan).line,
     key,
     raw,
-    suggestions:
-      index < MOST_SUGGESTED ? suggestParameters({ key, raw, value, comment: entry.comment, axes }) : [],
+    get suggestions() {
+      return (found ??= suggest?.({ key, raw, value, comment: entry.comment, axes }) ?? []);
+    },
   };
 }

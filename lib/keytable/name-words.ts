@@ -15,7 +15,8 @@ const WORDS: Record<string, string> = {
   reference: "ref reference",
   voltage: "voltage volt volts mv millivolts",
   "reference voltage": "vref",
-  scale: "scale cs",
+  scale: "scale",
+  "current scale": "cs",
   sense: "sense shunt",
   resistance: "resistance resistor ohm ohms mohm milliohm",
   "sense resistance": "rsense rs",
@@ -60,8 +61,15 @@ export const CONCEPTS: ReadonlyMap<string, readonly string[]> = new Map(
   ),
 );
 
+/** A number counts nothing either. */
 export function isNeutral(word: string): boolean {
-  return NEUTRAL.has(word) || /^\d+$/.test(word);
+  const first = word.charCodeAt(0);
+  return (first >= 48 && first <= 57) || NEUTRAL.has(word);
+}
+
+/** A word with a meaning here, or one that is known to have none. */
+export function isWord(word: string): boolean {
+  return CONCEPTS.has(word) || NEUTRAL.has(word);
 }
 
 /** A combination of concepts that names a parameter, and concepts that speak against it. */
@@ -82,8 +90,8 @@ function phrase(parameter: ParameterName, concepts: string, score: number, unles
   };
 }
 
-export const PHRASES: readonly Phrase[] = [
-  phrase("run_current", "run current", 0.85, "hold delay"),
+const PHRASES: readonly Phrase[] = [
+  phrase("run_current", "run current", 0.85, "hold delay scale"),
   phrase("run_current", "rms current", 0.75, "hold delay"),
   phrase("run_current", "peak current", 0.7, "hold delay"),
   phrase("run_current", "current", 0.65, "hold scale delay home limit"),
@@ -122,6 +130,7 @@ export const PHRASES: readonly Phrase[] = [
   phrase("pulse_width", "pulse width", 0.85),
   phrase("pulse_width", "steps width", 0.7),
   phrase("pulse_width", "pulse delay", 0.65),
+  phrase("pulse_width", "steps delay", 0.5, "hold direction"),
   phrase("pulse_width", "pulse", 0.45, "per"),
   phrase("direction_setup", "direction setup", 0.85),
   phrase("direction_setup", "direction delay", 0.75),
@@ -134,6 +143,18 @@ export const PHRASES: readonly Phrase[] = [
   phrase("max_step_rate", "max steps rate", 0.85),
   phrase("max_step_rate", "steps rate", 0.6),
 ];
+
+/** Phrases by their first concept. */
+export const PHRASES_OF: ReadonlyMap<string, readonly Phrase[]> = byFirstConcept();
+
+function byFirstConcept(): Map<string, Phrase[]> {
+  const groups = new Map<string, Phrase[]>();
+  for (const one of PHRASES) {
+    const first = one.concepts[0] ?? "";
+    groups.set(first, [...(groups.get(first) ?? []), one]);
+  }
+  return groups;
+}
 
 /** Endings of a name that state its unit, longest first. */
 export const UNIT_ENDINGS: readonly (readonly [readonly string[], string])[] = [

@@ -1,10 +1,10 @@
-import { needsBasis, parameterDefinition, type ParameterName } from "@/lib/domain/parameters";
+import { needsBasis, parameterDefinition, parameterRank, type ParameterName } from "@/lib/domain/parameters";
 import { joinWords } from "@/lib/domain/sentences";
 import { canonicalUnit, insideUnit, unitDimension, unitFactor, type Dimension } from "@/lib/domain/units";
 import type { Basis } from "@/lib/domain/values";
 import type { ParsedValue } from "@/lib/parsers/types";
-import { CONCEPTS, isNeutral, PHRASES, UNIT_ENDINGS, type Phrase } from "./name-words";
-import { splitName } from "./split-name";
+import { CONCEPTS, isNeutral, PHRASES_OF, UNIT_ENDINGS, type Phrase } from "./name-words";
+import { NameSplitter } from "./split-name";
 import type { AxisShape, Suggestion } from "./types";
 
 export interface SuggestInput {
@@ -21,18 +21,57 @@ const LONGEST_COMMENT = 200;
 
 /** What a key without a rule may be, best first, from its name, unit, comment and the size of its value. At most three. */
 export function suggestParameters(input: SuggestInput): Suggestion[] {
-  const axisNames = input.axes.map(({ axis }) => axis.toLowerCase());
-  const words = splitName(input.key, axisNames);
-  const name = readName(words, axisNames, input);
-  if (name.concepts.size === 0) return [];
-  const best = new Map<ParameterName, Suggestion>();
-  for (const phrase of PHRASES) {
-    const suggestion = weigh(phrase, name, input);
-    if (!suggestion || suggestion.score < LEAST_SCORE) continue;
-    const before = best.get(phrase.parameter);
-    if (!before || before.score < suggestion.score) best.set(phrase.parameter, suggestion);
-  }
-  return [...best.values()].sort((a, b) => b.score - a.score).slice(0, MOST);
+  return suggester(input.axes)(input);
+}
+
+/** Suggestions for many keys of one machine; remembers the words that their names share. */
+export function suggester(axes: readonly AxisShape[]): (input: SuggestInput) => Suggestion[] {
+  const axisNames = axes.map(({ axis }) => axis.toLowerCase());
+  const splitter = new NameSplitter(axisNames);
+  return (input) => {
+    const words = splitter.split(input.key);
+    return words.some((word) => CONCEPTS.has(word)) ? rank(readName(words, axisNames, input), input) : [];
+  };
+}
+
+/** What speaks for a parameter. */
+interface Evidence {
+  readonly phrase: Phrase;
+  readonly clue: Clue;
+  readonly size: SizeEvidence;
+  readonly axis: AxisShape | null;
+  readonly score: number;
+}
+
+function rank(name: Name, input: SuggestInput): Suggestion[] {
+  const best = new Map<ParameterName, Evidence>();
+  for (const concept of name.concepts.keys())
+    for (const phrase of PHRASES_OF.get(concept) ?? []) {
+      const evidence = weigh(phrase, name, input);
+      const before = best.get(phrase.parameter);
+      if (evidence && evidence.score >= LEAST_SCORE && (before?.score ?? 0) < evidence.score)
+        best.set(phrase.parameter, evidence);
+    }
+  const ranked = [...best.values()].sort(byScore).slice(0, MOST);
+  return ranked.map((evidence) => toSuggestion(evidence, name));
+}
+
+/** Best first; of equal ones in the order of the parameter list. */
+function byScore(a: Evidence, b: Evidence): number {
+  return b.score - a.score || parameterRank(a.phrase.parameter) - parameterRank(b.phrase.parameter);
+}
+
+function toSuggestion({ phrase, clue, size, axis, score }: Evidence, name: Name): Suggestion {
+  const reasons = [nameReason(phrase, name), clue.reason, size.reason].filter((reason) => reason !== null);
+  const sentence = `${joinWords(reasons)}.`;
+  return {
+    parameter: phrase.parameter,
+    axis: axis?.axis ?? null,
+    unit: clue.unit,
+    basis: needsBasis(phrase.parameter) ? name.basis : null,
+    score,
+    reason: sentence.charAt(0).toUpperCase() + sentence.slice(1),
+  };
 }
 
 interface Name {
@@ -56,7 +95,7 @@ function readName(words: readonly string[], axisNames: readonly string[], input:
   for (const word of words) {
     const says = CONCEPTS.get(word);
     if (says) for (const concept of says) concepts.set(concept, word);
-    else if (!isNeutral(word) && !axisNames.includes(word) && !isUnitWord(word)) unexplained++;
+    else if (!isNeutral(word) && !axisNames.includes(word) && !UNIT_WORDS.has(word)) unexplained++;
   }
   const unit = unitClue(words, input);
   return { concepts, unexplained, axis: axisOf(words, input), unit, basis: basisOf(concepts, input) };
@@ -69,9 +108,7 @@ function basisOf(concepts: ReadonlyMap<string, string>, { comment }: SuggestInpu
   return concepts.has("peak") || /\bpeak\b/.test(said) ? "peak" : null;
 }
 
-function isUnitWord(word: string): boolean {
-  return UNIT_ENDINGS.some(([ending]) => ending.includes(word));
-}
+const UNIT_WORDS: ReadonlySet<string> = new Set(UNIT_ENDINGS.flatMap(([ending]) => ending));
 
 /** The axis that a word names, else the only axis there is. */
 function axisOf(words: readonly string[], { axes }: SuggestInput): AxisShape | null {
@@ -109,30 +146,17 @@ function firstNumber(value: ParsedValue): { value: number; unit: string | null }
   return item?.kind === "number" ? item : null;
 }
 
-function weigh(phrase: Phrase, name: Name, input: SuggestInput): Suggestion | null {
+function weigh(phrase: Phrase, name: Name, input: SuggestInput): Evidence | null {
   if (!phrase.concepts.every((concept) => name.concepts.has(concept))) return null;
   if (phrase.unless.some((concept) => name.concepts.has(concept))) return null;
-  const definition = parameterDefinition(phrase.parameter);
-  if (!valueFits(input.value, definition.dimension)) return null;
+  const { scope, dimension } = parameterDefinition(phrase.parameter);
+  if (!valueFits(input.value, dimension)) return null;
   const clue = clueFor(phrase.parameter, name, input);
   if (clue === null) return null;
   const size = sizeEvidence(phrase.parameter, clue.unit, input.value);
-  const axis = definition.scope === "axis" ? name.axis : null;
-  const reasons = [nameReason(phrase, name), clue.reason, size.reason].filter((reason) => reason !== null);
-  return {
-    parameter: phrase.parameter,
-    axis: axis?.axis ?? null,
-    unit: clue.unit,
-    basis: needsBasis(phrase.parameter) ? name.basis : null,
-    score: score({
-      phrase,
-      name,
-      clue,
-      size: size.weight,
-      placed: axis !== null || definition.scope === "machine",
-    }),
-    reason: `${joinWords(reasons)}.`.replace(/^./, (first) => first.toUpperCase()),
-  };
+  const axis = scope === "axis" ? name.axis : null;
+  const placed = axis !== null || scope === "machine";
+  return { phrase, clue, size, axis, score: score({ phrase, name, clue, size: size.weight, placed }) };
 }
 
 function score(evidence: { phrase: Phrase; name: Name; clue: Clue; size: number; placed: boolean }): number {

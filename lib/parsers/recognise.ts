@@ -1,4 +1,4 @@
-import { lineEnd, afterLineEnd, skipBlanks } from "./chars";
+import { afterLineEnd, CHAR, lineEnd, skipBlanks } from "./chars";
 import { cutLine } from "./lines/lex";
 import { Pieces } from "./pieces";
 import { PIECE, type Format } from "./types";
@@ -18,7 +18,7 @@ export interface Recognition {
 }
 
 /** So many characters of a text decide. */
-const SAMPLE = 64 * 1024;
+const SAMPLE = 16 * 1024;
 const LEAST_SCORE = 0.3;
 
 /** Tells the format of a text from its own lines first and from its file name second. */
@@ -38,9 +38,12 @@ interface Counts {
 
 function countLines(sample: string): Counts {
   const counts: Counts = { directives: 0, pairs: 0, sections: 0, other: 0 };
+  const cut = new Pieces(8);
   for (let at = 0; at < sample.length;) {
     const end = lineEnd(sample, at);
-    countLine(sample, at, end, counts);
+    const from = skipBlanks(sample, at, end);
+    if (isDirective(sample, from, end)) counts.directives++;
+    else if (from < end) countPlainLine(sample, { from, end, cut }, counts);
     at = afterLineEnd(sample, end);
   }
   return counts;
@@ -48,15 +51,22 @@ function countLines(sample: string): Counts {
 
 const DIRECTIVE = /^(?:\/\/+|\/\*)?\s*#\s*(?:define|undef|ifn?def|if|elif|else|endif|include|pragma)\b/;
 
-function countLine(sample: string, start: number, end: number, counts: Counts): void {
-  const from = skipBlanks(sample, start, end);
-  if (from === end) return;
-  if (DIRECTIVE.test(sample.slice(from, Math.min(end, from + 40)))) counts.directives++;
-  else countPlainLine(sample, from, end, counts);
+/** A preprocessor directive, or one in a comment. */
+function isDirective(sample: string, from: number, end: number): boolean {
+  const first = sample.charCodeAt(from);
+  if (first !== CHAR.hash && first !== CHAR.slash) return false;
+  return DIRECTIVE.test(sample.slice(from, Math.min(end, from + 40)));
 }
 
-function countPlainLine(sample: string, from: number, end: number, counts: Counts): void {
-  const cut = new Pieces(8);
+interface PlainLine {
+  readonly from: number;
+  readonly end: number;
+  /** Used again for each line. */
+  readonly cut: Pieces;
+}
+
+function countPlainLine(sample: string, { from, end, cut }: PlainLine, counts: Counts): void {
+  cut.clear();
   cutLine(sample, from, end, cut);
   if (cut.kind(0) === PIECE.section) counts.sections++;
   else if (cut.kind(0) === PIECE.key && isPair(sample, cut)) counts.pairs++;
