@@ -1,11 +1,8 @@
-import { diffArrays } from "diff";
+import { keptLines } from "./kept-lines";
 import { pairLines, type LinePair } from "./pair-lines";
 import { splitLines, substance, withoutLineEnd } from "./text-lines";
 import type { RevisionLine, RevisionSegment, RevisionStretch } from "./types";
 import { reviseWords } from "./words";
-
-/** Texts further apart than so many line edits are compared line by line, in their order. */
-const MOST_EDITS = 2000;
 
 /**
  * A text as a drawing revision: every line once, changed lines with their old and new words beside each other.
@@ -25,52 +22,12 @@ interface Cursor {
 
 function reviseLines(was: readonly string[], toBe: readonly string[]): RevisionLine[] {
   const cursor: Cursor = { was, toBe, rows: [], wasAt: 0, toBeAt: 0 };
-  let removed = 0;
-  let added = 0;
-  for (const part of lineParts(was, toBe)) {
-    if (part.kind === "removed") removed += part.count;
-    else if (part.kind === "added") added += part.count;
-    else {
-      takeChanged(cursor, removed, added);
-      removed = added = 0;
-      for (let i = 0; i < part.count; i++) takeSame(cursor);
-    }
+  for (const { wasIndex, toBeIndex } of keptLines(was, toBe)) {
+    takeChanged(cursor, wasIndex - cursor.wasAt, toBeIndex - cursor.toBeAt);
+    takeSame(cursor);
   }
-  takeChanged(cursor, removed, added);
+  takeChanged(cursor, was.length - cursor.wasAt, toBe.length - cursor.toBeAt);
   return cursor.rows;
-}
-
-interface Part {
-  readonly kind: "same" | "removed" | "added";
-  readonly count: number;
-}
-
-/** Equal ends are set apart first; the middle goes to the line comparison. */
-function lineParts(was: readonly string[], toBe: readonly string[]): Part[] {
-  const shorter = Math.min(was.length, toBe.length);
-  let head = 0;
-  while (head < shorter && was[head] === toBe[head]) head++;
-  let tail = 0;
-  while (tail < shorter - head && was[was.length - 1 - tail] === toBe[toBe.length - 1 - tail]) tail++;
-  const middle = middleParts(was.slice(head, was.length - tail), toBe.slice(head, toBe.length - tail));
-  return [same(head), ...middle, same(tail)];
-}
-
-function same(count: number): Part {
-  return { kind: "same", count };
-}
-
-function middleParts(was: string[], toBe: string[]): Part[] {
-  const parts = diffArrays(was, toBe, { maxEditLength: MOST_EDITS });
-  if (!parts)
-    return [
-      { kind: "removed", count: was.length },
-      { kind: "added", count: toBe.length },
-    ];
-  return parts.map(({ value, added, removed }) => ({
-    kind: added ? "added" : removed ? "removed" : "same",
-    count: value.length,
-  }));
 }
 
 function takeSame(cursor: Cursor): void {
