@@ -35,6 +35,11 @@ function Outcome({ provenance: { rms, tolerance, missing } }: ProvenanceStripPro
   );
 }
 
+/** Where the current is known, the last step is that current itself; it is drawn as the outcome. */
+function wayOf({ steps, rms }: CurrentProvenance): CurrentProvenance["steps"] {
+  return rms === null ? steps : steps.slice(0, -1);
+}
+
 /** From the number typed to the current in the winding, one step after the other, each with where it comes from. */
 export function ProvenanceStrip({ provenance }: ProvenanceStripProps) {
   const label = parameterDefinition(provenance.parameter).label.toLowerCase();
@@ -43,7 +48,7 @@ export function ProvenanceStrip({ provenance }: ProvenanceStripProps) {
     <figure className="provenance">
       <figcaption>{name}</figcaption>
       <ol>
-        {provenance.steps.map((step, index) => (
+        {wayOf(provenance).map((step, index) => (
           <li key={index}>
             <span className="provenance-label">{step.label}</span>
             <span className="provenance-text">{step.text}</span>
@@ -51,7 +56,7 @@ export function ProvenanceStrip({ provenance }: ProvenanceStripProps) {
           </li>
         ))}
         <li className="provenance-outcome">
-          <span className="provenance-label">in the winding</span>
+          <span className="provenance-label">In the winding</span>
           <Outcome provenance={provenance} />
         </li>
       </ol>

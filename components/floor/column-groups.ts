@@ -44,6 +44,17 @@ export function floorLayout(columns: readonly FloorColumn[]): FloorLayout {
   return { groups, opens, tracks, width: tracks.reduce<number>((sum, track) => sum + track, 0) };
 }
 
+/** Axes that end beyond `right` pixels from the left of a row, with where each begins. */
+export function groupsBeyond(
+  right: number,
+  { groups, tracks }: FloorLayout,
+): (ColumnGroup & { left: number })[] {
+  const widthTo = (column: number): number => tracks.slice(0, column).reduce((sum, track) => sum + track, 0);
+  return groups
+    .map((group) => ({ ...group, left: widthTo(LEADING_COLUMNS + group.start) }))
+    .filter(({ start, count }) => widthTo(LEADING_COLUMNS + start + count) > right + 1);
+}
+
 /** The column at `x` pixels from the left of a row, leading columns included; the last one beyond them all. */
 export function columnAt(x: number, tracks: readonly number[]): number {
   let right = 0;

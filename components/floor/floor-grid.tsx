@@ -18,6 +18,7 @@ import { usePrinting } from "./browser-state";
 import { cellOf, cellWords, columnWords } from "./cell-words";
 import { columnAt, floorLayout, LEADING_COLUMNS, WIDTHS, type FloorLayout } from "./column-groups";
 import { FloorRowView } from "./floor-row";
+import { FurtherRight } from "./further-right";
 import { nextCell, type GridCell } from "./grid-keys";
 import type { FloorData } from "./types";
 
@@ -187,6 +188,7 @@ export function FloorGrid({ columns, rows, machineBase }: FloorGridProps) {
   } as CSSProperties;
   return (
     <div className="floor-grid" style={style}>
+      <FurtherRight scroller={scroller} layout={layout} />
       <div
         ref={scroller}
         className="floor-scroll"

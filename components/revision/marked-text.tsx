@@ -27,8 +27,10 @@ export interface MarkedTextProps {
   readonly notes?: Readonly<Record<number, ReactNode>> | undefined;
 }
 
-/** Lines in one block: blocks out of sight cost no layout. */
+/** Lines in one block of a long text: blocks out of sight cost no layout. */
 const BLOCK = 200;
+/** Blocks from which on a text is long. */
+const LONG = 5;
 /** Pixels of a line, as the style sheet has it. */
 const LINE = 24;
 
@@ -70,7 +72,12 @@ export function MarkedText({ text, path, index = 0, marks = [], letters = {}, no
         const block = lines.slice(start, start + BLOCK);
         const height = { containIntrinsicBlockSize: `auto ${block.length * LINE}px` };
         return (
-          <ol key={start} className="code-lines code-block" start={start + 1} style={height}>
+          <ol
+            key={start}
+            className={blocks.length > LONG ? "code-lines code-block" : "code-lines"}
+            start={start + 1}
+            style={height}
+          >
             {block.map((line, offset) => {
               const number = start + offset + 1;
               return (

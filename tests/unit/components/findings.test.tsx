@@ -238,12 +238,20 @@ describe("byAxis", () => {
 });
 
 describe("ProvenanceStrip", () => {
-  const steps = [{ label: "typed", text: "800 mA", from: "axes.conf, line 2" }];
+  const typed = { label: "Run current", text: "800 mA", from: "axes.conf line 2" };
+  const winding = { label: "In the winding", text: "0.566 A rms", from: "computed" };
 
   it("leads from the number typed to the current in the winding with its tolerance", () => {
     const { container } = render(
       <ProvenanceStrip
-        provenance={{ axis: "x", parameter: "run_current", steps, rms: 0.566, tolerance: 0.06, missing: [] }}
+        provenance={{
+          axis: "x",
+          parameter: "run_current",
+          steps: [typed, winding],
+          rms: 0.566,
+          tolerance: 0.06,
+          missing: [],
+        }}
       />,
     );
     expect([...container.querySelectorAll("li .provenance-text")].map((step) => step.textContent)).toEqual([
@@ -259,7 +267,7 @@ describe("ProvenanceStrip", () => {
         provenance={{
           axis: "x",
           parameter: "run_current",
-          steps,
+          steps: [typed],
           rms: null,
           tolerance: null,
           missing: ["axes.x.run_current.basis"],

@@ -1,6 +1,12 @@
 import { describe, expect, it } from "vitest";
 import { cellOf, cellWords, columnWords, offRequired } from "@/components/floor/cell-words";
-import { columnAt, columnGroups, floorLayout, LEADING_COLUMNS } from "@/components/floor/column-groups";
+import {
+  columnAt,
+  columnGroups,
+  floorLayout,
+  groupsBeyond,
+  LEADING_COLUMNS,
+} from "@/components/floor/column-groups";
 import { nextCell } from "@/components/floor/grid-keys";
 import { aColumn, aRow } from "./fixtures";
 
@@ -54,6 +60,26 @@ describe("columns", () => {
     });
     expect(width).toBe(left);
     expect(columnAt(width + 500, tracks)).toBe(LEADING_COLUMNS + 2);
+  });
+});
+
+describe("groupsBeyond", () => {
+  const layout = floorLayout([
+    aColumn("x", "run_current"),
+    aColumn("y", "run_current"),
+    aColumn("z", "run_current"),
+  ]);
+  const axes = (right: number) => groupsBeyond(right, layout).map(({ axis }) => axis);
+
+  it("names the axes that end beyond the edge, one cut in half among them", () => {
+    expect(axes(layout.width)).toEqual([]);
+    expect(axes(layout.width - 10)).toEqual(["z"]);
+    expect(axes(0)).toEqual(["x", "y", "z"]);
+  });
+
+  it("tells where each begins", () => {
+    const [first] = groupsBeyond(0, layout);
+    expect(columnAt((first?.left ?? 0) + 1, layout.tracks)).toBe(LEADING_COLUMNS);
   });
 });
 
