@@ -31,6 +31,8 @@ interface Unit {
 
 const INCH = 0.0254;
 const DEG = Math.PI / 180;
+/** N: the pound in kg times standard gravity in m/s², both exact. */
+const POUND_FORCE = 0.45359237 * 9.80665;
 const u = (dimension: Dimension, factor: number, kind: AxisKind | null = null, via?: Unit["via"]): Unit => ({
   dimension,
   factor,
@@ -83,8 +85,8 @@ const UNITS: ReadonlyMap<string, Unit> = new Map([
   ["N·m", u("torque", 1)],
   ["N·cm", u("torque", 1e-2)],
   ["mN·m", u("torque", 1e-3)],
-  ["oz·in", u("torque", 0.007061551814)],
-  ["lb·in", u("torque", 0.1129848290276)],
+  ["oz·in", u("torque", (POUND_FORCE / 16) * INCH)],
+  ["lb·in", u("torque", POUND_FORCE * INCH)],
   ["g·cm²", u("inertia", 1e-7)],
   ["kg·m²", u("inertia", 1)],
   ["H", u("inductance", 1)],
@@ -256,7 +258,10 @@ export function shownUnit(unit: string): Shown {
   return SHOWN.get(unit) ?? { unit, factor: 1 };
 }
 
-/** A number to at most `digits` significant digits, without exponent in the usual range and without trailing zeros. */
+/**
+ * A number to at most `digits` significant digits, without trailing zeros; the digits before the point are never cut.
+ * Below 1e-4 and from 1e7 on with an exponent.
+ */
 export function formatNumber(value: number, digits = 3): string {
   if (!Number.isFinite(value)) return "–";
   if (value === 0) return "0";
@@ -290,7 +295,10 @@ const SMALLER: Record<string, readonly [number, string][]> = {
   ],
 };
 
-/** Number and unit as shown on a page: `shownUnit` first, then a multiple that keeps the number readable. */
+/**
+ * Number and unit as shown on a page: `shownUnit` first, then a multiple that keeps the number readable. What rounds
+ * to 1 of the larger unit is shown in it, so that 0.9999 s is 1 s and not 1000 ms.
+ */
 export function showQuantity(
   value: number,
   unit: string,
@@ -298,8 +306,9 @@ export function showQuantity(
 ): { readonly number: string; readonly unit: string } {
   const shown = shownUnit(unit);
   const scaled = value * shown.factor;
+  const least = 1 - 0.5 * 10 ** -digits;
   for (const [size, name] of SMALLER[shown.unit] ?? []) {
-    if (Math.abs(scaled) >= size) return { number: formatNumber(scaled / size, digits), unit: name };
+    if (Math.abs(scaled) >= size * least) return { number: formatNumber(scaled / size, digits), unit: name };
   }
   return { number: formatNumber(scaled, digits), unit: shown.unit };
 }
