@@ -19,6 +19,8 @@ export interface EditedFile {
 
 export interface FileEditorProps {
   readonly files: readonly EditedFile[];
+  /** Another number: the texts were replaced from outside, and the editor opens anew with them. */
+  readonly edition: number;
   readonly findings: readonly Finding[];
   readonly goTo: { readonly path: string; readonly line: number } | null;
   readonly onChange: (path: string, text: string) => void;
@@ -42,7 +44,7 @@ export function marksOf(findings: readonly Finding[], path: string): LineMark[] 
 }
 
 /** The files of a proposal, one open at a time; a plain text field on a phone. */
-export function FileEditor({ files, findings, goTo, onChange }: FileEditorProps) {
+export function FileEditor({ files, edition, findings, goTo, onChange }: FileEditorProps) {
   const narrow = useSyncExternalStore(
     subscribe,
     () => matchMedia(NARROW).matches,
@@ -70,9 +72,9 @@ export function FileEditor({ files, findings, goTo, onChange }: FileEditorProps)
       ) : (
         <div className="editor-frame">
           <TextEditor
-            key={open.path}
+            key={`${edition} ${open.path}`}
             path={open.path}
-            text={open.text}
+            startText={open.text}
             marks={marksOf(findings, open.path)}
             goTo={goTo?.path === open.path ? goTo : null}
             onChange={(text) => onChange(open.path, text)}

@@ -38,6 +38,7 @@ export function ProposalEditor({ start, change }: ProposalEditorProps) {
         <section aria-label="Text">
           <FileEditor
             files={files}
+            edition={proposal.edition}
             findings={answer?.report.findings ?? []}
             goTo={goTo}
             onChange={proposal.edit}

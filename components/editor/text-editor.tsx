@@ -8,7 +8,8 @@ import { defineTheme } from "./monaco-setup";
 
 export interface TextEditorProps {
   readonly path: string;
-  readonly text: string;
+  /** What the editor opens with; from then on the text is its own, so that no answer of the page overtakes the typing. */
+  readonly startText: string;
   readonly marks: readonly LineMark[];
   /** Line to put in sight and the cursor on; a new object each time it is asked for. */
   readonly goTo: { readonly line: number } | null;
@@ -35,7 +36,7 @@ const OPTIONS = {
 } as const;
 
 /** Monaco with a level mark beside each line that a finding rests on. Tab leaves it (Ctrl+M changes that). */
-export function TextEditor({ path, text, marks, goTo, onChange }: TextEditorProps) {
+export function TextEditor({ path, startText, marks, goTo, onChange }: TextEditorProps) {
   const [editor, setEditor] = useState<Instance | null>(null);
   const marking = useRef<ReturnType<Instance["createDecorationsCollection"]> | null>(null);
   useEffect(() => {
@@ -62,7 +63,7 @@ export function TextEditor({ path, text, marks, goTo, onChange }: TextEditorProp
       height="min(70vh, 640px)"
       path={path}
       defaultLanguage="plaintext"
-      value={text}
+      defaultValue={startText}
       beforeMount={defineTheme}
       theme="keepstep"
       options={{ ...OPTIONS, ariaLabel: `Text of ${path}. Press Ctrl+M to let Tab move inside the text.` }}

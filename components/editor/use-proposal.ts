@@ -40,6 +40,7 @@ export function useProposal(proposal: Proposal) {
   const [files, setFiles] = useState(() => startingFiles(proposal));
   const [fields, setFields] = useState<ProposalFields>(change?.fields ?? EMPTY_FIELDS);
   const [touched, setTouched] = useState(false);
+  const [edition, setEdition] = useState(0);
   const place = placeOf(proposal);
   const { keyTable, assembly, policy } = start;
   const answer = useLiveCheck({ base: start.files, files, keyTable, assembly, policy });
@@ -62,6 +63,7 @@ export function useProposal(proposal: Proposal) {
   });
   return {
     files,
+    edition,
     fields,
     answer,
     baseReport,
@@ -78,6 +80,7 @@ export function useProposal(proposal: Proposal) {
     restore: (kept: { files: readonly EditedFile[]; fields: ProposalFields }) => {
       setTouched(true);
       setFiles(kept.files);
+      setEdition((present) => present + 1);
       setFields({ ...EMPTY_FIELDS, ...kept.fields });
     },
   };
