@@ -1,6 +1,6 @@
 "use client";
 
-import { useState } from "react";
+import { useEffect, useState } from "react";
 import { useForm, useWatch } from "react-hook-form";
 import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
@@ -81,6 +81,10 @@ export function ReadingForm({
     setTrouble(found);
     if (!found.machine && !found.files) send.mutate({ values, files, machine, modelId });
   });
+  useEffect(() => {
+    // What is missing may stand above the window of a phone.
+    if (trouble.machine || trouble.files) document.querySelector<HTMLElement>("form [aria-invalid]")?.focus();
+  }, [trouble]);
   const another = (): void => {
     send.reset();
     setFiles([]);

@@ -55,7 +55,7 @@ export async function mailSubmission(tx: Tx, change: ChangeRequest): Promise<voi
       lead: `${change.authorName} asks you to decide on ${titleOf(change)}.`,
       paragraphs: [
         change.reason,
-        `It applies to ${effectivityWords(change.effectivity, machines)}. ${CHANGE_CLASS_WORDS[change.class]}.`,
+        `It applies to ${effectivityWords(change.effectivity, machines)} and is of ${CHANGE_CLASS_WORDS[change.class]}.`,
       ],
       lines: await summaryLines(tx, change),
       link: linkTo(change, "Look at the change"),
