@@ -44,17 +44,23 @@ function numbersOf(text: string): Record<string, AxisNumbers> {
   );
 }
 
-/** Types another run current for the X axis: in the code editor, or on a phone in the plain field. */
-async function typeRunCurrent(page: Page, narrow: boolean): Promise<void> {
+const withRunCurrent = (text: string): string => text.replace(/^amps_rms = .*$/m, `amps_rms = ${RUN_AMPS}`);
+
+/** Types another run current for the X axis, the first one in `text`: in the code editor by keys, or on a phone. */
+async function typeRunCurrent(
+  page: Page,
+  { text, narrow }: { text: string; narrow: boolean },
+): Promise<void> {
   const editor = page.getByRole("textbox", { name: `Text of ${PATH}` });
   await expect(editor).toBeAttached();
   if (narrow) {
-    const text = await editor.inputValue();
-    await editor.fill(text.replace(/^amps_rms = .*$/m, `amps_rms = ${RUN_AMPS}`));
+    await editor.fill(withRunCurrent(await editor.inputValue()));
     return;
   }
-  await page.locator(".view-line", { hasText: "amps_rms" }).first().click();
-  await page.keyboard.press("Home");
+  await editor.focus();
+  await page.keyboard.press("Control+Home");
+  const linesAbove = text.split("\n").findIndex((line) => line.startsWith("amps_rms"));
+  for (let line = 0; line < linesAbove; line += 1) await page.keyboard.press("ArrowDown");
   await page.keyboard.press("Shift+End");
   await page.keyboard.type(`amps_rms = ${RUN_AMPS}`);
 }
@@ -71,14 +77,15 @@ test("a text goes in, a change goes through, and the floor shows it", async ({ p
   const machineId = await idOf(engineer, `/machines?q=${serial}`);
   const modelId = await idOf(engineer, `/machine-models?q=${MODEL}`);
 
+  const required = await engineer.request.get(`/api/v1/machines/${machineId}/required-text`);
+  const text = await required.text();
+
   await test.step("the engineer uploads a text and sees its findings", async () => {
-    const required = await engineer.request.get(`/api/v1/machines/${machineId}/required-text`);
-    const asFound = (await required.text()).replace(/^amps_rms = .*$/m, `amps_rms = ${RUN_AMPS}`);
     await visit(engineer, `/machines/${machineId}`);
-    await engineer.getByRole("link", { name: "Add a reading" }).first().click();
+    await engineer.getByRole("main").getByRole("link", { name: "Add a reading" }).first().click();
     await expect(engineer.getByRole("heading", { level: 1, name: "Add a reading" })).toBeVisible();
     await engineer.getByText("Paste the text, or say its format").click();
-    await engineer.getByRole("textbox", { name: "Text", exact: true }).fill(asFound);
+    await engineer.getByRole("textbox", { name: "Text", exact: true }).fill(withRunCurrent(text));
     await engineer.getByLabel("Name of the pasted text").fill(PATH);
     await engineer.getByLabel("Serial number off the plate").fill(serial);
     await engineer.getByRole("button", { name: "Keep the reading" }).click();
@@ -100,9 +107,10 @@ test("a text goes in, a change goes through, and the floor shows it", async ({ p
     await visit(engineer, `/changes/new?model=${modelId}`);
     const checks = engineer.getByRole("region", { name: "What the checks say" });
     await expect(checks).toContainText("0 new ones, 0 cleared");
-    await typeRunCurrent(engineer, narrow);
+    await typeRunCurrent(engineer, { text, narrow });
     await expect(checks).toContainText(/[1-9]\d* new ones?, 0 cleared/);
     await expect(checks.getByRole("heading", { name: "Changed parameters" })).toBeVisible();
+    await expect(checks.getByText("over limit").first()).toBeVisible();
     await engineer.getByLabel("Title").fill(title);
     await engineer.getByLabel("Reason").fill("The carriage loses steps with full racks.");
     await engineer.getByLabel("Effectivity").selectOption({ label: "some machines" });
@@ -115,6 +123,7 @@ test("a text goes in, a change goes through, and the floor shows it", async ({ p
   });
 
   const changeAddress = new URL(engineer.url()).pathname;
+  const label = await inTitleBlock(engineer, "Identification number").innerText();
 
   await test.step("the approver opens the change from the mail and signs", async () => {
     const person = personOf("approver");
@@ -122,7 +131,7 @@ test("a text goes in, a change goes through, and the floor shows it", async ({ p
     const mail = approver
       .getByRole("row")
       .filter({ hasText: person.email })
-      .getByRole("link", { name: title });
+      .getByRole("link", { name: `asks you to decide: ${label} ${title}` });
     await expect(async () => {
       await visit(approver, "/mail");
       await expect(mail).toBeVisible({ timeout: 1_000 });
@@ -130,7 +139,7 @@ test("a text goes in, a change goes through, and the floor shows it", async ({ p
     await mail.click();
     const words = approver.locator("pre");
     await expect(words).toHaveText(
-      new RegExp(`^${engineerPerson.name} asks you to decide on CR-\\d{4} ${title}\\.\\n\\n`),
+      new RegExp(`^${engineerPerson.name} asks you to decide on ${label} ${title}\\.\\n\\n`),
     );
     await expect(words).toContainText("The carriage loses steps with full racks.");
     await expect(words).toContainText(/X run current/i);
@@ -165,18 +174,18 @@ test("a text goes in, a change goes through, and the floor shows it", async ({ p
   await test.step("the technician applies it and proves it", async () => {
     const technician = await pageAs("technician", PHONE);
     await visit(technician, "/work");
-    await technician.getByRole("row").filter({ hasText: title }).getByRole("link", { name: serial }).click();
+    await technician.getByRole("row").filter({ hasText: label }).getByRole("link", { name: serial }).click();
     await expect(technician.getByRole("heading", { level: 1 })).toHaveText(`${serial}: apply and prove`);
     const coming = technician.waitForEvent("download");
     await technician.getByRole("button", { name: `Download the text for ${serial}` }).click();
-    const text = await readFile(await (await coming).path(), "utf8");
-    expect(numbersOf(text).x?.run).toBe(Number(RUN_AMPS));
+    const released = numbersOf(await readFile(await (await coming).path(), "utf8"));
+    expect(released.x?.run).toBe(Number(RUN_AMPS));
     await expect(technician.getByRole("button", { name: "Download it again" })).toBeVisible();
 
     await technician.getByLabel("Serial number off the plate").fill(serial);
     await technician.getByLabel("Layer").selectOption({ label: "stored values" });
     await technician.getByText("Paste the text", { exact: true }).click();
-    await technician.getByRole("textbox", { name: "Text", exact: true }).fill(storedText(numbersOf(text)));
+    await technician.getByRole("textbox", { name: "Text", exact: true }).fill(storedText(released));
     await technician.getByRole("button", { name: "Keep the as-left reading" }).click();
     await expect(technician.getByText(`Kept for ${serial}`)).toBeVisible();
     await expect(technician.getByText("The test on the machine is not recorded yet.").first()).toBeVisible();

@@ -1,11 +1,11 @@
 import { AxeBuilder } from "@axe-core/playwright";
-import type { Browser, Page, Response } from "@playwright/test";
+import type { BrowserContext, BrowserContextOptions, Page, Response } from "@playwright/test";
 import { test as base, expect } from "@playwright/test";
 import type { DemoPerson } from "../../scripts/demo-people.mjs";
 import { demoPeople } from "../../scripts/demo-people.mjs";
 
 type Role = DemoPerson["role"];
-type Session = Awaited<ReturnType<ReturnType<Browser["contexts"]>[number]["storageState"]>>;
+type Session = Awaited<ReturnType<BrowserContext["storageState"]>>;
 
 /** Pixels: the narrowest window that people use here. */
 export const PHONE = { width: 390, height: 844 };
@@ -22,8 +22,11 @@ interface DeskFixtures {
   readonly expectAccessible: (page: Page) => Promise<void>;
   /** A page of its own where nobody is signed in. */
   readonly pageOfNobody: () => Promise<Page>;
-  /** Watched pages must not write errors to the console nor ask any other host. */
-  readonly watch: (page: Page) => void;
+  /**
+   * A page in a context of its own, closed after the test. It must not write errors to the console nor ask any other
+   * host.
+   */
+  readonly open: (options?: BrowserContextOptions) => Promise<Page>;
 }
 
 interface WorkerFixtures {
@@ -99,7 +102,7 @@ async function findSeriousViolations(page: Page): Promise<string[]> {
     );
 }
 
-/** A browser test in which every page is watched; further pages are given to `watch`. */
+/** A browser test in which every page is watched. */
 export const test = base.extend<DeskOptions & DeskFixtures, WorkerFixtures>({
   asksForRefusals: [false, { option: true }],
   sessions: [
@@ -108,31 +111,31 @@ export const test = base.extend<DeskOptions & DeskFixtures, WorkerFixtures>({
     },
     { scope: "worker" },
   ],
-  watch: async ({ baseURL, asksForRefusals }, provide) => {
+  open: async ({ browser, baseURL, asksForRefusals }, provide) => {
     const faults: string[] = [];
     const home = new URL(baseURL ?? "").host;
-    await provide((page) => watchPage(page, { faults, home, asksForRefusals }));
-    expect(faults).toEqual([]);
-  },
-  pageOfNobody: async ({ browser, watch }, provide) => {
-    await provide(async () => {
-      const page = await (await browser.newContext()).newPage();
-      watch(page);
+    const contexts: BrowserContext[] = [];
+    await provide(async (options = {}) => {
+      const context = await browser.newContext(options);
+      contexts.push(context);
+      const page = await context.newPage();
+      watchPage(page, { faults, home, asksForRefusals });
       return page;
     });
+    for (const context of contexts) await context.close();
+    expect(faults).toEqual([]);
   },
-  pageAs: async ({ browser, watch, sessions }, provide) => {
+  pageOfNobody: async ({ open }, provide) => {
+    await provide(() => open());
+  },
+  pageAs: async ({ open, sessions }, provide) => {
     await provide(async (role, viewport) => {
       const session = sessions.get(role);
-      const context = await browser.newContext({
-        ...(session ? { storageState: session } : {}),
-        ...(viewport ? { viewport } : {}),
-      });
-      const page = await context.newPage();
-      watch(page);
-      if (session) return page;
+      const size = viewport ? { viewport } : {};
+      if (session) return open({ storageState: session, ...size });
+      const page = await open(size);
       await signIn(page, personOf(role));
-      sessions.set(role, await context.storageState());
+      sessions.set(role, await page.context().storageState());
       return page;
     });
   },
