@@ -1,6 +1,8 @@
 import type { Driver, DriveTrain, Load, Motor, Mount, SetPoint } from "@/lib/domain/assembly";
 import type { ParameterName } from "@/lib/domain/parameters";
 import { parameterDefinition } from "@/lib/domain/parameters";
+import { formatNumber } from "@/lib/domain/units";
+import type { ParameterValue } from "@/lib/domain/values";
 import type { AxisView, Computed, Datum, Known, Missing } from "./types";
 
 interface Parts {
@@ -107,12 +109,16 @@ export function fromText(
 ): Datum {
   const found = axis.parameter(name);
   if (!found) return missing(axisPath(axis, name));
-  if (found.value < 0 || (sign === "positive" && found.value === 0))
-    return unusable(
-      `${parameterDefinition(name).label} is ${found.typed.value} in the text; it must be ${sign === "positive" ? "more than 0" : "0 or more"}.`,
-      axisPath(axis, name),
-    );
+  if (found.value < 0 || (sign === "positive" && found.value === 0)) return senseless(axis, found, sign);
   return given(found.value);
+}
+
+/** A parameter whose sign makes no sense, in the words of the text. */
+export function senseless(axis: AxisView, found: ParameterValue, sign: "positive" | "not-negative"): Missing {
+  const { label } = parameterDefinition(found.parameter);
+  const typed = `${formatNumber(found.typed.value, 6)} ${found.typed.unit ?? ""}`.trim();
+  const wanted = sign === "positive" ? "more than 0" : "0 or more";
+  return unusable(`${label} is ${typed} in the text; it must be ${wanted}.`, axisPath(axis, found.parameter));
 }
 
 type Values<T> = { readonly [K in keyof T]: number };

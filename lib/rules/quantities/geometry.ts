@@ -5,7 +5,17 @@ import {
   stepsPerTravel,
   travelPerMotorTurn,
 } from "@/lib/physics/drive-train";
-import { axisPath, computed, fromText, gather, given, hardware, missing, orDefault } from "../data";
+import {
+  axisPath,
+  computed,
+  fromText,
+  gather,
+  given,
+  hardware,
+  missing,
+  orDefault,
+  senseless,
+} from "../data";
 import { plain, showScale } from "../show";
 import type { AxisView, Datum } from "../types";
 import type { QuantityDefinition } from "./definition";
@@ -86,7 +96,8 @@ export const EXPECTED_SCALE: QuantityDefinition = {
 /** Size of the text's scale, 1/mm or 1/deg; its sign is the direction and nothing else. */
 export function textScale(axis: AxisView): Datum {
   const found = axis.parameter("steps_per_mm");
-  if (!found || found.value === 0) return missing(axisPath(axis, "steps_per_mm"));
+  if (!found) return missing(axisPath(axis, "steps_per_mm"));
+  if (found.value === 0) return senseless(axis, found, "positive");
   return given(Math.abs(found.value));
 }
 

@@ -1,4 +1,3 @@
-import { PARAMETER_NAMES } from "@/lib/domain/parameters";
 import type { ParameterName } from "@/lib/domain/parameters";
 import { QUANTITIES, QUANTITY_NAMES } from "@/lib/domain/quantities";
 import type { QuantityName } from "@/lib/domain/quantities";
@@ -84,9 +83,4 @@ const MOVED_BY: ReadonlyMap<QuantityName, ReadonlySet<string>> = new Map(
 /** Whether another value of a parameter can move a quantity. */
 export function rests(name: QuantityName, parameter: ParameterName): boolean {
   return MOVED_BY.get(name)?.has(parameter) === true;
-}
-
-/** The parameters that a quantity rests on, in the order of the parameter list. */
-export function quantityParameters(name: QuantityName): ParameterName[] {
-  return PARAMETER_NAMES.filter((parameter) => rests(name, parameter));
 }

@@ -237,8 +237,16 @@ describe("a parameter that the text lacks", () => {
       texts({ acceleration: { typed: -3000, unit: "mm/s^2", factor: 1e-3 } }),
     ).finding("torque-margin");
     expect([level, needs]).toEqual(["cannot", ["axes.x.acceleration"]]);
-    expect(sentence).toContain("Acceleration is -3000 in the text; it must be 0 or more.");
+    expect(sentence).toContain("Acceleration is -3000 mm/s^2 in the text; it must be 0 or more.");
     expect(sentence).not.toContain("Not in the text");
+  });
+
+  it("is as good as missing where a scale or the microsteps are 0", () => {
+    const scale = world(texts({ steps_per_mm: { typed: 0, unit: "steps/mm" } }));
+    expect(scale.finding("steps-per-mm").sentence).toContain("Steps per mm is 0 steps/mm in the text");
+    expect(scale.finding("step-rate").level).toBe("cannot");
+    const microsteps = world(texts({ microsteps: { typed: 0, unit: null } }));
+    expect(microsteps.finding("microstep-current").sentence).toContain("it must be more than 0");
   });
 });
 

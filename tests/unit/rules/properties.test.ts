@@ -127,7 +127,8 @@ describe("facts of the trade", () => {
     const found = world();
     expect(found.finding("supply-voltage").level).toBe("within");
     expect(found.finding("braking-voltage").level).toBe("within");
-    expect(0.8 * 2.1).toBeLessThan(3.2);
+    const { resistance_ohm, rated_current_a } = found.input.assembly.axes[0]!.motor!;
+    expect(resistance_ohm! * rated_current_a!).toBeCloseTo(3.15, 12);
   });
 
   it("half the acceleration halves the dynamic part of the torque (common practice, no source)", () => {

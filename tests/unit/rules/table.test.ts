@@ -11,7 +11,6 @@ import {
   supplySchema,
 } from "@/lib/domain/assembly";
 import { PARAMETER_NAMES } from "@/lib/domain/parameters";
-import { quantityParameters } from "@/lib/rules/quantities/table";
 import { RULES } from "@/lib/rules/table";
 import { unlockedBy } from "@/lib/rules/unlocks";
 
@@ -91,13 +90,5 @@ describe("what a field unlocks", () => {
 
   it("is nothing for a field that no check uses", () => {
     expect(unlockedBy("motor", "thermal_time_constant_s")).toEqual([]);
-  });
-});
-
-describe("the parameters of a quantity", () => {
-  it("are those that can move it", () => {
-    expect(quantityParameters("torque_required")).toEqual(["acceleration"]);
-    expect(quantityParameters("step_rate")).toEqual(["microsteps", "steps_per_mm", "max_speed"]);
-    expect(quantityParameters("winding_c")).toEqual(["run_current", "reference_voltage", "current_scale"]);
   });
 });
