@@ -38,29 +38,36 @@ function Drawing({ effect, scale }: { effect: Effect; scale: GaugeScale }) {
 
 function Row({ effect, scale }: { effect: Effect; scale: GaugeScale }) {
   return (
-    <tr>
-      <td className="letters">
+    <tr role="row">
+      <td role="cell" className="letters">
         <RevisionMarks letters={effect.letters} />
       </td>
-      <th scope="row">{effect.label}</th>
-      <NumberCell>
+      <th scope="row" role="rowheader">
+        {effect.label}
+      </th>
+      <NumberCell role="cell" className="was" data-label="was">
         <Quantity value={effect.was} unit={effect.unit} />
       </NumberCell>
-      <NumberCell className="to-be">
+      <NumberCell role="cell" className="to-be" data-label="to be">
         <Quantity value={effect.toBe} unit={effect.unit} />
       </NumberCell>
-      <NumberCell>
+      <NumberCell role="cell" className="limit-cell" data-label={effect.limit === null ? undefined : "limit"}>
         <Limit limit={effect.limit} sense={effect.limitSense} unit={effect.unit} />
       </NumberCell>
-      <td className="gauge-cell">
+      <td role="cell" className="gauge-cell">
         <Drawing effect={effect} scale={scale} />
       </td>
-      <td>{effect.levelToBe && <LevelMark level={effect.levelToBe} />}</td>
+      <td role="cell" className="level-cell">
+        {effect.levelToBe && <LevelMark level={effect.levelToBe} />}
+      </td>
     </tr>
   );
 }
 
-/** What a change does physically, before and after against its limit; one table an axis. */
+/**
+ * What a change does physically, before and after against its limit; one table an axis. On a phone each row is set as
+ * a block, so the parts say their role themselves.
+ */
 export function EffectsTable({ effects }: EffectsTableProps) {
   return (
     <>
@@ -69,24 +76,26 @@ export function EffectsTable({ effects }: EffectsTableProps) {
         const where = axis === null ? "the machine" : `the ${axisTitle(axis)}`;
         return (
           <Table key={axis ?? ""} caption={`Effects on ${where}`} className="effects">
-            <thead>
-              <tr>
-                <td className="letters" />
-                <Head>Effect</Head>
-                <Head number className="was-head">
+            <thead role="rowgroup">
+              <tr role="row">
+                <td role="cell" className="letters" />
+                <Head role="columnheader">Effect</Head>
+                <Head role="columnheader" number className="was-head">
                   Was
                 </Head>
-                <Head number className="to-be-head">
+                <Head role="columnheader" number className="to-be-head">
                   To be
                 </Head>
-                <Head number>Limit</Head>
-                <Head className="gauge-cell">
+                <Head role="columnheader" number>
+                  Limit
+                </Head>
+                <Head role="columnheader" className="gauge-cell">
                   <GaugeKey />
                 </Head>
-                <Head>Level</Head>
+                <Head role="columnheader">Level</Head>
               </tr>
             </thead>
-            <tbody>
+            <tbody role="rowgroup">
               {items.map((effect) => (
                 <Row key={effect.quantity} effect={effect} scale={scale} />
               ))}

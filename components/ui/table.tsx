@@ -14,7 +14,7 @@ export interface TableProps {
 export function Table({ caption, captionHidden = false, children, className }: TableProps) {
   return (
     <ScrollRegion label={caption}>
-      <table className={className === undefined ? "ruled" : `ruled ${className}`}>
+      <table role="table" className={className === undefined ? "ruled" : `ruled ${className}`}>
         <caption className={captionHidden ? "visually-hidden" : undefined}>{caption}</caption>
         {children}
       </table>
