@@ -15,12 +15,12 @@ const MOST_SUGGESTED = 1000;
  * enabled keys without a rule are listed with suggestions.
  */
 export function mapDocuments(input: ResolveInput): Mapping {
-  const { values, unmapped, diagnostics } = resolve(input);
-  const suggest = suggester(input.axes);
+  const { axes, values, unmapped, diagnostics } = resolve(input);
+  const suggest = suggester(axes);
   return {
-    parameters: inOrder([...values.values()].map(toValue), input.axes),
+    parameters: inOrder([...values.values()].map(toValue), axes),
     unmapped: unmapped.map((place, index) =>
-      toUnmapped(place, input, index < MOST_SUGGESTED ? suggest : null),
+      toUnmapped(place, { ...input, axes }, index < MOST_SUGGESTED ? suggest : null),
     ),
     diagnostics: diagnostics.map((list) => list.all()),
   };

@@ -7,6 +7,7 @@ import type { Span } from "@/lib/domain/span";
 import type { UnitContext } from "@/lib/domain/units";
 import type { Scalar } from "@/lib/parsers/scalar";
 import type { Document, Entry } from "@/lib/parsers/types";
+import { axesOfTexts } from "./axes-of-texts";
 import { compileTable, type CompiledTable, type Target } from "./compile";
 import { readParameter, type Reading } from "./read-value";
 import type { AxisShape } from "./types";
@@ -14,6 +15,7 @@ import type { AxisShape } from "./types";
 export interface ResolveInput {
   readonly documents: readonly Document[];
   readonly keyTable: KeyTable;
+  /** In the machine's order; none: those that the texts speak of (`axesOfTexts`). */
   readonly axes: readonly AxisShape[];
   /** Layer that the texts were read from; rules of another layer do not apply. */
   readonly layer?: Layer | undefined;
@@ -47,6 +49,8 @@ export interface Resolution {
   /** Enabled places that no rule names. */
   readonly unmapped: readonly UnmappedPlace[];
   readonly diagnostics: readonly DiagnosticList[];
+  /** Those given, or those that the texts speak of. */
+  readonly axes: readonly AxisShape[];
   /** Unit context of an axis (any case); of the machine for null. */
   readonly contextOf: (axis: string | null) => UnitContext;
 }
@@ -63,7 +67,8 @@ export function parameterKey(axis: string | null, parameter: ParameterName): str
 }
 
 /** Finds which value of the texts counts for each parameter. */
-export function resolve(input: ResolveInput): Resolution {
+export function resolve(given: ResolveInput): Resolution {
+  const input = given.axes.length > 0 ? given : { ...given, axes: axesOfTexts(given) };
   const table = compileTable(input);
   const found: Found = {
     table,
@@ -86,6 +91,7 @@ export function resolve(input: ResolveInput): Resolution {
   for (const shape of input.axes) contexts.set(shape.axis.toLowerCase(), fullContext(shape, values));
   settle(found, values, contextOf, (parameter) => !BASE_OF_UNITS.has(parameter));
   return {
+    axes: input.axes,
     values,
     places: found.places,
     unmapped: found.unmapped,

@@ -128,6 +128,35 @@ describe("keys for axes that the machine does not have", () => {
   });
 });
 
+describe("without any hardware", () => {
+  const text =
+    "axis.Shoulder.run_ma = 800\naxis.shoulder.vmax = 90 deg/s\naxis.x.run_ma = 900\nZ_MAX = 200\ndefault_max = 3\nsupply = 24 V";
+  const rules = [
+    RUN,
+    rule("axis.{axis}.vmax", "max_speed"),
+    rule("{axis}_max", "travel_max", { unit: "mm" }),
+    rule("supply", "supply_voltage"),
+    rule("accel", "acceleration", { axis: "Y", unit: "m/s²" }),
+  ];
+
+  it("the axes are those that the texts and the key table name", () => {
+    expect(said({ text: `${text}\naccel = 2`, rules, axes: [] })).toEqual([
+      "Y acceleration 2 m/s²",
+      "Shoulder run_current 0.8 A rms",
+      `Shoulder max_speed ${Number((Math.PI / 2).toPrecision(9))} rad/s`,
+      "x run_current 0.9 A rms",
+      "Z travel_max 0.2 m",
+      "machine supply_voltage 24 V",
+    ]);
+  });
+
+  it("commented-out keys and those of another layer name none", () => {
+    const other = [{ ...RUN, layer: "stored" as const }];
+    expect(said({ text: "axis.x.run_ma = 900", rules: other, axes: [], layer: "file" })).toEqual([]);
+    expect(said({ text: "# axis.x.run_ma = 900", rules, axes: [] })).toEqual([]);
+  });
+});
+
 describe("a unit", () => {
   it("in the text beats the key table's", () => {
     expect(said({ text: "axis.x.run_ma = 0.8 A", rules: [RUN] })).toEqual(["X run_current 0.8 A rms"]);
