@@ -58,7 +58,7 @@ function skipSpace(text: string, start: number, limit: number): number {
 }
 
 /** A backslash directly before a line end joins two lines. */
-export function isSplice(text: string, at: number): boolean {
+function isSplice(text: string, at: number): boolean {
   return text.charCodeAt(at) === CHAR.backslash && isLineEnd(text.charCodeAt(at + 1));
 }
 

@@ -61,6 +61,17 @@ describe.each(FORMATS)("texts of the format %s", { timeout: TIMEOUT }, (format) 
     );
   });
 
+  it("come back byte for byte when they are large", () => {
+    fc.assert(
+      fc.property(TEXTS[format], fc.integer({ min: 100, max: 400 }), ({ text }, times) => {
+        const large = `${text}\n`.repeat(times);
+        const document = parse(large, format);
+        expect(stringify(document) === large && tiles(document)).toBe(true);
+      }),
+      { numRuns: 20 },
+    );
+  });
+
   it("give the keys, values and comments that were put in, in their order", () => {
     fc.assert(
       fc.property(TEXTS[format], ({ text, entries }) => {
