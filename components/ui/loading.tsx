@@ -9,21 +9,3 @@ export function Loading({ children }: { readonly children: ReactNode }) {
     </div>
   );
 }
-
-export interface ProgressProps {
-  readonly label: string;
-  readonly done: number;
-  readonly of: number;
-}
-
-/** How much of a long work is done, in words and as a line. */
-export function Progress({ label, done, of }: ProgressProps) {
-  return (
-    <div className="progress">
-      <progress value={done} max={of} aria-label={label} />
-      <p>
-        {label}: {done} of {of}
-      </p>
-    </div>
-  );
-}

@@ -1,7 +1,30 @@
 import { describe, expect, it } from "vitest";
-import { COLOURS, contrast, GROUND_COLOURS, luminance, TEXT_COLOURS } from "@/components/ui/colours";
+import { COLOURS, type ColourName } from "@/components/ui/colours";
+import { contrast, luminance } from "./contrast";
 
 const SCHEMES = ["light", "dark"] as const;
+
+/** Colours that letters are set in. */
+const TEXT_COLOURS: readonly ColourName[] = [
+  "ink",
+  "grey",
+  "blueprint",
+  "copper",
+  "over",
+  "near",
+  "within",
+  "cannot",
+];
+
+/** Grounds that letters stand on. */
+const GROUND_COLOURS: readonly ColourName[] = ["paper", "sheet", "blueprint-wash", "copper-wash"];
+
+/** Neither set in nor written on, or proved by a test of their own below. */
+const OTHERS: readonly ColourName[] = ["hairline", "edge", "copper-solid", "copper-pressed", "on-copper"];
+
+it("every colour of the table has a role", () => {
+  expect([...TEXT_COLOURS, ...GROUND_COLOURS, ...OTHERS].sort()).toEqual(Object.keys(COLOURS).sort());
+});
 
 describe("contrast", () => {
   it("is 21 between black and white and 1 between equals (WCAG 2.2)", () => {
