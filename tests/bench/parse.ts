@@ -4,6 +4,7 @@ import { stringify } from "@/lib/parsers/stringify";
 
 const MEGABYTE = 1_000_000;
 const RUNS = 7;
+const WARM_UP = 3;
 
 /** A line-family text of one megabyte: sections, numbers with and without units, quoted names, comments, disabled keys. */
 export function megabyteOfLines(): string {
@@ -44,9 +45,11 @@ function median(times: readonly number[]): number {
   return [...times].sort((a, b) => a - b)[times.length >> 1] ?? NaN;
 }
 
-/** Medians in milliseconds of two works that take turns, so that a busy machine slows both alike. The first turn does not count. */
+/** Medians in milliseconds of two works that take turns, so that a busy machine slows both alike. The first turns do not count. */
 function medianTimes(one: () => unknown, other: () => unknown): [number, number] {
-  const turns = Array.from({ length: RUNS + 1 }, () => [timeOf(one), timeOf(other)] as const).slice(1);
+  const turns = Array.from({ length: WARM_UP + RUNS }, () => [timeOf(one), timeOf(other)] as const).slice(
+    WARM_UP,
+  );
   return [median(turns.map(([time]) => time)), median(turns.map(([, time]) => time))];
 }
 

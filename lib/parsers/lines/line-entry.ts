@@ -9,7 +9,6 @@ const NO_VALUE: ParsedValue = { kind: "none" };
 export class LineEntry implements Entry {
   id = 0;
   section: string | null = null;
-  key = "";
   value: ParsedValue = NO_VALUE;
   disabled = false;
   shadowed = false;
@@ -38,6 +37,10 @@ export class LineEntry implements Entry {
     const quoted = keyEnd - keyStart >= 2 && isQuote(text.charCodeAt(keyStart));
     const closed = quoted && text.charCodeAt(keyEnd - 1) === text.charCodeAt(keyStart);
     return closed ? text.slice(keyStart + 1, keyEnd - 1) : text.slice(keyStart, keyEnd);
+  }
+
+  get key(): string {
+    return this.section === null ? this.name : `${this.section}.${this.name}`;
   }
 
   get path(): readonly string[] {

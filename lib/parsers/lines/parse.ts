@@ -2,7 +2,7 @@ import type { Span } from "@/lib/domain/span";
 import { CHAR, skipBlanks, trimBlanks } from "../chars";
 import { diagnosticList, type DiagnosticList } from "../diagnostic-list";
 import { Pieces } from "../pieces";
-import type { Manner } from "../scalar";
+import { readScalar, type Manner } from "../scalar";
 import { PIECE, type Document, type Entry } from "../types";
 import { readValue, type ValueFault } from "../value";
 import { isName, isTechnical, readsAsKey } from "./disabled";
@@ -179,7 +179,10 @@ function readKey(reader: Reader, i: number): void {
   count(reader, entry);
 }
 
+/** Reads the value of an entry. Numbers and truth values, the most of them, come first and need no span. */
 function readValueOf({ text }: Reader, entry: LineEntry): ValueFault | null {
+  entry.value = readScalar(text, entry.valueStart, entry.valueEnd, MANNER);
+  if (entry.value.kind !== "text") return null;
   const { value, fault } = readValue({ text, span: entry.valueSpan, manner: MANNER });
   entry.value = value;
   return fault;
@@ -193,18 +196,16 @@ function reportFault(reader: Reader, fault: ValueFault, entry: LineEntry): void 
 
 function place({ entries }: Reader, entry: LineEntry, section: string | null): void {
   entry.section = section;
-  entry.key = section === null ? entry.name : `${section}.${entry.name}`;
   entry.id = entries.length;
   entries.push(entry);
 }
 
 /** Lets a new enabled entry take the place of an earlier one of the same key. */
 function count(reader: Reader, entry: LineEntry): void {
-  const { name, key } = entry;
+  const { name } = entry;
   const dot = name.lastIndexOf(".");
   const rest = dot < 0 ? name : name.slice(dot + 1);
-  const under =
-    dot < 0 ? reader.inSection : countingUnder(reader, key.slice(0, key.length - rest.length - 1));
+  const under = dot < 0 ? reader.inSection : countingUnder(reader, entry.key.slice(0, -rest.length - 1));
   const before = under.get(rest);
   if (before) shadow(reader, before, entry);
   under.set(rest, entry);
