@@ -33,6 +33,7 @@ export default defineConfig({
           pool: "forks",
           fileParallelism: false,
           globalSetup: ["tests/support/global-database.ts"],
+          setupFiles: ["tests/support/own-database.ts"],
           testTimeout: 30_000,
           hookTimeout: 60_000,
         },

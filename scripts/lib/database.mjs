@@ -25,6 +25,12 @@ export async function ensureDatabase(serverUrl, name) {
   return databaseOn(serverUrl, name);
 }
 
+/** Makes a database as a copy of one that nobody is connected to; gives its connection string. */
+export async function copyDatabase(serverUrl, { name, template }) {
+  await query(serverUrl, `create database "${name}" template "${template}"`);
+  return databaseOn(serverUrl, name);
+}
+
 /** Removes the database, whoever is connected to it. */
 export async function dropDatabase(serverUrl, name) {
   await query(serverUrl, `drop database if exists "${name}" with (force)`);

@@ -69,7 +69,11 @@ function watch(child: ChildProcess): Started {
   });
   const said = async (text: string) => {
     while (!output.includes(text)) {
-      if (child.exitCode !== null) throw new Error(`It ended before it said "${text}": ${output}${sentence}`);
+      if (child.exitCode !== null) {
+        const { code } = await ended;
+        if (!output.includes(text))
+          throw new Error(`It ended (${code}) before it said "${text}": ${output}${sentence}`);
+      }
       await delay(50);
     }
   };
