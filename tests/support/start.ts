@@ -5,6 +5,7 @@ import { createServer } from "node:net";
 import { tmpdir } from "node:os";
 import path from "node:path";
 import { setTimeout as delay } from "node:timers/promises";
+import { isFree } from "../../scripts/lib/ports.mjs";
 
 export const ROOT = path.resolve(__dirname, "../..");
 const TEST_ONLY = /^(DATABASE_URL|SMTP_URL|NEXTAUTH_|npm_|VITEST|NODE_ENV|NODE_OPTIONS|PORT$|TZ$)/;
@@ -118,9 +119,13 @@ export async function holdPort(): Promise<{ port: number; release: () => Promise
   return { port: address.port, release: () => new Promise((resolve) => server.close(() => resolve())) };
 }
 
-/** A port that was free a moment ago. */
+/**
+ * A port that was free a moment ago, below those that the system hands out for outgoing connections: one of these
+ * could hold it by the time it is wanted.
+ */
 export async function freePort(): Promise<string> {
-  const { port, release } = await holdPort();
-  await release();
-  return String(port);
+  for (;;) {
+    const port = 20_000 + Math.floor(Math.random() * 12_000);
+    if (await isFree(port)) return String(port);
+  }
 }
