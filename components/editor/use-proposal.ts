@@ -5,6 +5,7 @@ import { useEffect, useMemo, useState } from "react";
 import { useMutation } from "@tanstack/react-query";
 import { checkConfiguration } from "@/lib/review/check";
 import { apiCall, ProblemError } from "@/components/api";
+import { keepUnsent } from "@/components/changes/unsent";
 import type { EditedFile } from "./file-editor";
 import { forgetDraft, keepDraft } from "./kept-draft";
 import type { EditedChange, ProposalFields, ProposalStartData } from "./proposal-types";
@@ -132,7 +133,9 @@ async function send({ start, change, files, fields, submit }: Sent): Promise<Bri
       ifMatch: saved.lockVersion,
     });
   } catch (error) {
-    if (error instanceof ProblemError && !change) return saved;
-    throw error;
+    if (change || !(error instanceof ProblemError)) throw error;
+    // The page of the draft is the place to submit it again; here a second try would make a second draft.
+    keepUnsent(saved.id, error.message);
+    return saved;
   }
 }

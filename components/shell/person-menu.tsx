@@ -65,6 +65,7 @@ export function PersonMenu({ name, role }: PersonMenuProps) {
         ref={button}
         type="button"
         className="person-button"
+        aria-label={`${name}, menu`}
         aria-expanded={open}
         aria-controls={id}
         onClick={() => setOpen(!open)}

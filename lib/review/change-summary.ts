@@ -4,7 +4,9 @@ import { needWords } from "@/lib/domain/need-words";
 import { parameterLabel } from "@/lib/domain/parameters";
 import { joinWords } from "@/lib/domain/sentences";
 import { formatNumber, showText } from "@/lib/domain/units";
+import { RULES } from "@/lib/rules/table";
 import { axisWord } from "./axis-word";
+import { gaugeDrawing } from "./gauge-text";
 import { showValue } from "./show-value";
 import type { Effect, ParameterChange } from "./types";
 
@@ -25,11 +27,11 @@ export function changeSummary({ changes, effects, findings }: ChangeSummaryInput
     .sort((a, b) => levelRank(a.level) - levelRank(b.level));
   const parts = [
     part("Parameters (was → to be)", changes.map(changeLine)),
-    part("Effects (was → to be)", effects.map(effectLine)),
     part(
-      "Findings",
-      standing.map(({ level, sentence }) => `${LEVEL_WORDS[level]}: ${sentence}`),
+      "Effects (was → to be; in the gauges o is was, * is to be, # the limit)",
+      effects.flatMap((effect) => [effectLine(effect), ...effectGauge(effect)]),
     ),
+    part("Findings", standing.map(findingLine)),
   ].filter((lines) => lines.length > 0);
   return parts.flatMap((lines, index) => (index === 0 ? lines : ["", ...lines]));
 }
@@ -59,6 +61,23 @@ function effectLine(effect: Effect): string {
   const numbers =
     was === null && toBe === null ? "no number" : `${shown(was, effect)} → ${shown(toBe, effect)}`;
   return `${subject(axis, label)}: ${numbers}${limitText(effect)}${level}${why}${by}`;
+}
+
+/** The effect drawn in one line of characters, where it has a value and a limit to be held against. */
+function effectGauge({ was, toBe, limit, nearLimit, limitSense }: Effect): string[] {
+  const drawing = gaugeDrawing({
+    reading: { value: toBe, before: was, limit, nearLimit, sense: limitSense },
+  });
+  return drawing === null ? [] : [`  ${drawing}`];
+}
+
+function findingLine({ level, axis, ruleId, sentence }: Finding): string {
+  return `${LEVEL_WORDS[level]}: ${subject(axis, ruleTitle(ruleId))}. ${sentence}`;
+}
+
+/** The name of a check; its id where this release no longer has it. */
+function ruleTitle(id: string): string {
+  return RULES.find((rule) => rule.id === id)?.title ?? id;
 }
 
 function limitText(effect: Effect): string {

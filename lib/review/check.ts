@@ -6,6 +6,8 @@ import { inspectText } from "@/lib/parsers/inspect";
 import { parseText } from "@/lib/parsers/parse-text";
 import type { Document } from "@/lib/parsers/types";
 import { evaluateRules } from "@/lib/rules/evaluate-rules";
+import type { Assembly, AxisAssembly } from "@/lib/domain/assembly";
+import type { ParameterValue } from "@/lib/domain/values";
 import { axisShapes } from "./axis-shapes";
 import type { CheckInput, CheckReport, ConfigurationFile, DocumentReport } from "./types";
 
@@ -18,7 +20,7 @@ export function checkConfiguration(input: CheckInput): CheckReport {
   const mapping = mapFiles(documents, input);
   const { quantities, findings, provenance } = evaluateRules({
     parameters: mapping.parameters,
-    assembly: input.assembly,
+    assembly: withAxesOfTexts(input.assembly, mapping.parameters),
     policy: input.policy,
   });
   return {
@@ -47,6 +49,19 @@ export function mapFiles(
     axes: axisShapes(assembly),
     ...(layer === undefined ? {} : { layer }),
   });
+}
+
+/** The assembly with the axes that only the texts name: nothing is known of their hardware, and the checks say so. */
+function withAxesOfTexts(assembly: Assembly, parameters: readonly ParameterValue[]): Assembly {
+  const found = new Map<string, AxisAssembly>();
+  for (const { axis, unit } of parameters) {
+    if (axis === null || assembly.axes.some((known) => known.axis.toLowerCase() === axis.toLowerCase()))
+      continue;
+    if (unit.includes("deg") || unit.includes("rad"))
+      found.set(axis, { axis, drive_train: { kind: "rotary" } });
+    else if (!found.has(axis)) found.set(axis, { axis });
+  }
+  return found.size === 0 ? assembly : { ...assembly, axes: [...assembly.axes, ...found.values()] };
 }
 
 interface Place {

@@ -47,7 +47,7 @@ export function missingSentence({ needs, reason, refused = [] }: Missing, axis: 
     sentence("Not in the text", list("text")),
     reason,
   ];
-  return `Cannot be checked. ${sentences.filter((words) => words !== "").join(" ")}`.trim();
+  return `${sentences.filter((words) => words !== "").join(" ")}`.trim();
 }
 
 function sentence(head: string, words: readonly string[]): string {

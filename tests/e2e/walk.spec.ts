@@ -7,9 +7,9 @@ const MODEL = "dosing-gantry-3";
 const PATH = "gantry/axes.conf";
 /** On baseline in the demo; each width of the window walks with a machine of its own. */
 const SERIALS: Readonly<Record<string, string>> = { desk: "DG-118", phone: "DG-119" };
-/** A rms: more than the driver and the motor of the X axis are made for. */
 /** Each walk changes another axis, so that the second one does not find its change in the baseline already. */
 const AXES: Readonly<Record<string, "x" | "y">> = { desk: "x", phone: "y" };
+/** A rms: more than the driver and the motor of either axis are made for. */
 const RUN_AMPS = "2.4";
 const WHY_ACCEPTABLE = "The axis moves one minute an hour; its case was measured at 52 °C after a shift.";
 
@@ -75,7 +75,7 @@ test("a text goes in, a change goes through, and the floor shows it", async ({ p
   const narrow = project.name === "phone";
   const serial = SERIALS[project.name] ?? "";
   const axis = AXES[project.name] ?? "x";
-  const title = `Stronger X current on ${serial}`;
+  const title = `Stronger ${axis.toUpperCase()} current on ${serial}`;
   const engineerPerson = personOf("engineer");
   const engineer = await pageAs("engineer");
   const machineId = await idOf(engineer, `/machines?q=${serial}`);

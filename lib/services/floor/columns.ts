@@ -19,14 +19,15 @@ const REQUIRED = `
   join revision_parameters p on p.revision_id = b.revision_id
   where m.model_id = any($1::uuid[]) and mb.from_at <= $2 and (mb.until_at is null or mb.until_at > $2)`;
 
-/** Axes of the models as designed, in their order. */
+/** Axes of the models as designed: those with a letter of ISO 841 in its order, the others after them in their model's. */
 const AXES = `
   select a.axis, min(a.position)::int as position
   from axes a
   join machine_model_versions v on v.id = a.model_version_id
   join machine_models mm on mm.id = v.model_id and mm.version = v.version
   where mm.id = any($1::uuid[])
-  group by a.axis order by 2, 1`;
+  group by a.axis
+  order by nullif(strpos('xyzabcuvw', lower(substring(a.axis from '^[A-Za-z]\\d?$')::char(1))), 0) nulls last, 2, 1`;
 
 interface Asked {
   readonly modelIds: readonly string[];

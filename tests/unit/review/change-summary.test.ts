@@ -73,6 +73,7 @@ describe("changeSummary", () => {
           toBe: 0.83,
           limit: 1,
           limitSense: "lower",
+          nearLimit: 1.2,
           letters: ["A", "B"],
         }),
       ],
@@ -92,14 +93,16 @@ describe("changeSummary", () => {
       "  B  Maximum step rate: not in the text → 45 kHz, axes.conf line 3",
       "  C  X axis, direction reversed: no → yes, axes.conf line 50",
       "",
-      "Effects (was → to be)",
+      "Effects (was → to be; in the gauges o is was, * is to be, # the limit)",
       "  X axis, motor case: 51.2 °C → 64.1 °C, limit ≤ 58 °C, over limit (A)",
+      "    [-------------=o#/*//////]",
       "  Bus voltage after braking: no number, cannot check, not known: bus capacitance of the supply",
       "  X axis, torque margin: 0.91 → 0.83, limit ≥ 1, over limit (A, B)",
+      "    [------------===#/o*/////]",
       "",
       "Findings",
-      "  over limit: The motor case would reach 64 °C.",
-      "  near limit: The step rate is near.",
+      "  over limit: X axis, temperature of the mount. The motor case would reach 64 °C.",
+      "  near limit: X axis, step rate. The step rate is near.",
     ]);
   });
 

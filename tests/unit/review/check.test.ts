@@ -45,6 +45,17 @@ describe("checkConfiguration", () => {
     expect(report.provenance.map(({ axis, parameter }) => `${axis} ${parameter}`)).toContain("x run_current");
   });
 
+  it("checks the axes that only the texts name, and says that nothing is known of their hardware", () => {
+    const { parameters, findings } = checkConfiguration({ ...input(TEXT), assembly: { axes: [] } });
+    expect(new Set(parameters.map(({ axis }) => axis))).toEqual(new Set(["x", "z", null]));
+    const torque = findings.filter(({ ruleId }) => ruleId === "torque-margin");
+    expect(torque.map(({ axis, level }) => [axis, level])).toEqual([
+      ["x", "cannot"],
+      ["z", "cannot"],
+    ]);
+    expect(torque[0]?.needs).toContain("axes.x.motor.holding_torque_nm");
+  });
+
   it("gives the same report for the same input", () => {
     expect(check(TEXT)).toEqual(check(TEXT));
   });

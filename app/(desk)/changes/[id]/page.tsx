@@ -11,6 +11,7 @@ import { DeviationsTouched } from "@/components/changes/deviations-touched";
 import { EvaluationFindings } from "@/components/changes/evaluation-findings";
 import { MachinesProgress } from "@/components/changes/machines-progress";
 import { StaleNotice } from "@/components/changes/stale-notice";
+import { UnsentNotice } from "@/components/changes/unsent-notice";
 import { Versions } from "@/components/changes/versions";
 import { EffectsTable } from "@/components/findings/effects-table";
 import { RecordList } from "@/components/record/record-list";
@@ -44,6 +45,7 @@ export default async function ChangePage({ params, searchParams }: ChangePagePro
   return (
     <Sheet>
       <Head change={change} past={past} />
+      <UnsentNotice changeId={id} />
       <StaleNotice
         changeId={id}
         lockVersion={change.lockVersion}
