@@ -29,7 +29,6 @@ export function ChangeTitleBlock({ change, actor, past }: ChangeTitleBlockProps)
   const maySign = !past && change.state === "evaluation" && refusal(change, actor, "changes.decide") === null;
   return (
     <TitleBlock
-      legalOwner="The team that runs these machines"
       title={title}
       documentType={
         <>

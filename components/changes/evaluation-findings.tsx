@@ -1,6 +1,7 @@
 import Link from "next/link";
 import type { ChangeView } from "./change-view";
 import { plural } from "@/lib/domain/sentences";
+import { findingWords } from "@/lib/review/finding-words";
 import { ClearedFindings } from "@/components/findings/cleared-findings";
 import { FindingsBox } from "@/components/findings/findings-box";
 import { LevelMark } from "@/components/ui/level-mark";
@@ -57,7 +58,7 @@ function DifferingMachines({ machines }: { readonly machines: ChangeView["evalua
         {graver.map(({ machineId, serial, siteName, level, graver: findings }) => (
           <li key={machineId}>
             <LevelMark level={level} /> <Link href={`/machines/${machineId}`}>{serial}</Link>, {siteName}:{" "}
-            {findings.map(({ sentence }) => sentence).join(" ")}
+            {findings.map(findingWords).join(" ")}
           </li>
         ))}
       </ul>

@@ -1,4 +1,5 @@
 import { findingKey } from "@/lib/domain/findings";
+import { findingSubject } from "@/lib/review/finding-words";
 import type { FindingComparison } from "@/lib/review/types";
 import { LevelMark } from "@/components/ui/level-mark";
 
@@ -19,7 +20,7 @@ export function ClearedFindings({ cleared }: ClearedFindingsProps) {
             <span className="visually-hidden">, now </span>
             <LevelMark level={toBe?.level ?? "within"} />
           </span>
-          <del>{was.sentence}</del>
+          {findingSubject(was)}: <del>{was.sentence}</del>
           {toBe && <span> {toBe.sentence}</span>}
         </li>
       ))}

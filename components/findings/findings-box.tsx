@@ -3,6 +3,7 @@ import { findingKey, type Finding } from "@/lib/domain/findings";
 import { levelRank } from "@/lib/domain/levels";
 import { needWords } from "@/lib/domain/need-words";
 import { joinWords, plural } from "@/lib/domain/sentences";
+import { findingSubject } from "@/lib/review/finding-words";
 import type { GaugeReading, GaugeScale } from "@/lib/review/gauge-scale";
 import { gaugeScale } from "@/lib/review/gauge-scale";
 import { Gauge } from "@/components/charts/gauge";
@@ -72,6 +73,7 @@ function FindingRow({ finding, context }: { finding: Finding; context: RowContex
     <li className="finding">
       <LevelMark level={finding.level} />
       <div className="finding-words">
+        <p className="finding-subject">{findingSubject(finding)}</p>
         <p>
           {finding.sentence} <RevisionMarks letters={context.letters?.[key] ?? []} />
         </p>

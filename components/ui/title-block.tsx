@@ -2,7 +2,6 @@ import type { ReactNode } from "react";
 
 /** The data fields of ISO 7200:2004. Decisions are made in `status` and `approvedBy`. */
 export interface TitleBlockProps {
-  readonly legalOwner: ReactNode;
   readonly title: ReactNode;
   readonly documentType: ReactNode;
   readonly identificationNumber: ReactNode;
@@ -50,7 +49,7 @@ export function TitleBlock({ openToDecide = false, ...fields }: TitleBlockProps)
           {fields.identificationNumber}
         </Cell>
         <Cell name="owner" label="Legal owner">
-          {fields.legalOwner}
+          The team that runs these machines
         </Cell>
         <Cell name="creator" label="Creator">
           {fields.creator}

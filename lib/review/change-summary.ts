@@ -4,8 +4,8 @@ import { needWords } from "@/lib/domain/need-words";
 import { parameterLabel } from "@/lib/domain/parameters";
 import { joinWords } from "@/lib/domain/sentences";
 import { formatNumber, showText } from "@/lib/domain/units";
-import { RULES } from "@/lib/rules/table";
 import { axisWord } from "./axis-word";
+import { findingWords } from "./finding-words";
 import { gaugeDrawing } from "./gauge-text";
 import { showValue } from "./show-value";
 import type { Effect, ParameterChange } from "./types";
@@ -31,7 +31,10 @@ export function changeSummary({ changes, effects, findings }: ChangeSummaryInput
       "Effects (was → to be; in the gauges o is was, * is to be, # the limit)",
       effects.flatMap((effect) => [effectLine(effect), ...effectGauge(effect)]),
     ),
-    part("Findings", standing.map(findingLine)),
+    part(
+      "Findings",
+      standing.map((finding) => `${LEVEL_WORDS[finding.level]}: ${findingWords(finding)}`),
+    ),
   ].filter((lines) => lines.length > 0);
   return parts.flatMap((lines, index) => (index === 0 ? lines : ["", ...lines]));
 }
@@ -69,15 +72,6 @@ function effectGauge({ was, toBe, limit, nearLimit, limitSense }: Effect): strin
     reading: { value: toBe, before: was, limit, nearLimit, sense: limitSense },
   });
   return drawing === null ? [] : [`  ${drawing}`];
-}
-
-function findingLine({ level, axis, ruleId, sentence }: Finding): string {
-  return `${LEVEL_WORDS[level]}: ${subject(axis, ruleTitle(ruleId))}. ${sentence}`;
-}
-
-/** The name of a check; its id where this release no longer has it. */
-function ruleTitle(id: string): string {
-  return RULES.find((rule) => rule.id === id)?.title ?? id;
 }
 
 function limitText(effect: Effect): string {

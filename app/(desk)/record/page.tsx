@@ -40,7 +40,6 @@ export default async function RecordPage({ searchParams }: { readonly searchPara
         <VerifyChain />
       </SheetSection>
       <TitleBlock
-        legalOwner="Keepstep"
         title="Record of acts"
         documentType="Record"
         identificationNumber={newest ? `to no. ${newest.seq}` : "–"}

@@ -6,6 +6,7 @@ import type { Finding } from "@/lib/domain/findings";
 import { findingKey } from "@/lib/domain/findings";
 import { gravest, levelRank } from "@/lib/domain/levels";
 import { checkConfiguration } from "@/lib/review/check";
+import { findingWords } from "@/lib/review/finding-words";
 import type { CheckInput, CheckReport, ConfigurationFile } from "@/lib/review/types";
 import { Site } from "@/models/catalog";
 import type { Machine } from "@/models/machines";
@@ -146,9 +147,10 @@ export function overKeys(
 ): OverKey[] {
   const keys = new Map<string, string>();
   for (const finding of report.findings)
-    if (finding.level === "over") keys.set(findingKey(finding), finding.sentence);
+    if (finding.level === "over") keys.set(findingKey(finding), findingWords(finding));
   for (const { serial, graver } of machines)
-    for (const { key, level, sentence } of graver)
-      if (level === "over" && !keys.has(key)) keys.set(key, `${serial}: ${sentence}`);
+    for (const finding of graver)
+      if (finding.level === "over" && !keys.has(finding.key))
+        keys.set(finding.key, `${serial}: ${findingWords(finding)}`);
   return [...keys].map(([key, sentence]) => ({ key, sentence }));
 }

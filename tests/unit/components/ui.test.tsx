@@ -95,7 +95,6 @@ describe("Sheet", () => {
 
 describe("TitleBlock", () => {
   const fields = {
-    legalOwner: "East hall",
     title: "Slower feed",
     documentType: "Change request",
     identificationNumber: "CR-0007",

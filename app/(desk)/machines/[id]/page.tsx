@@ -19,7 +19,9 @@ import { Empty } from "@/components/ui/empty";
 import { Sheet, SheetHead, SheetSection } from "@/components/ui/sheet";
 import { TitleBlock } from "@/components/ui/title-block";
 import { axisKind } from "@/lib/domain/axis-kind";
+import type { Finding } from "@/lib/domain/findings";
 import { STANDING_WORDS } from "@/lib/domain/floor";
+import { LEVEL_WORDS } from "@/lib/domain/levels";
 import { plural } from "@/lib/domain/sentences";
 import { daySchema, endOfDay } from "@/lib/http/day-query";
 import { load, pageActor, type PageContext } from "@/lib/http/page-actor";
@@ -119,8 +121,8 @@ function Standing({ machine }: PartProps) {
             : "What counts on the machine is what is required."}
         </p>
       )}
-      <details className="mt-3">
-        <summary>Every check of the values that count</summary>
+      <details className="mt-3" open={findings.some(({ level }) => level === "over")}>
+        <summary>Every check of the values that count{levelCounts(findings)}</summary>
         <FindingsBox
           findings={findings}
           label="Checks of the values that count"
@@ -129,6 +131,15 @@ function Standing({ machine }: PartProps) {
       </details>
     </SheetSection>
   );
+}
+
+/** ": 2 over limit, 1 near limit"; empty where nothing stands out. */
+function levelCounts(findings: readonly Finding[]): string {
+  const words = (["over", "near", "cannot"] as const).flatMap((level) => {
+    const count = findings.filter((finding) => finding.level === level).length;
+    return count === 0 ? [] : [`${count} ${LEVEL_WORDS[level]}`];
+  });
+  return words.length === 0 ? "" : `: ${words.join(", ")}`;
 }
 
 function Layers({ machine }: PartProps) {
@@ -230,7 +241,6 @@ function MachineTitleBlock({ machine }: PartProps) {
   const { serial, model, required, standing } = machine;
   return (
     <TitleBlock
-      legalOwner="Keepstep"
       title={`${serial}, ${model.name}`}
       documentType="Machine sheet"
       identificationNumber={serial}

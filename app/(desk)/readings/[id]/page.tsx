@@ -69,7 +69,6 @@ export default async function ReadingPage({ params }: { readonly params: Promise
         <RecordList events={events} caption="Record of this reading" />
       </SheetSection>
       <TitleBlock
-        legalOwner="Keepstep"
         title={title}
         documentType="Reading"
         identificationNumber={<span className="code break-all">{id}</span>}

@@ -52,7 +52,6 @@ export default async function StepPage({ params }: StepPageProps) {
         )}
       </SheetSection>
       <TitleBlock
-        legalOwner="The team that runs these machines"
         title={step.title}
         documentType="Implementation step"
         identificationNumber={`${step.changeLabel}, ${step.serial}`}
