@@ -6,9 +6,9 @@ import type { Assessment, Judged } from "./assessment";
 import { clearingValue } from "./clearing";
 import type { Candidate, Probe } from "./clearing";
 import { missingSentence } from "./missing-words";
-import type { AxisView, Missing, Rule, RuleContext } from "./types";
+import type { AxisView, Missing, Rule, RuleContext, RuleVerdict } from "./types";
 
-interface CheckWords extends Omit<Rule, "evaluate"> {
+interface CheckWords extends Omit<Rule, "evaluate" | "judge"> {
   /** The caution stands on every finding, not only where something is the matter. */
   readonly cautionAlways?: boolean;
 }
@@ -36,12 +36,21 @@ export function axisRule(check: AxisCheck): Rule {
   return {
     ...words(check),
     evaluate: ({ axes }) => axes.flatMap((axis) => axisFinding(check, axis)),
+    judge: ({ axes }) => axes.flatMap((axis) => verdict(axis.axis, check.assess(axis))),
   };
 }
 
 /** A row of the table from a check of the machine. */
 export function machineRule(check: MachineCheck): Rule {
-  return { ...words(check), evaluate: (context) => machineFinding(check, context) };
+  return {
+    ...words(check),
+    evaluate: (context) => machineFinding(check, context),
+    judge: (context) => verdict(null, check.assess(context)),
+  };
+}
+
+function verdict(axis: string | null, assessment: Assessment): RuleVerdict[] {
+  return assessment === null ? [] : [{ axis, assessment }];
 }
 
 function words({ id, title, compares, formula, source, needs, margin, caution }: CheckWords) {

@@ -5,6 +5,7 @@ import type { ParameterName } from "@/lib/domain/parameters";
 import type { Policy } from "@/lib/domain/policy";
 import type { Quantity, QuantityName } from "@/lib/domain/quantities";
 import type { ParameterValue } from "@/lib/domain/values";
+import type { Judged } from "./assessment";
 
 export interface RuleInput {
   readonly parameters: readonly ParameterValue[];
@@ -104,4 +105,12 @@ export interface Rule {
   readonly margin: string;
   readonly caution: string | null;
   readonly evaluate: (context: RuleContext) => Finding[];
+  /** The bare verdicts of the same check, for what asks thousands of times: no words, no clearing value. */
+  readonly judge: (context: RuleContext) => RuleVerdict[];
+}
+
+/** What a check makes of one axis; null for the machine as a whole. */
+export interface RuleVerdict {
+  readonly axis: string | null;
+  readonly assessment: Judged | Missing;
 }
