@@ -9,7 +9,7 @@ import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { useSave } from "@/components/forms/use-save";
 import { Button } from "@/components/ui/button";
-import { FieldGroup, TextField } from "@/components/ui/field";
+import { CheckboxField, FieldGroup, TextField } from "@/components/ui/field";
 import { savePolicySchema, type PolicyVersionView } from "@/lib/schemas/policies";
 import { typedNumber } from "@/lib/schemas/typed-field";
 import { POLICY_WORDS, shownShare, storedShare, type PolicyField } from "./policy-words";
@@ -23,6 +23,12 @@ const typedSchema = z.object({
   torque_margin_above_limit_speed: percent(shape.torque_margin_above_limit_speed),
   junction_limit_c: typedNumber(shape.junction_limit_c),
   stale_after_days: typedNumber(shape.stale_after_days),
+  counter_weight_current: typedNumber(shape.counter_weight_current),
+  counter_weight_speed: typedNumber(shape.counter_weight_speed),
+  counter_weight_acceleration: typedNumber(shape.counter_weight_acceleration),
+  counter_weight_corner_speed: typedNumber(shape.counter_weight_corner_speed),
+  counter_least_share: percent(shape.counter_least_share),
+  counter_raises_current: shape.counter_raises_current,
   note: savePolicySchema.shape.note,
 });
 type Typed = z.input<typeof typedSchema>;
@@ -37,6 +43,12 @@ export function PolicyForm({ current }: { readonly current: PolicyVersionView })
       torque_margin_above_limit_speed: String(shownShare(policy.torque_margin_above_limit_speed)),
       junction_limit_c: String(policy.junction_limit_c),
       stale_after_days: String(policy.stale_after_days),
+      counter_weight_current: String(policy.counter_weight_current),
+      counter_weight_speed: String(policy.counter_weight_speed),
+      counter_weight_acceleration: String(policy.counter_weight_acceleration),
+      counter_weight_corner_speed: String(policy.counter_weight_corner_speed),
+      counter_least_share: String(shownShare(policy.counter_least_share)),
+      counter_raises_current: policy.counter_raises_current,
       note: "",
     },
   });
@@ -66,6 +78,18 @@ export function PolicyForm({ current }: { readonly current: PolicyVersionView })
         {field("torque_margin_above_limit_speed")}
         {field("junction_limit_c")}
         {field("stale_after_days")}
+      </FieldGroup>
+      <FieldGroup legend="Counter-proposals">
+        {field("counter_weight_current")}
+        {field("counter_weight_speed")}
+        {field("counter_weight_acceleration")}
+        {field("counter_weight_corner_speed")}
+        {field("counter_least_share")}
+        <CheckboxField
+          label={POLICY_WORDS.counter_raises_current.label}
+          help={POLICY_WORDS.counter_raises_current.help}
+          {...form.register("counter_raises_current")}
+        />
       </FieldGroup>
       <TextField
         label="Reason"

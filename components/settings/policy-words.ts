@@ -29,9 +29,43 @@ export const POLICY_WORDS: Record<PolicyField, FieldWords> = {
     unit: "days",
     help: "A machine whose newest reading is older is shown as such.",
   },
+  counter_weight_current: {
+    label: "Weight of a current",
+    unit: "",
+    help: "A counter-proposal seeks the smallest sum of relative changes; each counts with its weight. A greater weight leaves the value rather as it is.",
+  },
+  counter_weight_speed: {
+    label: "Weight of a maximum speed",
+    unit: "",
+    help: "Likewise.",
+  },
+  counter_weight_acceleration: {
+    label: "Weight of an acceleration",
+    unit: "",
+    help: "Likewise.",
+  },
+  counter_weight_corner_speed: {
+    label: "Weight of a corner speed",
+    unit: "",
+    help: "Likewise. Every other value has the weight 1.",
+  },
+  counter_least_share: {
+    label: "A value is lowered at most to",
+    unit: "%",
+    help: "Of the present value. What would have to go lower is not proposed.",
+  },
+  counter_raises_current: {
+    label: "Raise a run current where less speed would do",
+    unit: "",
+    help: "No: a counter-proposal raises a run current only where nothing else clears the findings, and never above a limit.",
+  },
 };
 
-const SHARES: readonly PolicyField[] = ["torque_margin_below_limit_speed", "torque_margin_above_limit_speed"];
+const SHARES: readonly PolicyField[] = [
+  "torque_margin_below_limit_speed",
+  "torque_margin_above_limit_speed",
+  "counter_least_share",
+];
 const DIGITS = 12;
 
 /** A share of 1 in percent, without the dust of binary fractions. */
@@ -46,6 +80,8 @@ export function storedShare(percent: number): number {
 
 /** A margin with its unit, as people read it. */
 export function policyValue(policy: Policy, field: PolicyField): string {
-  const value = SHARES.includes(field) ? shownShare(policy[field]) : policy[field];
-  return `${value} ${POLICY_WORDS[field].unit}`;
+  const stored = policy[field];
+  if (typeof stored === "boolean") return stored ? "yes" : "no";
+  const value = SHARES.includes(field) ? shownShare(stored) : stored;
+  return `${value} ${POLICY_WORDS[field].unit}`.trim();
 }

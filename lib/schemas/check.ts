@@ -62,6 +62,12 @@ const sentPolicy = z.preprocess(
     torque_margin_above_limit_speed: margins.torque_margin_above_limit_speed.unwrap().optional(),
     junction_limit_c: margins.junction_limit_c.unwrap().optional(),
     stale_after_days: margins.stale_after_days.unwrap().optional(),
+    counter_weight_current: margins.counter_weight_current.unwrap().optional(),
+    counter_weight_speed: margins.counter_weight_speed.unwrap().optional(),
+    counter_weight_acceleration: margins.counter_weight_acceleration.unwrap().optional(),
+    counter_weight_corner_speed: margins.counter_weight_corner_speed.unwrap().optional(),
+    counter_least_share: margins.counter_least_share.unwrap().optional(),
+    counter_raises_current: margins.counter_raises_current.unwrap().optional(),
   }),
 );
 

@@ -8,6 +8,12 @@ export const savePolicySchema = z.object({
     torque_margin_above_limit_speed: policySchema.shape.torque_margin_above_limit_speed.unwrap(),
     junction_limit_c: policySchema.shape.junction_limit_c.unwrap(),
     stale_after_days: policySchema.shape.stale_after_days.unwrap(),
+    counter_weight_current: policySchema.shape.counter_weight_current.unwrap(),
+    counter_weight_speed: policySchema.shape.counter_weight_speed.unwrap(),
+    counter_weight_acceleration: policySchema.shape.counter_weight_acceleration.unwrap(),
+    counter_weight_corner_speed: policySchema.shape.counter_weight_corner_speed.unwrap(),
+    counter_least_share: policySchema.shape.counter_least_share.unwrap(),
+    counter_raises_current: policySchema.shape.counter_raises_current.unwrap(),
   }),
   note: reasonSchema,
 });
