@@ -1,0 +1,17 @@
+// tray stacker, one constant a drive
+#define LIFT_RMS_MILLIAMPS 1100
+#define LIFT_HOLD_MILLIAMPS 650
+#define LIFT_MICRO 16
+#define LIFT_STEPS_MM 800.0
+#define LIFT_SPEED_MM_S 30
+#define LIFT_ACC_MM_S2 300
+#define LIFT_PULSE_US 2
+#define SHIFT_RMS_MILLIAMPS 900
+#define SHIFT_HOLD_MILLIAMPS 400
+#define SHIFT_MICRO 16
+#define SHIFT_STEPS_MM 80.0
+#define SHIFT_SPEED_MM_S 450
+#define SHIFT_ACC_MM_S2 5200
+#define SHIFT_PULSE_US 2
+#define TRAY_COUNT 24
+#define BUZZER_HZ 2200
