@@ -1,14 +1,17 @@
 /** Coefficients of the Lanczos approximation with g = 7. Source: Lanczos, SIAM J. Numer. Anal. B 1 (1964) 86; from memory. */
-const LANCZOS = [
-  0.99999999999980993, 676.5203681218851, -1259.1392167224028, 771.32342877765313, -176.61502916214059,
-  12.507343278686905, -0.13857109526572012, 9.9843695780195716e-6, 1.5056327351493116e-7,
-] as const;
+const LANCZOS_FIRST = 0.99999999999980993;
+const LANCZOS: readonly number[] = [
+  676.5203681218851, -1259.1392167224028, 771.32342877765313, -176.61502916214059, 12.507343278686905,
+  -0.13857109526572012, 9.9843695780195716e-6, 1.5056327351493116e-7,
+];
 
 /** ln Γ(x), no unit, for x > 0; within 1e-13. Source: Lanczos (1964). */
 function logGamma(x: number): number {
-  const [first, ...rest] = LANCZOS;
   const y = x - 1;
-  const sum = rest.reduce((total, coefficient, index) => total + coefficient / (y + index + 1), first);
+  const sum = LANCZOS.reduce(
+    (total, coefficient, index) => total + coefficient / (y + index + 1),
+    LANCZOS_FIRST,
+  );
   const t = y + 7.5;
   return 0.5 * Math.log(2 * Math.PI) + (y + 0.5) * Math.log(t) - t + Math.log(sum);
 }
