@@ -21,6 +21,7 @@ const PAGES: Readonly<Record<string, string>> = {
   person: "/settings/people/",
   site: "/settings/sites/",
   machine_model: "/catalog/models/",
+  rehearsal: "/rehearsals/",
 };
 
 interface Recorded {

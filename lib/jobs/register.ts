@@ -4,6 +4,7 @@ import type { QueueSettings } from "@/lib/server/queue";
 import { ensureQueue } from "@/lib/server/queue";
 import { mailJob } from "./mail";
 import { recheckJob } from "./recheck";
+import { rehearsalJob } from "./rehearsal";
 
 /** A background job: the name of its queue, how it is tried again, and what it does with the data of one job. */
 export interface Job {
@@ -15,7 +16,7 @@ export interface Job {
 }
 
 /** Every background job of the desk. */
-const JOBS: readonly Job[] = [mailJob, recheckJob];
+const JOBS: readonly Job[] = [mailJob, recheckJob, rehearsalJob];
 
 /** Starts to work on every queue. */
 export async function registerJobs(boss: PgBoss): Promise<void> {

@@ -8,6 +8,7 @@ import { machineOperations } from "./machines";
 import { machineWriteOperations } from "./machines-write";
 import { peopleOperations } from "./people";
 import { readingOperations } from "./readings";
+import { rehearsalOperations } from "./rehearsals";
 
 /** Every door of the API. Routes answer through them, OpenAPI describes them, the access test walks them. */
 export const ALL_OPERATIONS: readonly Operation[] = [
@@ -20,4 +21,5 @@ export const ALL_OPERATIONS: readonly Operation[] = [
   ...Object.values(machineWriteOperations),
   ...Object.values(peopleOperations),
   ...Object.values(readingOperations),
+  ...Object.values(rehearsalOperations),
 ];

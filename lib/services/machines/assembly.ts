@@ -3,7 +3,7 @@ import { Op } from "sequelize";
 import type { Transaction } from "sequelize";
 import type { Assembly } from "@/lib/domain/assembly";
 import type { HardwareFact, ModelHardware } from "@/lib/domain/catalog";
-import type { CatalogEntry, ResolvedAssembly } from "@/lib/review/resolve-assembly";
+import type { CatalogEntry, ResolvedAssembly, ResolveInput } from "@/lib/review/resolve-assembly";
 import { resolveAssembly } from "@/lib/review/resolve-assembly";
 import { Axis, CatalogItem, CatalogVersion, MachineModel, MachineModelVersion, Site } from "@/models/catalog";
 import { Machine, MachineHardware } from "@/models/machines";
@@ -79,18 +79,49 @@ interface Sought {
   readonly modelId: string;
   readonly ambientC: number | null;
   readonly facts: readonly HardwareFact[];
+  /** Catalog items to have at hand beside those that are fitted. */
+  readonly alsoItems?: readonly string[];
   readonly transaction?: Transaction | undefined;
 }
 
-async function resolve({ modelId, ambientC, facts, transaction }: Sought): Promise<MachineAssembly> {
+interface Parts {
+  readonly input: ResolveInput;
+  readonly hasReadBack: boolean;
+}
+
+async function partsOf({ modelId, ambientC, facts, alsoItems = [], transaction }: Sought): Promise<Parts> {
   const model = await modelHardware(modelId, transaction);
-  const items = await catalogEntries(namedItems(model, facts), transaction);
-  const resolved = resolveAssembly({ model, items, facts, site: { ambient_c: ambientC } });
-  return { ...resolved, facts, hasReadBack: model.has_read_back };
+  const items = await catalogEntries([...namedItems(model, facts), ...alsoItems], transaction);
+  return {
+    input: { model, items, facts, site: { ambient_c: ambientC } },
+    hasReadBack: model.has_read_back,
+  };
 }
 
 export function toFact(row: MachineHardware): HardwareFact {
   return { axis: row.axis, part: row.part, itemId: row.itemId, data: row.data, evidence: row.evidence };
+}
+
+export interface MachineParts extends Parts {
+  readonly machine: Machine;
+}
+
+/** Everything that the hardware of one machine is put together from: its own recorded facts, its model, its site. */
+export async function machineParts(
+  machineId: string,
+  more: Pick<Sought, "alsoItems" | "transaction"> = {},
+): Promise<MachineParts> {
+  const transaction = more.transaction ?? null;
+  const machine = await Machine.findByPk(machineId, { include: [{ model: Site, as: "site" }], transaction });
+  if (!machine) throw notFound("machine");
+  const rows = await MachineHardware.findAll({
+    where: { machineId, endedAt: null },
+    order: [["recordedAt", "ASC"]],
+    transaction,
+  });
+  const ambientC = machine.site?.ambientC ?? null;
+  const parts = await partsOf({ modelId: machine.modelId, ambientC, facts: rows.map(toFact), ...more });
+  return { machine, ...parts };
 }
 
 /** The hardware that counts for one machine: its own recorded facts over its model's, at its site's ambient. */
@@ -98,22 +129,8 @@ export async function machineAssembly(
   machineId: string,
   transaction?: Transaction,
 ): Promise<MachineAssembly> {
-  const machine = await Machine.findByPk(machineId, {
-    include: [{ model: Site, as: "site" }],
-    transaction: transaction ?? null,
-  });
-  if (!machine) throw notFound("machine");
-  const rows = await MachineHardware.findAll({
-    where: { machineId, endedAt: null },
-    order: [["recordedAt", "ASC"]],
-    transaction: transaction ?? null,
-  });
-  return resolve({
-    modelId: machine.modelId,
-    ambientC: machine.site?.ambientC ?? null,
-    facts: rows.map(toFact),
-    transaction,
-  });
+  const { input, hasReadBack } = await machineParts(machineId, { transaction });
+  return { ...resolveAssembly(input), facts: input.facts, hasReadBack };
 }
 
 /** The hardware of a model as designed, at a given ambient. */
@@ -124,5 +141,6 @@ export async function modelAssembly(
 ): Promise<Assembly> {
   const model = await MachineModel.findByPk(modelId, { transaction: transaction ?? null });
   if (!model) throw notFound("machine model");
-  return (await resolve({ modelId, ambientC, facts: [], transaction })).assembly;
+  const { input } = await partsOf({ modelId, ambientC, facts: [], transaction });
+  return resolveAssembly(input).assembly;
 }
