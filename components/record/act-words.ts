@@ -21,6 +21,7 @@ const PAGES: Readonly<Record<string, string>> = {
   person: "/settings/people/",
   site: "/settings/sites/",
   machine_model: "/catalog/models/",
+  test_sheet: "/test-sheets/",
   rehearsal: "/rehearsals/",
 };
 

@@ -9,6 +9,7 @@ import { machineWriteOperations } from "./machines-write";
 import { peopleOperations } from "./people";
 import { readingOperations } from "./readings";
 import { rehearsalOperations } from "./rehearsals";
+import { testSheetOperations } from "./test-sheets";
 
 /** Every door of the API. Routes answer through them, OpenAPI describes them, the access test walks them. */
 export const ALL_OPERATIONS: readonly Operation[] = [
@@ -22,4 +23,5 @@ export const ALL_OPERATIONS: readonly Operation[] = [
   ...Object.values(peopleOperations),
   ...Object.values(readingOperations),
   ...Object.values(rehearsalOperations),
+  ...Object.values(testSheetOperations),
 ];
