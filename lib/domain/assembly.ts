@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { anyNumber, choice, notNegative, positive, within, yesNo } from "./field-notes";
+import { refinedFieldSchema } from "./refined";
 
 /**
  * The hardware of one machine. Every field may be missing, because data sheets are incomplete; a missing field
@@ -122,6 +123,8 @@ export const axisAssemblySchema = z.object({
   travel_mm: positive("Travel", "mm", "Linear axes"),
   travel_deg: positive("Travel", "deg", "Rotary axes"),
   coupled_with: z.array(z.string().min(1).max(40)).max(8).optional(),
+  /** Fields of the motor that temperatures measured on this machine have refined; the motor holds the refined values. */
+  refined: z.array(refinedFieldSchema).max(4).optional(),
 });
 
 export const assemblySchema = z.object({

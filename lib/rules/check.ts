@@ -1,11 +1,12 @@
 import type { Finding } from "@/lib/domain/findings";
 import type { ParameterName } from "@/lib/domain/parameters";
-import { joinWords } from "@/lib/domain/sentences";
+import { joinWords, plural } from "@/lib/domain/sentences";
 import type { ParameterValue } from "@/lib/domain/values";
 import type { Assessment, Judged } from "./assessment";
 import { clearingValue } from "./clearing";
 import type { Candidate, Probe } from "./clearing";
 import { missingSentence } from "./missing-words";
+import { plain } from "./show";
 import type { AxisView, Missing, Rule, RuleContext, RuleVerdict } from "./types";
 
 interface CheckWords extends Omit<Rule, "evaluate" | "judge"> {
@@ -70,7 +71,7 @@ function axisFinding(check: AxisCheck, axis: AxisView): Finding[] {
       axis: axis.axis,
       leading: names.slice(0, 1),
       stated,
-      note: check.coupled === true ? coupledNote(axis) : "",
+      note: `${check.coupled === true ? coupledNote(axis) : ""}${refinedNote(check, axis)}`,
       clear: () => clearingValue(check.candidates?.(axis) ?? [], probe),
     }),
   ];
@@ -104,6 +105,17 @@ function coupledNote({ hardware: { coupled_with = [] } }: AxisView): string {
   if (coupled_with.length === 0) return "";
   const axes = `${coupled_with.length === 1 ? "axis" : "axes"} ${joinWords(coupled_with)}`;
   return ` Its motors move together with those of ${axes}: a move of both at once can ask up to twice this of one motor.`;
+}
+
+/** A thermal resistance that is this machine's own, where the check rests on it; the catalog's value is never hidden. */
+function refinedNote({ needs }: CheckWords, { hardware: { refined = [] } }: AxisView): string {
+  const told = refined.filter(({ field }) => needs.includes(`motor.${field}`));
+  return told
+    .map(
+      ({ field, value, catalog, readings }) =>
+        ` Its thermal resistance from ${field.startsWith("case") ? "case" : "winding"} to ambient, ${plain(value)} K/W, is refined from ${plural(readings, "temperature")} measured on this machine; the catalog says ${plain(catalog)} K/W.`,
+    )
+    .join("");
 }
 
 interface Parts {

@@ -1,0 +1,29 @@
+import type { Assembly, AxisAssembly } from "@/lib/domain/assembly";
+import type { RefinedField } from "@/lib/domain/refined";
+
+/** A refined value of one axis, as it is kept for a machine. */
+export interface RefinedOfAxis extends RefinedField {
+  readonly axis: string;
+}
+
+/**
+ * The assembly with thermal resistances refined by measured temperatures. One whose catalog value is no longer what the
+ * motor has (another motor, other data, a value recorded on the machine itself) is left out.
+ */
+export function withRefined(assembly: Assembly, refined: readonly RefinedOfAxis[]): Assembly {
+  if (refined.length === 0) return assembly;
+  return { ...assembly, axes: assembly.axes.map((axis) => refineAxis(axis, refined)) };
+}
+
+function refineAxis(axis: AxisAssembly, refined: readonly RefinedOfAxis[]): AxisAssembly {
+  const own = refined.filter(
+    (one) => one.axis.toLowerCase() === axis.axis.toLowerCase() && axis.motor?.[one.field] === one.catalog,
+  );
+  if (own.length === 0) return axis;
+  const values = Object.fromEntries(own.map(({ field, value }) => [field, value]));
+  return {
+    ...axis,
+    motor: { ...axis.motor, ...values },
+    refined: own.map(({ axis: _, ...field }) => field),
+  };
+}
