@@ -1,6 +1,11 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { conservativePullOut, voltageConstant, voltageLimitSpeed } from "@/lib/physics/pull-out";
+import {
+  conservativePullOut,
+  expectedPullOut,
+  voltageConstant,
+  voltageLimitSpeed,
+} from "@/lib/physics/pull-out";
 import type { DrivenMotor } from "@/lib/physics/pull-out";
 
 /** Three invented motors: A rms, Ω, H, N·m. */
@@ -99,5 +104,66 @@ describe("the voltage-limit speed", () => {
 
   it("is V/Ke without current: the generated voltage alone reaches the supply", () => {
     expect(voltageLimitSpeed(driven("17-size", 24, 0))).toBeCloseTo(24 / voltageConstant(0.45, 1.5), 9);
+  });
+});
+
+describe("the expected pull-out torque", () => {
+  // Closed form and time-domain simulation of the phase equations at a fixed load angle, both derived; N·m at 1.5 and 3
+  // times the voltage-limit speed, rounded as listed.
+  const TABLE = [
+    ["17-size", 12, 1.5, 0.404, 0.395],
+    ["17-size", 12, 3, 0.234, 0.237],
+    ["17-size", 24, 1.5, 0.399, 0.391],
+    ["17-size", 24, 3, 0.225, 0.228],
+    ["17-size", 48, 1.5, 0.399, 0.39],
+    ["17-size", 48, 3, 0.223, 0.225],
+    ["23-size", 12, 1.5, 1.704, 1.668],
+    ["23-size", 12, 3, 0.989, 1.001],
+    ["23-size", 24, 1.5, 1.688, 1.651],
+    ["23-size", 24, 3, 0.951, 0.966],
+    ["23-size", 48, 1.5, 1.686, 1.649],
+    ["23-size", 48, 3, 0.943, 0.957],
+    ["11-size", 12, 1.5, 0.089, 0.089],
+    ["11-size", 12, 3, 0.052, 0.053],
+    ["11-size", 24, 1.5, 0.087, 0.087],
+    ["11-size", 24, 3, 0.048, 0.049],
+    ["11-size", 48, 1.5, 0.087, 0.086],
+    ["11-size", 48, 3, 0.047, 0.048],
+  ] as const;
+
+  it.each(TABLE)(
+    "of the %s on %i V at %f times the voltage-limit speed is %f N·m, within 3 %% of the simulated %f",
+    (size, volts, times, torque, simulated) => {
+      const motor = driven(size, volts);
+      const found = expectedPullOut(motor, times * voltageLimitSpeed(motor));
+      expect(Math.abs(found - torque)).toBeLessThanOrEqual(0.00051);
+      // The last digit of the small motor is 1 % of its torque.
+      expect(Math.abs(found - simulated)).toBeLessThan(0.03 * simulated + 0.0005);
+    },
+  );
+
+  it("is the conservative one up to the voltage-limit speed and at reduced current", () => {
+    const full = driven("17-size", 24);
+    const limit = voltageLimitSpeed(full);
+    for (const share of [0, 0.5, 1])
+      expect(expectedPullOut(full, share * limit)).toBe(conservativePullOut(full, share * limit));
+    const reduced = driven("17-size", 24, 0.3);
+    const fast = 3 * voltageLimitSpeed(reduced);
+    expect(expectedPullOut(reduced, fast)).toBe(conservativePullOut(reduced, fast));
+  });
+
+  it("is never below the conservative one, nor above the current limit", () => {
+    const speed = fc.double({ min: 0, max: 3000, noNaN: true });
+    const share = fc.double({ min: 0.05, max: 1, noNaN: true });
+    const size = fc.constantFrom("17-size", "23-size", "11-size");
+    fc.assert(
+      fc.property(size, speed, share, fc.constantFrom(12, 24, 48), (motorSize, fast, part, volts) => {
+        const motor = driven(motorSize, volts, part);
+        const found = expectedPullOut(motor, fast);
+        expect(found).toBeGreaterThanOrEqual(conservativePullOut(motor, fast) * (1 - 1e-12));
+        expect(found).toBeLessThanOrEqual(motor.voltageConstant * motor.peakCurrent * (1 + 1e-12));
+      }),
+      { numRuns: 500, seed: 3 },
+    );
   });
 });
