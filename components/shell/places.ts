@@ -20,8 +20,8 @@ export const PHONE_PLACES: readonly Place[] = [
   { label: "Work", href: "/work" },
 ];
 
-/** Machines are reached from the floor, so a machine's page lights up Floor. */
-const WITHIN: Readonly<Record<string, string>> = { "/machines": "/floor" };
+/** Machines are reached from the floor, so a machine's page lights up Floor; a rehearsal is of the whole floor. */
+const WITHIN: Readonly<Record<string, string>> = { "/machines": "/floor", "/rehearsals": "/floor" };
 
 /** The place that a path belongs to: the longest one that leads to it; null for none. */
 export function placeOf(path: string, places: readonly Place[]): Place | null {

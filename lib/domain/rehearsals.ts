@@ -1,22 +1,25 @@
 import { z } from "zod";
 import { levelSchema } from "./levels";
 
-/** What a rehearsal asks: the fleet in warmer rooms, or with another part fitted. Nothing is done to any machine. */
-export const rehearsalQuestionSchema = z.discriminatedUnion("kind", [
-  z.object({
-    kind: z.literal("warm_day"),
-    /** K above each site's design maximum. */
-    riseK: z.number("Type a number in K.").min(1, "At least 1 K.").max(60, "At most 60 K."),
-  }),
-  z.object({
-    kind: z.literal("part_swap"),
-    part: z.enum(["motor", "driver"]),
-    /** Catalog item to be fitted. */
-    itemId: z.uuid("Choose the part to be fitted."),
-    /** Only where this item is fitted now; null: wherever a part of the kind is. */
-    replacesId: z.uuid().nullable().default(null),
-  }),
-]);
+/** The fleet in warmer rooms. */
+export const warmDaySchema = z.object({
+  kind: z.literal("warm_day"),
+  /** K above each site's design maximum. */
+  riseK: z.number("Type a number in K.").min(1, "At least 1 K.").max(60, "At most 60 K."),
+});
+
+/** The fleet with another part fitted. */
+export const partSwapSchema = z.object({
+  kind: z.literal("part_swap"),
+  part: z.enum(["motor", "driver"]),
+  /** Catalog item to be fitted. */
+  itemId: z.uuid("Choose the part to be fitted."),
+  /** Only where this item is fitted now; null: wherever a part of the kind is. */
+  replacesId: z.uuid().nullable().default(null),
+});
+
+/** What a rehearsal asks. Nothing is done to any machine. */
+export const rehearsalQuestionSchema = z.discriminatedUnion("kind", [warmDaySchema, partSwapSchema]);
 export type RehearsalQuestion = z.infer<typeof rehearsalQuestionSchema>;
 
 export const REHEARSAL_STATES = ["waiting", "running", "done"] as const;

@@ -54,6 +54,19 @@ async function newestMail(page: Page): Promise<string> {
 const machine = (page: Page) => firstOf(page, "/machines?level=over");
 const model = (page: Page) => firstOf(page, "/machine-models");
 
+/** A rehearsal of a warm day, started for this visit. */
+async function warmDay(page: Page): Promise<string> {
+  const data = { question: { kind: "warm_day", riseK: 15 } };
+  const response = await page.request.post("/api/v1/rehearsals", { data });
+  expect(response.status()).toBe(201);
+  return `/rehearsals/${((await response.json()) as { id: string }).id}`;
+}
+
+async function showsRehearsed(page: Page): Promise<void> {
+  await expect(page.getByRole("progressbar")).toHaveCount(0, { timeout: 30_000 });
+  await expect(page.getByText(/^\d+ of \d+ machines$/)).toBeVisible();
+}
+
 async function showsEditor(page: Page): Promise<void> {
   await expect(page.getByRole("textbox", { name: /^Text of / })).toBeAttached();
   await expect(page.getByRole("group", { name: "Findings of the text as it stands" })).toBeVisible();
@@ -117,6 +130,8 @@ const PAGES: readonly VisitedPage[] = [
     address: async (page) => `/catalog/models/${await model(page)}/key-table`,
   },
   { route: "/checks", role: "viewer" },
+  { route: "/rehearsals", role: "engineer" },
+  { route: "/rehearsals/[id]", role: "engineer", address: warmDay, shows: showsRehearsed },
   { route: "/record", role: "viewer" },
   { route: "/search", role: "viewer", address: () => Promise.resolve("/search?q=DG") },
   { route: "/mail", role: "approver" },

@@ -17,9 +17,12 @@ export default async function ChecksPage() {
         title="Checks"
         subtitle={`Every configuration goes through these ${RULES.length} checks, rules version ${RULES_VERSION}. They are estimates from catalog data; the physical test and a competent person decide.`}
         acts={
-          <ButtonLink variant="primary" href="/readings/new?mode=check">
-            Check a text without keeping it
-          </ButtonLink>
+          <>
+            <ButtonLink href="/rehearsals">Rehearsals</ButtonLink>
+            <ButtonLink variant="primary" href="/readings/new?mode=check">
+              Check a text without keeping it
+            </ButtonLink>
+          </>
         }
       />
       <nav aria-label="Checks on this page">

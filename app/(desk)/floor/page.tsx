@@ -41,11 +41,14 @@ export default async function FloorPage({ searchParams }: { readonly searchParam
         title={floorHeading(counts)}
         subtitle={floorSubtitle(counts, rows, context.now)}
         acts={
-          may(context.actor, "readings.create") && (
-            <ButtonLink variant="primary" href="/readings/new">
-              Add a reading
-            </ButtonLink>
-          )
+          <>
+            <ButtonLink href="/rehearsals">Rehearsals</ButtonLink>
+            {may(context.actor, "readings.create") && (
+              <ButtonLink variant="primary" href="/readings/new">
+                Add a reading
+              </ButtonLink>
+            )}
+          </>
         }
       />
       <FloorFilter floor={floor} typed={typed} errors={errors} />

@@ -62,6 +62,13 @@ const PAGES: readonly DeskPage[] = [
     words: "rules formula limit try paste physics",
   },
   {
+    action: "rehearsals.read",
+    href: "/rehearsals",
+    title: "Rehearsals",
+    note: "The fleet on a warm day, or with another part fitted",
+    words: "warm day ambient hottest room swap part motor driver rehearsal what if",
+  },
+  {
     action: "machines.write",
     href: "/machines/new",
     title: "Add a machine",
