@@ -8,9 +8,17 @@ const MOST_EXACT = 9;
  * kept for whole numbers. Holds the value to six significant digits at least.
  */
 export function spellNumber(value: number, was: string): string {
-  if (/^[+-]?0x/i.test(was) && Number.isInteger(value) && value >= 0) return spellHex(value, was);
-  const plain = expand(digitsOf(value));
-  return padDecimals(plain, decimalsOf(was));
+  const bare = was.replaceAll("_", "");
+  if (/^[+-]?0x/i.test(bare) && Number.isInteger(value) && value >= 0) return spellHex(value, bare);
+  const plain = padDecimals(expand(digitsOf(value)), decimalsOf(bare));
+  return /\d_\d{3}(?!\d)/.test(was) ? groupThousands(plain) : plain;
+}
+
+/** 12000.5 as 12_000.5, where the older spelling set its thousands apart so. */
+function groupThousands(plain: string): string {
+  const [whole = "", fraction] = plain.split(".");
+  const grouped = whole.replace(/(?<=\d)(?=(?:\d{3})+$)/g, "_");
+  return fraction === undefined ? grouped : `${grouped}.${fraction}`;
 }
 
 function spellHex(value: number, was: string): string {

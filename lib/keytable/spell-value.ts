@@ -1,9 +1,10 @@
 import { parameterDefinition } from "@/lib/domain/parameters";
+import { readScalarText } from "@/lib/parsers/scalar";
 import type { Place } from "./resolve";
 import { spellNumber } from "./spell-number";
 
-/** Number as it stands in a value: sign, hexadecimal or decimal digits, exponent. */
-const NUMBER = /[+-]?(?:0x[0-9a-f]+|0b[01]+|(?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?)/i;
+/** Number as it stands in a value: sign, hexadecimal or decimal digits (underscores between them), exponent. */
+const NUMBER = /[+-]?(?:0x[0-9a-f_]+|0b[01_]+|0o[0-7_]+|(?:\d[\d_]*\.?[\d_]*|\.\d+)(?:e[+-]?[\d_]+)?)/i;
 
 /**
  * New spelling of the value at a place, in the unit that stands there: only the digits change; unit, quotes,
@@ -14,10 +15,36 @@ export function spellValue(place: Place, typed: number): string | null {
   if (dimension === "boolean") return spellBoolean(place.raw, typed);
   const { raw } = place;
   const from = numberStart(place);
-  const match = NUMBER.exec(raw.slice(from));
-  if (!match) return null;
+  const match = NUMBER.exec(withoutEscapes(raw).slice(from));
+  if (!match || !isTheValue(place, match[0])) return null;
   const start = from + match.index;
-  return raw.slice(0, start) + spellNumber(typed, match[0]) + raw.slice(start + match[0].length);
+  const spelt = asTyped(place, spellNumber(typed, match[0]), match[0]);
+  return raw.slice(0, start) + spelt + raw.slice(start + match[0].length);
+}
+
+/** Escapes have digits of their own; a blank in the place of each of their characters keeps the offsets. */
+function withoutEscapes(raw: string): string {
+  if (!raw.includes("\\")) return raw;
+  const escape = /\\(?:u[0-9a-f]{4}|U[0-9a-f]{8}|x[0-9a-f]{2}|[^])/gi;
+  return raw.replace(escape, (one) => " ".repeat(one.length));
+}
+
+/** Whether the digits found are all of the number, none of it being spelt by an escape. */
+function isTheValue({ value, raw }: Place, digits: string): boolean {
+  if (!raw.includes("\\")) return true;
+  const scalar = value.kind === "text" ? readScalarText(value.value) : value;
+  if (scalar.kind !== "number") return true;
+  const sign = digits.startsWith("-") ? -1 : 1;
+  return sign * Number(digits.replace(/^[+-]/, "").replaceAll("_", "")) === scalar.value;
+}
+
+const WITH_FLOATS: readonly string[] = ["toml", "yaml"];
+
+/** A number with a point or an exponent stays one where the format sets such numbers apart from whole ones. */
+function asTyped({ document, value }: Place, spelt: string, was: string): string {
+  if (value.kind !== "number" || !WITH_FLOATS.includes(document.format)) return spelt;
+  const wasFloat = /[.e]/i.test(was) && !/^[+-]?0x/i.test(was);
+  return wasFloat && /^[+-]?[\d_]+$/.test(spelt) ? `${spelt}.0` : spelt;
 }
 
 /** Microsteps written 1/16 have their number after the stroke. */

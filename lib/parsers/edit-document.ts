@@ -49,11 +49,23 @@ function elementSpan(entry: Entry, element: number): Entry["valueSpan"] | null {
   return entry.value.kind === "list" ? (entry.value.items[element]?.span ?? null) : null;
 }
 
+/** A text of each format that holds nothing but the one key “k” with a value, and one whose value is a list. */
+const ALONE: Record<
+  Format,
+  { readonly value: (raw: string) => string; readonly element: (raw: string) => string }
+> = {
+  lines: { value: (raw) => `k = ${raw}`, element: (raw) => `k = {${raw},0}` },
+  defines: { value: (raw) => `#define k ${raw}`, element: (raw) => `#define k {${raw},0}` },
+  json: { value: (raw) => `{"k": ${raw}}`, element: (raw) => `{"k": [${raw},0]}` },
+};
+
+/** A value of these formats ends with its line. */
+const ONE_LINE: readonly Format[] = ["lines"];
+
 /** Whether the format reads the new spelling, on a line of its own, as one value and nothing else. */
 function readsAlone(format: Format, { raw, element }: Edit): boolean {
-  if (format === "lines" && [...raw].some((char) => isLineEnd(char.charCodeAt(0)))) return false;
-  const value = element === null ? raw : `{${raw},0}`;
-  const text = format === "lines" ? `k = ${value}` : `#define k ${value}`;
+  if (ONE_LINE.includes(format) && [...raw].some((char) => isLineEnd(char.charCodeAt(0)))) return false;
+  const text = element === null ? ALONE[format].value(raw) : ALONE[format].element(raw);
   const { entries, diagnostics } = parseText({ path: "", text, format });
   const [only] = entries;
   if (!only || entries.length > 1 || diagnostics.length > 0 || only.comment !== null) return false;

@@ -1,5 +1,6 @@
 import type { Diagnostic } from "@/lib/domain/diagnostic";
 import { parseDefines } from "./defines";
+import { parseJson } from "./json";
 import { parseLines } from "./lines";
 import { recogniseFormat } from "./recognise";
 import type { Document, Format } from "./types";
@@ -7,6 +8,7 @@ import type { Document, Format } from "./types";
 const PARSERS: Record<Format, (path: string, text: string) => Document> = {
   lines: parseLines,
   defines: parseDefines,
+  json: parseJson,
 };
 
 /** Reads a text of any format; without `format` the text itself decides. Never throws on a text. */

@@ -1,14 +1,9 @@
 import { afterLineEnd, CHAR, lineEnd, skipBlanks } from "./chars";
 import { cutLine } from "./lines/lex";
 import { Pieces } from "./pieces";
+import { rankJson } from "./json/rank";
+import { score, type FormatRank } from "./rank";
 import { PIECE, type Format } from "./types";
-
-export interface FormatRank {
-  readonly format: Format;
-  /** 0 to 1. */
-  readonly score: number;
-  readonly reasons: readonly string[];
-}
 
 export interface Recognition {
   /** null: no format fits. */
@@ -23,8 +18,10 @@ const LEAST_SCORE = 0.3;
 
 /** Tells the format of a text from its own lines first and from its file name second. */
 export function recogniseFormat({ path, text }: { path: string; text: string }): Recognition {
-  const counts = countLines(text.slice(0, SAMPLE));
-  const ranking = [rankLines(path, counts), rankDefines(path, counts)].sort((a, b) => b.score - a.score);
+  const sample = { text: text.slice(0, SAMPLE), extension: extension(path) };
+  const counts = countLines(sample.text);
+  const ranks = [rankLines(path, counts), rankDefines(path, counts), rankJson(sample)];
+  const ranking = ranks.sort((a, b) => b.score - a.score);
   const best = ranking[0];
   return { format: best && best.score >= LEAST_SCORE ? best.format : null, ranking };
 }
@@ -68,16 +65,30 @@ interface PlainLine {
 function countPlainLine(sample: string, { from, end, cut }: PlainLine, counts: Counts): void {
   cut.clear();
   cutLine(sample, from, end, cut);
-  if (cut.kind(0) === PIECE.section) counts.sections++;
+  if (cut.kind(0) === PIECE.section && !isListOfObjects(sample, cut)) counts.sections++;
   else if (cut.kind(0) === PIECE.key && isPair(sample, cut)) counts.pairs++;
   else if (cut.kind(0) !== PIECE.comment) counts.other++;
 }
 
 /** A key and a value with a marked separator, or with white space and one further word. Prose has more words. */
 function isPair(sample: string, cut: Pieces): boolean {
+  if (isBraced(sample, cut)) return false;
   if (cut.kind(1) !== PIECE.separator || cut.kind(2) !== PIECE.value) return false;
   const marked = skipBlanks(sample, cut.start(1), cut.end(1)) < cut.end(1);
   return marked || !/\s[A-Za-z]+\s/.test(sample.slice(cut.start(2), cut.end(2)));
+}
+
+/** `{ …` and `"name": …` are members of an object rather than lines. */
+function isBraced(sample: string, cut: Pieces): boolean {
+  const first = sample.charCodeAt(cut.start(0));
+  if (first === CHAR.openBrace || first === CHAR.closeBrace) return true;
+  return first === CHAR.doubleQuote && sample.charCodeAt(cut.end(0)) === CHAR.colon;
+}
+
+/** `[{ …` and `["…` begin a list and name no section. */
+function isListOfObjects(sample: string, cut: Pieces): boolean {
+  const second = sample.charCodeAt(skipBlanks(sample, cut.start(0) + 1, cut.end(0)));
+  return second === CHAR.openBrace || second === CHAR.doubleQuote;
 }
 
 function extension(path: string): string {
@@ -105,10 +116,4 @@ function rankDefines(path: string, counts: Counts): FormatRank {
   if (counts.directives > 0) reasons.push(`${counts.directives} lines are preprocessor directives`);
   if (named) reasons.push(`the file name ends in .${extension(path)}`);
   return { format: "defines", score: score(share, named), reasons };
-}
-
-/** The text's own lines count four fifths, the file name the rest, and more where the lines leave it open. */
-function score(share: number, named: boolean): number {
-  const own = 0.8 * share + (named ? 0.2 : 0);
-  return Math.round(100 * Math.min(1, named ? Math.max(own, 0.35) : own)) / 100;
 }

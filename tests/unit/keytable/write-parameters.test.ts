@@ -306,6 +306,9 @@ describe("a number", () => {
     [15, "0x00FF", "0x000F"],
     [1.5, "0xff", "1.5"],
     [80, ".5", "80.0"],
+    [12000, "8_000", "12_000"],
+    [1200000.5, "800_000.0", "1_200_000.5"],
+    [200, "1_6", "200"],
   ])("%d in the manner of %s is %s", (value, was, text) => expect(spellNumber(value, was)).toBe(text));
 
   it("keeps six significant digits at least, without an exponent", { timeout: TIMEOUT }, () => {

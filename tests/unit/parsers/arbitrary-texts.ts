@@ -20,12 +20,12 @@ export interface ModelText {
   readonly entries: readonly ModelEntry[];
 }
 
-const blanks = fc.constantFrom("", " ", "  ", "\t", " \t ");
-const someBlanks = fc.constantFrom(" ", "  ", "\t", "    ");
-const lineEnds = fc.constantFrom("\n", "\r\n", "\r", "\n", "\n");
-const word = fc.stringMatching(/^[a-z][a-z0-9_]{0,7}$/);
+export const blanks = fc.constantFrom("", " ", "  ", "\t", " \t ");
+export const someBlanks = fc.constantFrom(" ", "  ", "\t", "    ");
+export const lineEnds = fc.constantFrom("\n", "\r\n", "\r", "\n", "\n");
+export const word = fc.stringMatching(/^[a-z][a-z0-9_]{0,7}$/);
 const proseWord = fc.constantFrom("carriage", "belt", "spring", "screw", "cover", "plate");
-const prose = fc.array(proseWord, { minLength: 1, maxLength: 5 }).map((words) => words.join(" "));
+export const prose = fc.array(proseWord, { minLength: 1, maxLength: 5 }).map((words) => words.join(" "));
 
 const integer = fc.integer({ min: -99_999, max: 99_999 }).map(String);
 const decimal = fc

@@ -24,6 +24,9 @@ describe("an edit", () => {
     ["defines", "#define RUN 800 // mA", "RUN", "900", "#define RUN 900 // mA"],
     ["defines", "#define RUN\t(800)\n", "RUN", "(900)", "#define RUN\t(900)\n"],
     ["defines", "//#define RUN 800", "RUN", "900", "//#define RUN 900"],
+    ["json", '{"run": 800, // note\n"b":1}', "run", "1000", '{"run": 1000, // note\n"b":1}'],
+    ["json", '{ // "run": 800,\n}', "run", "900", '{ // "run": 900,\n}'],
+    ["json", '\ufeff{"a":{"run":null}}', "a.run", '"800 mA"', '\ufeff{"a":{"run":"800 mA"}}'],
     ["defines", "#define RUN 800", "RUN", "{ 1, \\\n 2 }", "#define RUN { 1, \\\n 2 }"],
   ])("in %s %j replaces the value", (format, text, key, raw, after) => {
     expect(edit(format, text, [key, raw])).toEqual({ text: after, reasons: [] });
@@ -52,6 +55,10 @@ describe("an edit", () => {
     ["lines", "run = 800", "run", '"open'],
     ["lines", "run = 800\nb = 2", "run", "900\r"],
     ["lines", "# run = 800", "run", "as fast as it goes"],
+    ["json", '{"run": 800}', "run", "900 mA"],
+    ["json", '{"run": 800}', "run", '900, "b": 1'],
+    ["json", '{"run": 800}', "run", "900 // hot"],
+    ["json", '{"run": 800}', "run", '{"b": 1}'],
     ["defines", "#define RUN 800", "RUN", "900 // hot"],
     ["defines", "#define RUN 800", "RUN", "900\n#define B 1"],
     ["defines", "/* #define RUN 800 */", "RUN", '"*/"'],

@@ -6,21 +6,8 @@ import { parseText } from "@/lib/parsers/parse-text";
 import { recogniseFormat } from "@/lib/parsers/recognise";
 import { stringify } from "@/lib/parsers/stringify";
 import { FORMATS, type Document, type Edit, type Entry, type Format } from "@/lib/parsers/types";
-import {
-  asModel,
-  defineText,
-  defineValue,
-  garbage,
-  lineAndColumn,
-  lineText,
-  lineValue,
-  RUNS,
-  TIMEOUT,
-  type ModelText,
-} from "./arbitrary-texts";
-
-const TEXTS: Record<Format, fc.Arbitrary<ModelText>> = { lines: lineText, defines: defineText };
-const VALUES: Record<Format, fc.Arbitrary<string>> = { lines: lineValue, defines: defineValue };
+import { TEXTS, VALUES } from "./arbitrary-formats";
+import { asModel, garbage, lineAndColumn, RUNS, TIMEOUT } from "./arbitrary-texts";
 
 function parse(text: string, format: Format): Document {
   return parseText({ path: "some.conf", text, format });
@@ -182,7 +169,7 @@ describe.each(FORMATS)("texts of the format %s", { timeout: TIMEOUT }, (format) 
 /** The model of a header does not follow conditions, which can disable an entry. */
 function withoutState(format: Format) {
   return ({ disabled, ...entry }: ReturnType<typeof asModel>[number]) =>
-    format === "lines" ? { ...entry, disabled } : entry;
+    format === "defines" ? entry : { ...entry, disabled };
 }
 
 function expectEdited(document: Document, edit: Edit): void {

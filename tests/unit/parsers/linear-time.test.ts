@@ -30,6 +30,12 @@ const HOSTILE: Record<string, (size: number) => string> = {
   "sections again and again": (size) => "[a.b]\nc.d = 1\n".repeat(size),
   "commented-out keys": (size) => `${"# k 1\n".repeat(size)}k 1\n`,
   "commented-out defines": (size) => `/*\n${" * #define K 1\n".repeat(size)}*/`,
+  "nested objects": (size) => '{"a":'.repeat(size),
+  "nested objects that close": (size) => `${'{"a":'.repeat(size)}1${"}".repeat(size)}`,
+  "objects side by side": (size) => `{"a":[${'{"b":1},'.repeat(size)}1]}`,
+  "one member again and again": (size) => `{${'"a":{"b":1},'.repeat(size)}"a":1}`,
+  "comments that are no members": (size) => `{${'// "a": b\n'.repeat(size)}}`,
+  "closed brackets": (size) => "]}".repeat(size),
   "zero-width spaces": (size) => "\u200b".repeat(size),
   "carriage returns": (size) => "\r".repeat(size),
 };

@@ -16,6 +16,10 @@ describe("the format", () => {
     ["a.txt", "run_ma 800\naccel 3000", "lines"],
     ["a.conf", "# only a comment\n", "lines"],
     ["a.h", "// only a comment\n", "defines"],
+    ["a.json", '{"run_ma": 800}', "json"],
+    ["noname", '{"run_ma": 800}', "json"],
+    ["a.conf", '{\n  // rms\n  "x": { "run_ma": 800 }\n}', "json"],
+    ["noname", '[{"axis": "x"}]', "json"],
     ["noname", "/*\n * Head\n */\n#ifndef A_H\n#define A_H\n#endif", "defines"],
   ])("of %s with %j is %s", (path, text, format) => {
     const { format: found, ranking } = recogniseFormat({ path, text });

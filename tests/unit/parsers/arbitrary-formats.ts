@@ -1,0 +1,18 @@
+import type fc from "fast-check";
+import type { Format } from "@/lib/parsers/types";
+import { jsonText, jsonValue } from "./arbitrary-json";
+import { defineText, defineValue, lineText, lineValue, type ModelText } from "./arbitrary-texts";
+
+/** Texts of each format with what they say. */
+export const TEXTS: Record<Format, fc.Arbitrary<ModelText>> = {
+  lines: lineText,
+  defines: defineText,
+  json: jsonText,
+};
+
+/** Values of each format, as typed. */
+export const VALUES: Record<Format, fc.Arbitrary<string>> = {
+  lines: lineValue,
+  defines: defineValue,
+  json: jsonValue,
+};
