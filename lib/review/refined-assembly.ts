@@ -27,3 +27,14 @@ function refineAxis(axis: AxisAssembly, refined: readonly RefinedOfAxis[]): Axis
     refined: own.map(({ axis: _, ...field }) => field),
   };
 }
+
+/** The same hardware with the catalog's thermal resistances, as it would be had nothing been measured on it. */
+export function withoutRefined(assembly: Assembly): Assembly {
+  return { ...assembly, axes: assembly.axes.map(asInCatalog) };
+}
+
+function asInCatalog({ refined, ...axis }: AxisAssembly): AxisAssembly {
+  if (refined === undefined) return axis;
+  const values = Object.fromEntries(refined.map(({ field, catalog }) => [field, catalog]));
+  return { ...axis, motor: { ...axis.motor, ...values } };
+}

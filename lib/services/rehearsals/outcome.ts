@@ -48,5 +48,7 @@ function rehearsedHardware(
     return { toBe: warmer(assembly, question.riseK), axes: [], room: "today" };
   const { axes, ...swapped } = swapPart(input, question);
   if (axes.length === 0) return null;
-  return { toBe: resolveAssembly({ ...input, ...swapped }).assembly, axes, room: "to_be" };
+  // What was measured on a motor that leaves says nothing of the one that comes.
+  const refined = input.refined?.filter(({ axis }) => question.part !== "motor" || !axes.includes(axis));
+  return { toBe: resolveAssembly({ ...input, ...swapped, refined }).assembly, axes, room: "to_be" };
 }

@@ -1,6 +1,6 @@
 import { describe, expect, test } from "vitest";
 import { assemblySchema } from "@/lib/domain/assembly";
-import { withRefined, type RefinedOfAxis } from "@/lib/review/refined-assembly";
+import { withoutRefined, withRefined, type RefinedOfAxis } from "@/lib/review/refined-assembly";
 import { evaluateRules } from "@/lib/rules/evaluate-rules";
 import { heatModel } from "@/lib/rules/heat-model";
 import { assemblyWith, EXAMPLE_TEXT, exampleAssembly, textsWithout, world } from "../rules/world";
@@ -27,6 +27,10 @@ describe("thermal resistances refined by measured temperatures", () => {
     expect(of("mount-temperature")).toContain(note);
     expect(of("winding-temperature")).not.toContain("refined");
     expect(of("step-rate")).not.toContain("refined");
+  });
+
+  test("give way to the catalog's again where a fault is looked for", () => {
+    expect(withoutRefined(withRefined(exampleAssembly(), [REFINED]))).toEqual(exampleAssembly());
   });
 
   test("are left out once the catalog value that they started from has given way to another", () => {
