@@ -4,11 +4,12 @@ import { DataTypes, Model } from "sequelize";
 import type { Test, TestPlan, Trial } from "@/lib/domain/test-sheets";
 import { define } from "./define";
 
-const ID = { type: DataTypes.UUID, primaryKey: true, allowNull: false } as const;
-const OBJECT = { type: DataTypes.UUID, allowNull: false } as const;
-const TEXT = { type: DataTypes.TEXT, allowNull: false } as const;
-const DATE = { type: DataTypes.DATE, allowNull: false } as const;
-const JSON_DATA = { type: DataTypes.JSONB, allowNull: false } as const;
+// Sequelize writes the column's name into each of these, so no two columns share one.
+const id = () => ({ type: DataTypes.UUID, primaryKey: true, allowNull: false });
+const object = () => ({ type: DataTypes.UUID, allowNull: false });
+const text = () => ({ type: DataTypes.TEXT, allowNull: false });
+const date = () => ({ type: DataTypes.DATE, allowNull: false });
+const data = () => ({ type: DataTypes.JSONB, allowNull: false });
 
 export class TestSheet extends Model<InferAttributes<TestSheet>, InferCreationAttributes<TestSheet>> {
   declare id: CreationOptional<string>;
@@ -27,16 +28,16 @@ define(
   TestSheet,
   { name: "TestSheet", table: "test_sheets" },
   {
-    id: { ...ID, defaultValue: DataTypes.UUIDV4 },
+    id: { ...id(), defaultValue: DataTypes.UUIDV4 },
     number: { type: DataTypes.INTEGER, autoIncrement: true, allowNull: false },
-    machineId: OBJECT,
-    axis: TEXT,
-    test: TEXT,
+    machineId: object(),
+    axis: text(),
+    test: text(),
     changeId: { type: DataTypes.UUID },
-    plan: JSON_DATA,
-    actorId: OBJECT,
-    actorName: TEXT,
-    createdAt: DATE,
+    plan: data(),
+    actorId: object(),
+    actorName: text(),
+    createdAt: date(),
   },
 );
 
@@ -55,13 +56,13 @@ define(
   TestTrial,
   { name: "TestTrial", table: "test_trials" },
   {
-    id: ID,
-    sheetId: OBJECT,
-    data: JSON_DATA,
-    doneAt: DATE,
-    receivedAt: DATE,
-    actorId: OBJECT,
-    actorName: TEXT,
+    id: id(),
+    sheetId: object(),
+    data: data(),
+    doneAt: date(),
+    receivedAt: date(),
+    actorId: object(),
+    actorName: text(),
   },
 );
 
@@ -77,7 +78,7 @@ export class TestStrike extends Model<InferAttributes<TestStrike>, InferCreation
 define(
   TestStrike,
   { name: "TestStrike", table: "test_strikes" },
-  { trialId: ID, sheetId: OBJECT, reason: TEXT, at: DATE, actorId: OBJECT, actorName: TEXT },
+  { trialId: id(), sheetId: object(), reason: text(), at: date(), actorId: object(), actorName: text() },
 );
 
 export class TestClosing extends Model<InferAttributes<TestClosing>, InferCreationAttributes<TestClosing>> {
@@ -94,5 +95,13 @@ export class TestClosing extends Model<InferAttributes<TestClosing>, InferCreati
 define(
   TestClosing,
   { name: "TestClosing", table: "test_closings" },
-  { sheetId: ID, outcome: TEXT, result: JSON_DATA, note: TEXT, at: DATE, actorId: OBJECT, actorName: TEXT },
+  {
+    sheetId: id(),
+    outcome: text(),
+    result: data(),
+    note: text(),
+    at: date(),
+    actorId: object(),
+    actorName: text(),
+  },
 );
