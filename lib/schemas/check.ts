@@ -31,7 +31,7 @@ function checkUnits(rules: readonly KeyRule[], context: z.RefinementCtx): void {
   });
 }
 
-const sentKeyTable = z.preprocess(
+export const sentKeyTable = z.preprocess(
   withoutNulls,
   z.object({
     rules: z.array(keyRuleSchema).max(2000, "A key table has 2000 rows at most.").superRefine(checkUnits),

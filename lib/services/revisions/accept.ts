@@ -16,8 +16,8 @@ function askedFormat(format: string): Format | undefined {
   );
 }
 
-/** Sent files decoded and recognised; the first that cannot be taken is refused with its name. */
-export function acceptFiles(files: readonly SentFile[], format: string): StoredFile[] {
+/** Sent files decoded and recognised; the first that cannot be taken is refused with its name. `field`: where the request has them. */
+export function acceptFiles(files: readonly SentFile[], format: string, field = "files"): StoredFile[] {
   const asked = askedFormat(format);
-  return files.map((file, index) => acceptFile({ file, index, format: asked }));
+  return files.map((file, index) => acceptFile({ file, index, format: asked, field }));
 }

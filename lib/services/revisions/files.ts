@@ -27,13 +27,15 @@ interface Incoming {
   readonly file: SentFile;
   readonly index: number;
   readonly format?: Format | undefined;
+  /** Name of the list in the request; "files" where not said. */
+  readonly field?: string | undefined;
 }
 
 /** A sent file decoded and recognised, or the refusal that says what was found where, what was kept and what to do. */
-export function acceptFile({ file, index, format }: Incoming): StoredFile {
+export function acceptFile({ file, index, format, field = "files" }: Incoming): StoredFile {
   const bytes =
     file.base64 === undefined ? Buffer.from(file.text ?? "", "utf8") : Buffer.from(file.base64, "base64");
-  const pointer = `/files/${index}/${file.base64 === undefined ? "text" : "base64"}`;
+  const pointer = `/${field}/${index}/${file.base64 === undefined ? "text" : "base64"}`;
   const decoded = decodeBytes(bytes);
   if (!decoded.ok)
     throw refusal({
