@@ -14,7 +14,7 @@ import { interruption } from "./lib/interruption.mjs";
 import { takeLock } from "./lib/lock.mjs";
 import { startMailCatcher } from "./lib/mail-catcher.mjs";
 import { demandNode, ensureModules } from "./lib/modules.mjs";
-import { demandPort, parsePort } from "./lib/ports.mjs";
+import { demandPort, isFree, parsePort } from "./lib/ports.mjs";
 import { ensurePostgres } from "./lib/postgres.mjs";
 import { identify, living } from "./lib/processes.mjs";
 import { createProgress } from "./lib/progress.mjs";
@@ -41,13 +41,15 @@ async function step(title, what, work) {
 }
 
 /** A server left by a start that was killed would hold the port and write to the data. */
-async function endLeftover(runFile) {
+async function endLeftover(runFile, port) {
   const left = readJson(runFile)?.server;
   const pid = left && living(left);
   if (pid) {
     signalGroup(pid, "SIGTERM");
     for (let tries = 0; tries < 80 && living(left); tries += 1) await delay(100);
     signalGroup(pid, "SIGKILL");
+    // The port is given back a moment after the last process of the group is gone.
+    for (let tries = 0; tries < 100 && !(await isFree(port).catch(() => true)); tries += 1) await delay(100);
   }
   rmSync(runFile, { force: true });
 }
@@ -62,7 +64,7 @@ async function prepare(home, port) {
       `Keepstep already runs from this folder: process ${process.pid}, http://127.0.0.1:${port}. Use that one, or stop it with Ctrl-C.`,
   });
   undo.push(() => lock.release());
-  await endLeftover(path.join(home, "run.json"));
+  await endLeftover(path.join(home, "run.json"), port);
   await demandPort(port);
 }
 

@@ -1,16 +1,19 @@
 "use client";
 
-import { useEffect, useState } from "react";
+import { useSyncExternalStore } from "react";
 import { Notice } from "@/components/ui/notice";
-import { takeUnsent } from "./unsent";
+import { unsentReason } from "./unsent";
+
+/** What is kept does not change while the page is open. */
+const unchanging = () => () => undefined;
 
 /** Says on the page of a draft why it was kept but not submitted. */
 export function UnsentNotice({ changeId }: { readonly changeId: string }) {
-  const [reason, setReason] = useState<string | null>(null);
-  useEffect(() => {
-    const kept = takeUnsent(changeId);
-    if (kept !== null) setReason(kept);
-  }, [changeId]);
+  const reason = useSyncExternalStore(
+    unchanging,
+    () => unsentReason(changeId),
+    () => null,
+  );
   if (reason === null) return null;
   return (
     <Notice live="alert" title="Kept as a draft, not submitted">

@@ -9,12 +9,9 @@ export function keepUnsent(changeId: string, reason: string): void {
   }
 }
 
-/** The reason, once: reading it forgets it. */
-export function takeUnsent(changeId: string): string | null {
+export function unsentReason(changeId: string): string | null {
   try {
-    const reason = sessionStorage.getItem(keyOf(changeId));
-    sessionStorage.removeItem(keyOf(changeId));
-    return reason;
+    return sessionStorage.getItem(keyOf(changeId));
   } catch {
     return null;
   }

@@ -25,11 +25,17 @@ describe("FindingsBox", () => {
       aFinding({ ruleId: "a", level: "within", sentence: "Fine." }),
       aFinding({ ruleId: "b", level: "cannot", sentence: "Unknown." }),
       aFinding({ ruleId: "c", level: "near", sentence: "Close." }),
-      aFinding({ ruleId: "d", level: "over", sentence: "Too hot." }),
+      aFinding({ ruleId: "torque-margin", level: "over", sentence: "Too hot." }),
     ];
     const { container } = render(<FindingsBox label="Findings" findings={findings} />);
-    const shown = [...container.querySelectorAll(".findings > ul .finding-words > p:first-child")];
-    expect(shown.map((words) => words.textContent?.trim())).toEqual(["Too hot.", "Close.", "Unknown."]);
+    const shown = [...container.querySelectorAll(".findings > ul .finding-words")].map(({ children }) =>
+      [...children].slice(0, 2).map((words) => words.textContent?.trim()),
+    );
+    expect(shown).toEqual([
+      ["X axis, torque margin at speed", "Too hot."],
+      ["X axis, c", "Close."],
+      ["X axis, b", "Unknown."],
+    ]);
     expect(container.querySelector(".findings-within")?.textContent).toContain("1 check within limits");
     expect(container.querySelector(".findings-within")?.textContent).toContain("Fine.");
   });

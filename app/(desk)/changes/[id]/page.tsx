@@ -45,7 +45,7 @@ export default async function ChangePage({ params, searchParams }: ChangePagePro
   return (
     <Sheet>
       <Head change={change} past={past} />
-      <UnsentNotice changeId={id} />
+      {change.state === "draft" && <UnsentNotice changeId={id} />}
       <StaleNotice
         changeId={id}
         lockVersion={change.lockVersion}
