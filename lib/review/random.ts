@@ -1,0 +1,13 @@
+/**
+ * Evenly spread numbers in [0, 1) from a seed: the same seed gives the same numbers on every machine. 32 bits of state,
+ * period 2³²: enough for sampling tolerances, never for secrets. Source: mulberry32, public domain (from memory).
+ */
+export function seededRandom(seed: number): () => number {
+  let state = seed >>> 0;
+  return () => {
+    state = (state + 0x6d2b79f5) >>> 0;
+    let mixed = Math.imul(state ^ (state >>> 15), state | 1);
+    mixed ^= mixed + Math.imul(mixed ^ (mixed >>> 7), mixed | 61);
+    return ((mixed ^ (mixed >>> 14)) >>> 0) / 2 ** 32;
+  };
+}
