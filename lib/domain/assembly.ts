@@ -23,6 +23,21 @@ export const motorSchema = z.object({
   winding_to_ambient_k_per_w: positive("Thermal resistance, winding to ambient", "K/W"),
   case_to_ambient_k_per_w: positive("Thermal resistance, case to ambient", "K/W"),
   thermal_time_constant_s: positive("Thermal time constant", "s"),
+  thermal_class: choice(
+    ["A", "E", "B", "F", "H"],
+    "Thermal class",
+    "IEC 60085: A 105 °C, E 120 °C, B 130 °C, F 155 °C, H 180 °C at the hot spot",
+  ),
+  rating_of: choice(
+    ["winding", "half_coil"],
+    "Rating holds for",
+    "Half coil: current, resistance and inductance are those of a unipolar rating",
+  ),
+  connection: choice(
+    ["half_coil", "series", "parallel"],
+    "Coils are connected as",
+    "For a rating of the half coil: how the coils are wired to this driver",
+  ),
 });
 
 export const SET_POINT_METHODS = [
@@ -69,6 +84,11 @@ export const driverSchema = z.object({
   min_on_time_us: positive("Minimum on-time", "µs"),
   chopping_frequency_hz: positive("Chopping frequency", "Hz"),
   decay_mode: choice(["slow", "mixed", "fast"], "Decay mode"),
+  feedback: choice(
+    ["open_loop", "closed_loop"],
+    "Loop of the drive",
+    "A drive that corrects its position by an encoder is not covered by the checks of torque, heat and lost steps",
+  ),
   set_point: setPointSchema.optional(),
 });
 
@@ -82,6 +102,26 @@ export const driveTrainSchema = z.object({
   ratio: positive("Ratio", "", "Motor turns for one output turn"),
   efficiency: within(0.01, 1, "Efficiency", "", "As a share of 1"),
   inertia_kgm2: notNegative("Inertia at the motor shaft", "kg·m²"),
+  preload_n: notNegative("Preload of the nut", "N", "Ball screws; often a third of the greatest load"),
+  preload_friction: within(
+    0,
+    1,
+    "Inner friction of the preloaded nut",
+    "",
+    "0.1 to 0.3, from its data sheet",
+  ),
+  belt_stiffness_n_per_mm: positive(
+    "Belt stiffness for each mm of width",
+    "N/mm",
+    "Force for unit strain, from the belt's data sheet",
+  ),
+  belt_width_mm: positive("Belt width", "mm"),
+  belt_length_mm: positive("Belt length between the pulleys", "mm", "Both spans together"),
+  axial_stiffness_n_per_um: positive(
+    "Axial stiffness",
+    "N/µm",
+    "Screw or rack with bearings; of a belt in place of its three data above",
+  ),
 });
 
 export const loadSchema = z.object({
@@ -91,6 +131,12 @@ export const loadSchema = z.object({
   external_force_n: anyNumber("External force", "N"),
   counterbalance_n: notNegative("Counterbalance", "N"),
   holding_brake: yesNo("Holding brake"),
+  brake_delay_ms: notNegative("Time until the brake holds", "ms", "From the loss of power"),
+  reference_overtravel_mm: positive(
+    "Free travel behind the reference switch",
+    "mm",
+    "From where it switches to the hard stop",
+  ),
   inertia_kgm2: notNegative("Load inertia at the output", "kg·m²", "Rotary axes"),
   friction_nm: notNegative("Friction torque at the output", "N·m", "Rotary axes"),
   external_torque_nm: anyNumber("External torque at the output", "N·m", "Rotary axes"),
@@ -110,6 +156,13 @@ export const supplySchema = z.object({
   tolerance: within(0, 0.5, "Tolerance", "", "As a share of 1"),
   rated_power_w: positive("Rated power", "W"),
   bus_capacitance_uf: positive("Bus capacitance", "µF"),
+  other_load_w: notNegative("Other load on this supply", "W", "Controller, lights, heaters, valves"),
+  cable_length_m: positive("Length of the cable to the drivers", "m", "One way"),
+  cable_ohm_per_km: positive(
+    "Resistance of one conductor at 20 °C",
+    "Ω/km",
+    "IEC 60228 class 5: 0.5 mm² 39.0, 0.75 mm² 26.0, 1 mm² 19.5, 1.5 mm² 13.3, 2.5 mm² 7.98",
+  ),
 });
 
 export const axisAssemblySchema = z.object({

@@ -22,6 +22,17 @@ export const QUANTITIES = {
   full_step_rate: { unit: "Hz", label: "Full-step rate" },
   bus_voltage_after_braking: { unit: "V", label: "Bus voltage after braking" },
   minimum_current_peak: { unit: "A", label: "Lowest controllable current, peak" },
+  ramp_torque_margin: { unit: "", label: "Least torque margin on the ramp" },
+  torque_required_rms: { unit: "N·m", label: "Torque of the longest move, rms" },
+  move_time: { unit: "s", label: "Time of the longest move" },
+  driver_current_limit: { unit: "A", label: "Highest driver current at this ambient, rms" },
+  static_position_error: { unit: "m", label: "Position error under load" },
+  inertia_ratio: { unit: "", label: "Inertia ratio" },
+  axis_resonance_hz: { unit: "Hz", label: "Axis resonance" },
+  fall_distance: { unit: "m", label: "Way fallen before the brake holds" },
+  supply_load: { unit: "W", label: "Load on the supply" },
+  cable_drop: { unit: "V", label: "Voltage lost on the supply cable" },
+  coupled_torque_margin: { unit: "", label: "Torque margin of the busiest coupled motor" },
 } as const;
 
 export type QuantityName = keyof typeof QUANTITIES;
@@ -33,6 +44,6 @@ export interface Quantity {
   readonly axis: string | null;
   readonly name: QuantityName;
   readonly value: number;
-  /** As QUANTITIES says, but "rad/s" and "1/deg" on a rotary axis. */
+  /** As QUANTITIES says, but "rad", "rad/s" and "1/deg" on a rotary axis. */
   readonly unit: string;
 }

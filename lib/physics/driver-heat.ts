@@ -43,3 +43,27 @@ export function driverSteadyState(input: {
   const power = conduction * (1 + ON_RESISTANCE_GROWTH * (junction - conductionAt)) + constant;
   return { junction, power };
 }
+
+/**
+ * Highest current of one driver, A rms, at which its junction settles at Tj (°C) in air of Ta (°C):
+ * 2·R_on·(1 + α·(Tj − T0))·I² + s·I + P_q = (Tj − Ta)/R_th. R_on in Ω at T0 (°C), s the switching loss of 1 A rms (W/A),
+ * P_q in W, R_th in K/W. 0 where the air alone, or the loss without current, is too much.
+ * Source: `driverSteadyState` solved for the current.
+ */
+export function highestDriverCurrent(input: {
+  readonly onResistance: number;
+  readonly onResistanceAt: number;
+  readonly switchingPerAmpere: number;
+  readonly quiescent: number;
+  readonly thermalResistance: number;
+  readonly ambient: number;
+  readonly junction: number;
+}): number {
+  const spare = (input.junction - input.ambient) / input.thermalResistance - input.quiescent;
+  const growth = 1 + ON_RESISTANCE_GROWTH * (input.junction - input.onResistanceAt);
+  const a = 2 * input.onResistance * growth;
+  const s = input.switchingPerAmpere;
+  if (spare <= 0 || a <= 0) return 0;
+  // 2·c/(b + √…) instead of (−b + √…)/2a: no cancellation where switching dominates.
+  return (2 * spare) / (s + Math.sqrt(s ** 2 + 4 * a * spare));
+}

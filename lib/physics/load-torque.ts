@@ -35,3 +35,27 @@ export function opposingForce(input: {
 }): number {
   return input.friction + Math.abs(input.external + input.weight);
 }
+
+/**
+ * Torque at the motor, N·m, that the preload of a ball nut takes: μ0·F0·r; F0 in N, μ0 inner friction of the preloaded
+ * nut (0.1 to 0.3, no unit), r travel for one radian of the motor in m (lead/2π).
+ * Source: Oriental Motor, Selecting a motor: load torque.
+ */
+export function preloadTorque(input: {
+  readonly preload: number;
+  readonly friction: number;
+  readonly radius: number;
+}): number {
+  return input.friction * input.preload * input.radius;
+}
+
+/** Load inertia at the shaft over the rotor's own, no unit; both in kg·m². Source: definition. */
+export function inertiaRatio(load: number, rotor: number): number {
+  return load / rotor;
+}
+
+/** Torque over a duty cycle, N·m rms: √(Σ T²·t/Σ t); T in N·m, t in s, together more than 0 s. Source: definition of the rms. */
+export function dutyTorque(parts: readonly { readonly torque: number; readonly time: number }[]): number {
+  const time = parts.reduce((sum, part) => sum + part.time, 0);
+  return Math.sqrt(parts.reduce((sum, { torque, time: t }) => sum + torque ** 2 * t, 0) / time);
+}

@@ -18,3 +18,17 @@ export function lowestCurrent(input: {
 export function firstMicrostepShare(microsteps: number): number {
   return Math.sin(Math.PI / (2 * microsteps));
 }
+
+/**
+ * Microsteps that pass before a load with friction begins to move: (N/90°)·asin(T_f/T); N microsteps in a full step,
+ * friction torque T_f and holding torque T in N·m. Infinity where friction holds the rotor at any angle.
+ * Source: torque of k microsteps, T·sin(k·90°/N) (Micromo/Faulhaber, Microstepping: Myths and Realities).
+ */
+export function microstepsToMove(input: {
+  readonly microsteps: number;
+  readonly friction: number;
+  readonly holdingTorque: number;
+}): number {
+  const share = input.friction / input.holdingTorque;
+  return share <= 1 ? (input.microsteps * Math.asin(share)) / (Math.PI / 2) : Infinity;
+}

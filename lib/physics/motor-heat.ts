@@ -37,3 +37,44 @@ export function windingSteadyState(input: {
   const temperature = (ambient + (rise * COPPER) / COPPER_AT_20) / loop;
   return { temperature, power: windingPower({ current, resistanceAt20, temperature }) };
 }
+
+/**
+ * Winding temperature by resistance, °C: (R2/R1)·(k + θ1) − k; R1 in Ω at θ1 (°C, motor as cold as the air), R2 in Ω hot.
+ * k = 234.5 K for copper, the trade's and this project's value throughout; IEC 60034-1 prints 235, which gives at most
+ * 0.2 K more up to 130 °C. It is the mean of the winding, 5 to 15 K below its hot spot.
+ * Source: IEC 60034-1, resistance method (clause from memory: 8.6.2).
+ */
+export function windingTemperatureByResistance(input: {
+  readonly cold: number;
+  readonly coldAt: number;
+  readonly hot: number;
+}): number {
+  return (input.hot / input.cold) * (COPPER + input.coldAt) - COPPER;
+}
+
+export const THERMAL_CLASSES = ["A", "E", "B", "F", "H"] as const;
+export type ThermalClass = (typeof THERMAL_CLASSES)[number];
+
+/** °C of the hot spot (IEC 60085), K of mean rise by resistance above 40 °C air (IEC 60034-1; A and E from memory). */
+const CLASS_LIMITS: Readonly<Record<ThermalClass, { readonly hotSpot: number; readonly rise: number }>> = {
+  A: { hotSpot: 105, rise: 60 },
+  E: { hotSpot: 120, rise: 75 },
+  B: { hotSpot: 130, rise: 80 },
+  F: { hotSpot: 155, rise: 105 },
+  H: { hotSpot: 180, rise: 125 },
+};
+
+/** Air, °C, that the rises of IEC 60034-1 are stated for. */
+export const CLASS_AMBIENT = 40;
+
+/**
+ * Limits of a thermal class: hot spot in °C and mean winding rise in K over air of 40 °C. In cooler air the rise may
+ * be greater, in warmer air it is less, so that 40 °C + rise is the limit of the mean temperature.
+ * Source: IEC 60085 (A 105, E 120, B 130, F 155, H 180 °C); IEC 60034-1 (B 80, F 105, H 125 K; A 60, E 75 K from memory).
+ */
+export function thermalClassLimits(letter: ThermalClass): {
+  readonly hotSpot: number;
+  readonly rise: number;
+} {
+  return CLASS_LIMITS[letter];
+}

@@ -13,3 +13,27 @@ export function naturalFrequency(stiffness: number, inertia: number): number {
 export function magneticStiffness(holdingTorque: number, rotorTeeth: number): number {
   return rotorTeeth * holdingTorque;
 }
+
+/**
+ * Least stiffness, N/m, of a closed belt between its pulleys: c·b·(1/L1 + 1/L2) of the two spans in parallel, least
+ * where they are equal, 4·c·b/L. c in N for unit strain and mm of width (N/mm), b in mm, L = L1 + L2 in m.
+ * Belts stiffen with tension; a data sheet's c is of the tensioned belt.
+ * Source: form of Gates Mectrol, Timing Belt Theory (its constant from memory); two springs in parallel.
+ */
+export function leastBeltStiffness(input: {
+  readonly specific: number;
+  readonly width: number;
+  readonly length: number;
+}): number {
+  const half = input.length / 2;
+  return beltStiffness({ specific: input.specific, width: input.width, spans: [half, half] });
+}
+
+/** Stiffness, N/m, of a belt's two spans (m) in parallel. Symbols and source: `leastBeltStiffness`. */
+export function beltStiffness(input: {
+  readonly specific: number;
+  readonly width: number;
+  readonly spans: readonly number[];
+}): number {
+  return input.spans.reduce((sum, span) => sum + (input.specific * input.width) / span, 0);
+}

@@ -1,3 +1,5 @@
+import { copperFactor } from "./motor-heat";
+
 /** Highest supply voltage, V: V·(1 + tolerance), tolerance a share of 1. Source: definition of the tolerance. */
 export function highestSupplyVoltage(voltage: number, tolerance: number): number {
   return voltage * (1 + tolerance);
@@ -18,4 +20,53 @@ export function voltageAfterBraking(input: {
   readonly capacitance: number;
 }): number {
   return Math.sqrt(input.voltage ** 2 + (2 * input.energy) / input.capacitance);
+}
+
+/**
+ * Supply voltage over the voltage of the winding's resistance at rated current, no unit: V/(I_r·R); V in V, I_r in A rms,
+ * R in Ω at 20 °C. 5 to 25 is usual (common practice, no source); 4, a 3 V motor on 12 V, is in daily use.
+ */
+export function overdriveRatio(input: {
+  readonly voltage: number;
+  readonly ratedCurrent: number;
+  readonly resistance: number;
+}): number {
+  return input.voltage / (input.ratedCurrent * input.resistance);
+}
+
+/**
+ * Supply voltage, V, up to which a motor of inductance L (mH) is usually run: 32·√L. A rule about the motor's iron heat;
+ * it never stands above the driver's own limit. Common practice, no source.
+ */
+export function inductanceRuleVoltage(inductanceMillihenry: number): number {
+  return 32 * Math.sqrt(inductanceMillihenry);
+}
+
+/**
+ * Power that a supply has to deliver, W: (Σ copper + Σ drivers + Σ mechanical + other)/η; all in W, η the share that
+ * arrives (iron, wiring and switching losses take the rest), 0 to 1. Source: balance of power.
+ */
+export function supplyLoad(input: {
+  readonly copper: number;
+  readonly drivers: number;
+  readonly mechanical: number;
+  readonly other: number;
+  readonly efficiency: number;
+}): number {
+  return (input.copper + input.drivers + input.mechanical + input.other) / input.efficiency;
+}
+
+/**
+ * Voltage lost on a cable of two conductors, V: 2·l·R'·I·(234.5 + T)/254.5; l in m, R' of one conductor in Ω/km at
+ * 20 °C, I in A, T in °C. Source: Ohm's law; R' after IEC 60228 class 5: 39.0 (0.5 mm²), 26.0 (0.75), 19.5 (1.0),
+ * 13.3 (1.5), 7.98 (2.5) Ω/km.
+ */
+export function cableDrop(input: {
+  readonly length: number;
+  readonly ohmPerKm: number;
+  readonly current: number;
+  readonly temperature: number;
+}): number {
+  const loop = (2 * input.length * input.ohmPerKm) / 1000;
+  return loop * input.current * copperFactor(input.temperature);
 }

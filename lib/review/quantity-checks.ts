@@ -29,6 +29,8 @@ const TOP_SPEED: readonly ParameterName[] = ["max_speed", "acceleration", "trave
 /** Every quantity in the order of the effects table: what loses steps or gets hot first, then what explains it. */
 export const QUANTITY_CHECKS: readonly QuantityChecks[] = [
   judged("torque_margin", "torque-margin"),
+  judged("ramp_torque_margin", "ramp-torque-margin"),
+  judged("coupled_torque_margin", "coupled-motors"),
   judged("case_c", "mount-temperature", "touch-temperature"),
   judged("winding_c", "winding-temperature"),
   judged("driver_junction_c", "driver-junction"),
@@ -48,6 +50,15 @@ export const QUANTITY_CHECKS: readonly QuantityChecks[] = [
   explaining("driver_power", () => CURRENT),
   hinted("full_step_rate", "resonance", () => TOP_SPEED),
   hinted("minimum_current_peak", "microstep-current", () => []),
+  hinted("static_position_error", "static-position", () => [...CURRENT, "hold_current", "hold_scale"]),
+  hinted("fall_distance", "fall-after-power-loss", () => []),
+  { ...judged("supply_load", "supply-power"), restsOn: () => [...CURRENT, ...TOP_SPEED] },
+  { ...judged("cable_drop", "cable-drop"), restsOn: () => [...CURRENT, ...TOP_SPEED] },
+  hinted("axis_resonance_hz", "axis-resonance", () => ["max_speed", "reference_run_speed"]),
+  hinted("inertia_ratio", "inertia-ratio", () => []),
+  explaining("move_time", () => [...TOP_SPEED, "jerk"]),
+  explaining("torque_required_rms", () => TOP_SPEED),
+  explaining("driver_current_limit", () => []),
 ];
 
 /** The text's own scale beats the geometry; pulse width and highest rate move the limit. */

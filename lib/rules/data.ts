@@ -3,6 +3,7 @@ import type { ParameterName } from "@/lib/domain/parameters";
 import { parameterDefinition } from "@/lib/domain/parameters";
 import { formatNumber } from "@/lib/domain/units";
 import type { ParameterValue } from "@/lib/domain/values";
+import { connectionFactors } from "@/lib/physics/current-conventions";
 import type { AxisView, Computed, Datum, Known, Missing } from "./types";
 
 interface Parts {
@@ -55,7 +56,24 @@ export function hardware<P extends keyof Parts>(
 ): Datum {
   const fields: Readonly<Record<string, unknown>> | undefined = axis.hardware[part];
   const value = fields?.[field];
-  return typeof value === "number" ? given(value) : missing(axisPath(axis, `${part}.${field}`));
+  if (typeof value !== "number") return missing(axisPath(axis, `${part}.${field}`));
+  if (part !== "motor" || axis.hardware.motor?.rating_of !== "half_coil") return given(value);
+  return asConnected(axis, field, value);
+}
+
+const AS_CONNECTED: Readonly<Record<string, keyof ReturnType<typeof connectionFactors>>> = {
+  rated_current_a: "current",
+  resistance_ohm: "resistance",
+  inductance_mh: "inductance",
+};
+
+/** A datum of a half coil as it counts for the winding that the coils are connected to. */
+function asConnected(axis: AxisView, field: string, value: number): Datum {
+  const factor = AS_CONNECTED[field];
+  if (factor === undefined) return given(value);
+  const connection = axis.hardware.motor?.connection;
+  if (connection === undefined) return missing(axisPath(axis, "motor.connection"));
+  return given(value * connectionFactors(connection)[factor]);
 }
 
 /** A number of the driver's set-point, in the unit of its name. */

@@ -2,23 +2,18 @@ import { exceeds, judged, judgeTemperature, unbounded, upperSign } from "./asses
 import type { Assessment } from "./assessment";
 import { currentParameters, lowerCurrent } from "./candidates";
 import { axisRule } from "./check";
-import { gather, hardware } from "./data";
+import { gather } from "./data";
+import { junctionLimit } from "./quantities/driver";
 import { readsOf } from "./quantities/table";
 import { show } from "./show";
-import type { AxisView, Datum } from "./types";
+import type { AxisView } from "./types";
 
-const RESERVE = 25;
 const NEAR = 15;
 
 /**
- * Where `over` begins, °C: the policy's limit, or the junction's own less 25 K. Without the junction's own only the
- * policy's can be held against, which is enough to say `over` and not enough to say anything better.
+ * Without the junction's own limit only the policy's can be held against, which is enough to say `over` and not enough
+ * to say anything better.
  */
-function junctionLimit(axis: AxisView): Datum {
-  const own = hardware(axis, "driver", "junction_limit_c");
-  return own.ok ? { ...own, value: Math.min(axis.policy.junction_limit_c, own.value - RESERVE) } : own;
-}
-
 function assess(axis: AxisView): Assessment {
   const junction = axis.quantity("driver_junction_c");
   const limit = junctionLimit(axis);

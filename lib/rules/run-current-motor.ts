@@ -2,7 +2,7 @@ import { BESIDE, judged, judgeUpper, upperSign } from "./assessment";
 import { currentParameters, lowerCurrent } from "./candidates";
 import { axisRule } from "./check";
 import { gather } from "./data";
-import { ratingRms } from "./quantities/current";
+import { RATED_READS, ratingRms } from "./quantities/current";
 import { readsOf } from "./quantities/table";
 import { showRms } from "./show";
 
@@ -12,7 +12,7 @@ export const RUN_CURRENT_MOTOR = axisRule({
   compares: "The current in each winding with the rated current of the motor, both as rms.",
   formula: "I ≤ I_r",
   source: "Motor data sheet: rated current of each winding, both phases on",
-  needs: [...readsOf("winding_current_rms"), "motor.rated_current_a", "motor.rated_current_basis"],
+  needs: [...readsOf("winding_current_rms"), ...RATED_READS],
   margin: "near above 90 % of the rating, over above the rating",
   caution: null,
   parameters: (axis) => currentParameters(axis, "run_current"),

@@ -17,6 +17,21 @@ import { TORQUE_MARGIN } from "./torque-margin";
 import { TOUCH_TEMPERATURE } from "./touch-temperature";
 import type { Rule } from "./types";
 import { WINDING_TEMPERATURE } from "./winding-temperature";
+import { AXIS_RESONANCE } from "./axis-resonance";
+import { CABLE_DROP } from "./cable-drop";
+import { COUPLED_JUMP } from "./coupled-jump";
+import { COUPLED_MOTORS } from "./coupled-motors";
+import { FALL_AFTER_POWER_LOSS } from "./fall-after-power-loss";
+import { INDUCTANCE_RULE } from "./inductance-rule";
+import { INERTIA_RATIO } from "./inertia-ratio";
+import { MICROSTEP_FRICTION } from "./microstep-friction";
+import { RAMP_TORQUE_MARGIN } from "./ramp-torque-margin";
+import { REFERENCE_RUN } from "./reference-run";
+import { SOFT_TRAVEL } from "./soft-travel";
+import { STATIC_POSITION } from "./static-position";
+import { SUPPLY_OVERDRIVE } from "./supply-overdrive";
+import { SUPPLY_POWER } from "./supply-power";
+import { WINDING_CLASS } from "./winding-class";
 
 /** Every check, in the order in which pages list them. */
 export const RULES: readonly Rule[] = [
@@ -26,16 +41,31 @@ export const RULES: readonly Rule[] = [
   DRIVER_JUNCTION,
   SENSE_RESISTOR,
   WINDING_TEMPERATURE,
+  WINDING_CLASS,
   MOUNT_TEMPERATURE,
   TOUCH_TEMPERATURE,
   STEPS_PER_MM,
   STEP_RATE,
   TORQUE_MARGIN,
+  RAMP_TORQUE_MARGIN,
   CORNER_SPEED,
   HOLD_TORQUE,
+  FALL_AFTER_POWER_LOSS,
+  STATIC_POSITION,
   SUPPLY_VOLTAGE,
   BRAKING_VOLTAGE,
+  SUPPLY_POWER,
+  CABLE_DROP,
+  SUPPLY_OVERDRIVE,
+  INDUCTANCE_RULE,
   RESONANCE,
+  AXIS_RESONANCE,
   SPEED_REACHED,
+  SOFT_TRAVEL,
+  REFERENCE_RUN,
   MICROSTEP_CURRENT,
+  MICROSTEP_FRICTION,
+  INERTIA_RATIO,
+  COUPLED_MOTORS,
+  COUPLED_JUMP,
 ];

@@ -4,6 +4,7 @@ import type { ParameterName } from "@/lib/domain/parameters";
 import type { QuantityName } from "@/lib/domain/quantities";
 import type { ParameterValue } from "@/lib/domain/values";
 import { unusable } from "./data";
+import { isClosedLoop, notCovered, presumesOpenLoop } from "./quantities/open-loop";
 import { AXIS_QUANTITIES, isMachineQuantity, MACHINE_QUANTITIES, rests } from "./quantities/table";
 import type { MachineQuantityName } from "./quantities/table";
 import type { AxisView, Computed, RuleContext, RuleInput } from "./types";
@@ -88,6 +89,7 @@ function axisView(facts: AxisFacts, before?: Before): AxisView {
         : before.view.parameter(name);
   const compute = (name: QuantityName): Computed => {
     if (isMachineQuantity(name)) return unusable(`${name} is a quantity of the machine.`);
+    if (isClosedLoop(hardware) && presumesOpenLoop(name)) return notCovered(hardware.axis);
     // What the changed parameter cannot move is the same as before.
     if (before && !rests(name, before.moved)) return before.view.quantity(name);
     return AXIS_QUANTITIES[name].compute(view);

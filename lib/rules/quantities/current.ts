@@ -1,6 +1,6 @@
 import { toRms } from "@/lib/physics/current-conventions";
 import { exceeds } from "../assessment";
-import { axisPath, computed, fromText, gather, missing, motorCount, unusable } from "../data";
+import { axisPath, computed, fromText, gather, hardware, missing, motorCount, unusable } from "../data";
 import { show, showPeak, showRms } from "../show";
 import type { AxisView, Computed } from "../types";
 import type { QuantityDefinition } from "./definition";
@@ -70,19 +70,32 @@ export const HOLD_CURRENT: QuantityDefinition = {
   compute: (axis) => resolvedCurrent(axis, "hold_current"),
 };
 
-/** A catalog current as A rms; its basis is a datum of its own, since peak and rms differ by 41 %. */
+/** What `ratingRms` of the motor reads. */
+export const RATED_READS = [
+  "motor.rated_current_a",
+  "motor.rated_current_basis",
+  "motor.rating_of",
+  "motor.connection",
+] as const;
+
+/** What a winding's resistance and inductance rest on besides themselves. */
+export const CONNECTION_READS = ["motor.rating_of", "motor.connection"] as const;
+
+/** A catalog current as A rms, a motor's as its coils are connected; its basis is a datum of its own, since peak and rms differ by 41 %. */
 export function ratingRms(axis: AxisView, part: "motor" | "driver"): Computed {
   const { motor, driver } = axis.hardware;
   const field = part === "motor" ? "motor.rated_current" : "driver.max_current";
-  const stated = part === "motor" ? motor?.rated_current_a : driver?.max_current_a;
+  const stated =
+    part === "motor" ? hardware(axis, "motor", "rated_current_a") : hardware(axis, "driver", "max_current_a");
   const basis = part === "motor" ? motor?.rated_current_basis : driver?.max_current_basis;
-  if (stated === undefined || basis === undefined)
+  if (!stated.ok || basis === undefined)
     return missing(
-      ...(stated === undefined ? [axisPath(axis, `${field}_a`)] : []),
+      ...(stated.ok ? [] : stated.needs),
       ...(basis === undefined ? [axisPath(axis, `${field}_basis`)] : []),
     );
-  const rms = toRms(stated, basis);
+  const { value } = stated;
+  const rms = toRms(value, basis);
   return computed(rms, [], () =>
-    basis === "rms" ? showRms(stated) : `${showPeak(stated)} / √2 = ${showRms(rms)}`,
+    basis === "rms" ? showRms(value) : `${showPeak(value)} / √2 = ${showRms(rms)}`,
   );
 }

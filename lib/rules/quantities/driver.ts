@@ -1,5 +1,10 @@
 import { peakFromRms } from "@/lib/physics/current-conventions";
-import { conductionLoss, driverSteadyState, switchingLoss } from "@/lib/physics/driver-heat";
+import {
+  conductionLoss,
+  driverSteadyState,
+  highestDriverCurrent,
+  switchingLoss,
+} from "@/lib/physics/driver-heat";
 import { senseResistorPower } from "@/lib/physics/sense-resistor";
 import {
   computed,
@@ -144,6 +149,54 @@ export const DRIVER_JUNCTION: QuantityDefinition = {
       junction,
       parts.assumed,
       () => `${show(ambient, "°C")} + ${plain(thermal)} K/W · ${show(power, "W")} = ${show(junction, "°C")}`,
+    );
+  },
+};
+
+/** Where `over` of the junction begins, °C: the policy's limit, or the junction's own less 25 K. */
+export function junctionLimit(axis: AxisView): Datum {
+  const own = hardware(axis, "driver", "junction_limit_c");
+  return own.ok
+    ? { ...own, value: Math.min(axis.policy.junction_limit_c, own.value - JUNCTION_RESERVE) }
+    : own;
+}
+
+const JUNCTION_RESERVE = 25;
+
+/** What the driver may carry in this air, however large the board's rating is. */
+export const DRIVER_CURRENT_LIMIT: QuantityDefinition = {
+  reads: [
+    "driver.rds_on_ohm",
+    "driver.rds_on_at_c",
+    "driver.quiescent_power_w",
+    "driver.switching_edge_ns",
+    "driver.chopping_frequency_hz",
+    "driver.junction_to_ambient_k_per_w",
+    "driver.junction_limit_c",
+    "supply.voltage_v",
+    "machine.ambient_c",
+    "machine.enclosure_rise_k",
+  ],
+  from: [],
+  compute: (axis) => {
+    const parts = gather({
+      onResistance: hardware(axis, "driver", "rds_on_ohm"),
+      onResistanceAt: hardware(axis, "driver", "rds_on_at_c"),
+      quiescent: hardware(axis, "driver", "quiescent_power_w"),
+      // Switching loss grows in proportion to the current.
+      switchingPerAmpere: switching(axis, given(1)),
+      thermalResistance: hardware(axis, "driver", "junction_to_ambient_k_per_w"),
+      ambient: driverAmbient(axis),
+      junction: junctionLimit(axis),
+    });
+    if (!parts.ok) return parts;
+    const current = highestDriverCurrent(parts.values);
+    const { ambient, junction, thermalResistance } = parts.values;
+    return computed(
+      current,
+      parts.assumed,
+      () =>
+        `(${show(junction, "°C")} − ${show(ambient, "°C")}) / ${plain(thermalResistance)} K/W carried away: ${showRms(current)}`,
     );
   },
 };

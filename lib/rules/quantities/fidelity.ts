@@ -2,6 +2,7 @@ import { lowestCurrent } from "@/lib/physics/microstep-fidelity";
 import { axisPath, computed, gather, hardware, missing, supplyVoltage } from "../data";
 import { plain, show, showPeak } from "../show";
 import type { Computed } from "../types";
+import { CONNECTION_READS } from "./current";
 import type { QuantityDefinition } from "./definition";
 
 const OTHER_DECAY: Computed = {
@@ -16,6 +17,7 @@ export const MINIMUM_CURRENT: QuantityDefinition = {
     "driver.min_on_time_us",
     "driver.chopping_frequency_hz",
     "motor.resistance_ohm",
+    ...CONNECTION_READS,
     "supply.voltage_v",
   ],
   from: [],

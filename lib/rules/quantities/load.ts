@@ -1,5 +1,5 @@
 import { FREE_FALL, weightAlongAxis } from "@/lib/physics/gravity";
-import { forceTorque, opposingForce, reflectedInertia } from "@/lib/physics/load-torque";
+import { forceTorque, opposingForce, preloadTorque, reflectedInertia } from "@/lib/physics/load-torque";
 import { computed, gather, given, hardware, motorCount, orDefault } from "../data";
 import { plain, show } from "../show";
 import type { AxisView, Computed, Datum } from "../types";
@@ -68,18 +68,35 @@ export function force(axis: AxisView): Datum {
   return given(opposingForce(parts.values), parts.assumed);
 }
 
-/** Load torque T_L at each motor, N·m: F/n·r/η. */
+export const LOAD_TORQUE_READS = [
+  ...FORCE_READS,
+  "axis.motor_count",
+  "drive_train.efficiency",
+  "drive_train.preload_n",
+  "drive_train.preload_friction",
+] as const;
+
+/** Load torque T_L at each motor, N·m: F/n·r/η, and what the preload of its nut takes where one is given. */
 export function loadTorque(axis: AxisView): Datum {
   const parts = gather({
     force: force(axis),
     motors: motorCount(axis),
     radius: radius(axis),
     efficiency: hardware(axis, "drive_train", "efficiency"),
+    preload: nutFriction(axis),
   });
   if (!parts.ok) return parts;
-  const { motors, radius: r, efficiency } = parts.values;
+  const { motors, radius: r, efficiency, preload } = parts.values;
   const value = forceTorque({ force: parts.values.force / motors, radius: r, efficiency });
-  return given(value, parts.assumed);
+  return given(value + preloadTorque({ preload, friction: 1, radius: r }), parts.assumed);
+}
+
+/** Friction force of a preloaded nut, N: μ0·F0; 0 where no preload is stated. */
+function nutFriction(axis: AxisView): Datum {
+  const preload = axis.hardware.drive_train?.preload_n ?? 0;
+  if (preload === 0) return given(0);
+  const friction = hardware(axis, "drive_train", "preload_friction");
+  return friction.ok ? given(friction.value * preload) : friction;
 }
 
 /** Inertia of one motor with what sits on its shaft Jm, kg·m². */

@@ -2,6 +2,7 @@ import { windingPower, windingSteadyState } from "@/lib/physics/motor-heat";
 import { computed, gather, hardware, motorAmbient } from "../data";
 import { plain, show, showRms } from "../show";
 import type { AxisView, Computed } from "../types";
+import { CONNECTION_READS } from "./current";
 import type { QuantityDefinition } from "./definition";
 
 const MOTOR_RUNAWAY: Computed = {
@@ -15,6 +16,7 @@ const MOTOR_RUNAWAY: Computed = {
 export const WINDING_TEMPERATURE: QuantityDefinition = {
   reads: [
     "motor.resistance_ohm",
+    ...CONNECTION_READS,
     "motor.winding_to_ambient_k_per_w",
     "machine.ambient_c",
     "machine.motor_ambient_c",
@@ -50,6 +52,7 @@ export const CASE_TEMPERATURE: QuantityDefinition = {
   reads: [
     "motor.case_to_ambient_k_per_w",
     "motor.resistance_ohm",
+    ...CONNECTION_READS,
     "machine.ambient_c",
     "machine.motor_ambient_c",
   ],

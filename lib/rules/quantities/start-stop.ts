@@ -6,11 +6,11 @@ import { bothMissing, computed, gather, hardware, merged } from "../data";
 import { plain, show } from "../show";
 import type { QuantityDefinition } from "./definition";
 import { GEOMETRY_READS, speedUnit } from "./geometry";
-import { FORCE_READS, INERTIA_READS, loadTorque, totalInertia } from "./load";
+import { INERTIA_READS, LOAD_TORQUE_READS, loadTorque, totalInertia } from "./load";
 import { driven, HOLDING_READS, holdingTorque } from "./torque";
 
 export const START_STOP_SPEED: QuantityDefinition = {
-  reads: [...HOLDING_READS, ...FORCE_READS, ...INERTIA_READS, ...GEOMETRY_READS, "drive_train.efficiency"],
+  reads: [...HOLDING_READS, ...LOAD_TORQUE_READS, ...INERTIA_READS, ...GEOMETRY_READS],
   from: ["winding_current_rms", "voltage_limit_speed"],
   compute: (axis) => {
     const motor = driven(axis);

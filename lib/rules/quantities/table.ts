@@ -4,12 +4,19 @@ import type { QuantityName } from "@/lib/domain/quantities";
 import type { AxisKind } from "@/lib/domain/axis-kind";
 import { BUS_VOLTAGE_AFTER_BRAKING } from "./braking";
 import { HOLD_CURRENT, WINDING_CURRENT } from "./current";
+import { COUPLED_TORQUE_MARGIN } from "./coupled";
 import type { MachineQuantityDefinition, QuantityDefinition } from "./definition";
-import { DRIVER_JUNCTION, DRIVER_POWER, SENSE_RESISTOR_POWER } from "./driver";
+import { DRIVER_CURRENT_LIMIT, DRIVER_JUNCTION, DRIVER_POWER, SENSE_RESISTOR_POWER } from "./driver";
 import { MINIMUM_CURRENT } from "./fidelity";
+import { FALL_DISTANCE } from "./fall";
 import { EXPECTED_SCALE } from "./geometry";
 import { FULL_STEP_RATE, PEAK_SPEED, STEP_RATE } from "./motion";
 import { CASE_TEMPERATURE, WINDING_TEMPERATURE } from "./motor-heat";
+import { presumesOpenLoop } from "./open-loop";
+import { MOVE_TIME, RAMP_TORQUE_MARGIN, TORQUE_REQUIRED_RMS } from "./ramp";
+import { AXIS_RESONANCE, INERTIA_RATIO } from "./stiffness";
+import { STATIC_POSITION_ERROR } from "./static-position";
+import { CABLE_DROP, SUPPLY_LOAD } from "./supply-load";
 import { RESONANCE, START_STOP_SPEED } from "./start-stop";
 import {
   HOLD_TORQUE_MARGIN,
@@ -19,7 +26,8 @@ import {
   VOLTAGE_LIMIT_SPEED,
 } from "./torque";
 
-export type MachineQuantityName = "bus_voltage_after_braking";
+export type MachineQuantityName =
+  "bus_voltage_after_braking" | "supply_load" | "cable_drop" | "coupled_torque_margin";
 export type AxisQuantityName = Exclude<QuantityName, MachineQuantityName>;
 
 export const AXIS_QUANTITIES: Readonly<Record<AxisQuantityName, QuantityDefinition>> = {
@@ -42,26 +50,39 @@ export const AXIS_QUANTITIES: Readonly<Record<AxisQuantityName, QuantityDefiniti
   resonance_hz: RESONANCE,
   full_step_rate: FULL_STEP_RATE,
   minimum_current_peak: MINIMUM_CURRENT,
+  ramp_torque_margin: RAMP_TORQUE_MARGIN,
+  torque_required_rms: TORQUE_REQUIRED_RMS,
+  move_time: MOVE_TIME,
+  driver_current_limit: DRIVER_CURRENT_LIMIT,
+  static_position_error: STATIC_POSITION_ERROR,
+  inertia_ratio: INERTIA_RATIO,
+  axis_resonance_hz: AXIS_RESONANCE,
+  fall_distance: FALL_DISTANCE,
 };
 
 export const MACHINE_QUANTITIES: Readonly<Record<MachineQuantityName, MachineQuantityDefinition>> = {
   bus_voltage_after_braking: BUS_VOLTAGE_AFTER_BRAKING,
+  supply_load: SUPPLY_LOAD,
+  cable_drop: CABLE_DROP,
+  coupled_torque_margin: COUPLED_TORQUE_MARGIN,
 };
 
 export function isMachineQuantity(name: QuantityName): name is MachineQuantityName {
   return name in MACHINE_QUANTITIES;
 }
 
-/** Unit of a quantity on an axis of this kind: speeds in rad/s and the scale in 1/deg on a rotary axis. */
+/** Unit of a quantity on an axis of this kind: lengths in rad, speeds in rad/s and the scale in 1/deg on a rotary axis. */
 export function quantityUnit(name: QuantityName, kind: AxisKind): string {
   const { unit } = QUANTITIES[name];
   if (kind === "linear") return unit;
+  if (unit === "m") return "rad";
   if (unit === "m/s") return "rad/s";
   return unit === "1/mm" ? "1/deg" : unit;
 }
 
 function definition(name: QuantityName): Pick<QuantityDefinition, "reads" | "from"> {
-  return isMachineQuantity(name) ? MACHINE_QUANTITIES[name] : AXIS_QUANTITIES[name];
+  const { reads, from } = isMachineQuantity(name) ? MACHINE_QUANTITIES[name] : AXIS_QUANTITIES[name];
+  return { from, reads: presumesOpenLoop(name) ? [...reads, "driver.feedback"] : reads };
 }
 
 /** Every hardware field and parameter that quantities rest on, spelt as in `Rule.needs`. */

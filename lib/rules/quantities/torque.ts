@@ -1,7 +1,7 @@
 import { peakFromRms } from "@/lib/physics/current-conventions";
 import { rotorTeeth } from "@/lib/physics/drive-train";
 import { weightTorque } from "@/lib/physics/gravity";
-import { accelerationTorque, forceTorque, reflectedInertia } from "@/lib/physics/load-torque";
+import { accelerationTorque, reflectedInertia } from "@/lib/physics/load-torque";
 import { copperFactor } from "@/lib/physics/motor-heat";
 import { conservativePullOut, voltageConstant, voltageLimitSpeed } from "@/lib/physics/pull-out";
 import type { DrivenMotor } from "@/lib/physics/pull-out";
@@ -20,18 +20,23 @@ import {
 } from "../data";
 import { plain, show, showRms } from "../show";
 import type { AxisView, Computed, Datum, Missing } from "../types";
-import { ratingRms } from "./current";
+import { RATED_READS, ratingRms } from "./current";
 import type { QuantityDefinition } from "./definition";
+import { isClosedLoop, notCovered } from "./open-loop";
 import { GEOMETRY_READS, radius, speedUnit } from "./geometry";
-import { force, FORCE_READS, INERTIA_READS, moved, shaftInertia, weight, WEIGHT_READS } from "./load";
+import {
+  INERTIA_READS,
+  LOAD_TORQUE_READS,
+  loadTorque,
+  moved,
+  shaftInertia,
+  weight,
+  WEIGHT_READS,
+} from "./load";
 
-export const HOLDING_READS = [
-  "motor.holding_torque_nm",
-  "motor.rated_current_a",
-  "motor.rated_current_basis",
-] as const;
+export const HOLDING_READS = ["motor.holding_torque_nm", ...RATED_READS] as const;
 
-const DRIVEN_READS = [
+export const DRIVEN_READS = [
   ...HOLDING_READS,
   "motor.resistance_ohm",
   "motor.inductance_mh",
@@ -86,6 +91,7 @@ export interface Driven {
 
 /** The motor on its driver and supply, as the pull-out formulas need it; current at most the rated one. */
 export function driven(axis: AxisView): Driven | Missing {
+  if (isClosedLoop(axis.hardware)) return notCovered(axis.axis);
   const parts = gather({
     voltage: supplyVoltage(axis),
     current: axis.quantity("winding_current_rms"),
@@ -151,27 +157,57 @@ export const TORQUE_AVAILABLE: QuantityDefinition = {
   },
 };
 
+/** What a move asks of each motor: a steady part, N·m, and an inertia, kg·m², with the efficiency in both. */
+export interface MoveDemand {
+  readonly ok: true;
+  readonly load: number;
+  readonly inertia: number;
+  /** m (rad) for one radian of the motor. */
+  readonly radius: number;
+  /** m/s² (rad/s²) */
+  readonly acceleration: number;
+  readonly assumed: readonly string[];
+}
+
+export const DEMAND_READS = [
+  ...LOAD_TORQUE_READS,
+  ...INERTIA_READS,
+  ...GEOMETRY_READS,
+  "acceleration",
+] as const;
+
+export function moveDemand(axis: AxisView): MoveDemand | Missing {
+  const parts = gather({
+    load: loadTorque(axis),
+    motors: motorCount(axis),
+    radius: radius(axis),
+    efficiency: hardware(axis, "drive_train", "efficiency"),
+    shaft: shaftInertia(axis),
+    moved: moved(axis),
+    acceleration: fromText(axis, "acceleration"),
+  });
+  if (!parts.ok) return parts;
+  const { load, motors, radius: r, efficiency, shaft, moved: mass, acceleration } = parts.values;
+  const inertia = shaft + reflectedInertia(mass, r) / (motors * efficiency);
+  return { ok: true, load, inertia, radius: r, acceleration, assumed: parts.assumed };
+}
+
+/** Torque of each motor, N·m, at an acceleration of the axis (m/s², rad/s²). */
+export function demandAt({ load, inertia, radius: r }: MoveDemand, acceleration: number): number {
+  return load + accelerationTorque(inertia, acceleration / r);
+}
+
 export const TORQUE_REQUIRED: QuantityDefinition = {
-  reads: [...FORCE_READS, ...INERTIA_READS, ...GEOMETRY_READS, "drive_train.efficiency", "acceleration"],
+  reads: DEMAND_READS,
   from: [],
   compute: (axis) => {
-    const parts = gather({
-      force: force(axis),
-      motors: motorCount(axis),
-      radius: radius(axis),
-      efficiency: hardware(axis, "drive_train", "efficiency"),
-      shaft: shaftInertia(axis),
-      moved: moved(axis),
-      acceleration: fromText(axis, "acceleration"),
-    });
-    if (!parts.ok) return parts;
-    const { force: f, motors, radius: r, efficiency, shaft, moved: mass, acceleration } = parts.values;
-    const load = forceTorque({ force: f / motors, radius: r, efficiency });
-    const inertia = shaft + reflectedInertia(mass, r) / (motors * efficiency);
-    const torque = load + accelerationTorque(inertia, acceleration / r);
+    const demand = moveDemand(axis);
+    if (!demand.ok) return demand;
+    const { load, inertia, acceleration, radius: r } = demand;
+    const torque = demandAt(demand, acceleration);
     return computed(
       torque,
-      parts.assumed,
+      demand.assumed,
       () =>
         `${show(load, "N·m")} + ${plain(inertia)} kg·m² · ${plain(acceleration / r)} rad/s² = ${show(torque, "N·m")}`,
     );

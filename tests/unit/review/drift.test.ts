@@ -170,7 +170,7 @@ describe("driftOf", () => {
   });
 
   it("takes what values do together for the truth where one makes up for the other", () => {
-    const low = edited("x", "amps = 0.85", "amps = 0.2");
+    const low = edited("x", "amps = 0.85", "amps = 0.4");
     const { level, items } = drift([layer(edited("x", "acc = 6000", "acc = 1000", low))]);
     expect([level, items.length]).toEqual(["within", 2]);
   });

@@ -60,8 +60,9 @@ describe("effects", () => {
 
   it("is what moves, in the order of the table, on the axis that was changed and on the machine", () => {
     const names = list.filter(({ axis }) => axis === "x").map((effect) => effect.quantity);
-    expect(names.slice(0, 6)).toEqual([
+    expect(names.slice(0, 7)).toEqual([
       "torque_margin",
+      "ramp_torque_margin",
       "case_c",
       "winding_c",
       "driver_junction_c",

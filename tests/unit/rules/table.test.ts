@@ -21,18 +21,33 @@ const IDS = [
   "driver-junction",
   "sense-resistor",
   "winding-temperature",
+  "winding-class",
   "mount-temperature",
   "touch-temperature",
   "steps-per-mm",
   "step-rate",
   "torque-margin",
+  "ramp-torque-margin",
   "corner-speed",
   "hold-torque",
+  "fall-after-power-loss",
+  "static-position",
   "supply-voltage",
   "braking-voltage",
+  "supply-power",
+  "cable-drop",
+  "supply-overdrive",
+  "inductance-rule",
   "resonance",
+  "axis-resonance",
   "speed-reached",
+  "soft-travel",
+  "reference-run",
   "microstep-current",
+  "microstep-friction",
+  "inertia-ratio",
+  "coupled-motors",
+  "coupled-jump",
 ];
 
 function fields(prefix: string, shape: Readonly<Record<string, unknown>>): string[] {
@@ -80,11 +95,25 @@ describe("the table of checks", () => {
 describe("what a field unlocks", () => {
   it("names the checks by their titles", () => {
     expect(unlockedBy("mount", "softening_c")).toEqual(["Temperature of the mount"]);
-    expect(unlockedBy("motor", "inductance_mh")).toEqual(["Torque margin at speed", "Corner speed"]);
+    expect(unlockedBy("motor", "inductance_mh")).toEqual([
+      "Torque margin at speed",
+      "Torque margin along the ramp",
+      "Corner speed",
+      "Supply against the winding's inductance",
+      "Motors shared by two axes",
+    ]);
     expect(unlockedBy("driver", "set_point.sense_resistor_rating_w")).toEqual(["Heat of the sense resistor"]);
     expect(unlockedBy("axis", "travel_mm")).toContain("Maximum speed reached");
     expect(unlockedBy("machine", "ambient_c")).toContain("Winding temperature");
-    expect(unlockedBy("load", "holding_brake")).toEqual(["Hold torque of a raised load"]);
+    expect(unlockedBy("load", "holding_brake")).toEqual([
+      "Hold torque of a raised load",
+      "Fall after a loss of power",
+      "Position error under load",
+    ]);
+    expect(unlockedBy("supply", "cable_length_m")).toEqual(["Voltage lost on the supply cable"]);
+    expect(unlockedBy("motor", "thermal_class")).toEqual(["Thermal class of the winding"]);
+    expect(unlockedBy("drive_train", "belt_width_mm")).toEqual(["Resonance of belt or screw"]);
+    expect(unlockedBy("load", "reference_overtravel_mm")).toEqual(["Stopping at the reference switch"]);
     expect(unlockedBy("controller_board", "max_step_rate_hz")).toEqual(["Step rate"]);
   });
 
