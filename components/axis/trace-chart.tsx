@@ -28,11 +28,14 @@ export interface TraceChartProps {
 
 const WIDTH = 1000;
 const HEIGHT = 100;
+/** Hatching over the whole height, at about 45° on a desk's screen. */
+const LEAN = 220;
+const STROKES = 120;
 
 /** A chart over time. It stretches with the page, so words stand beside the drawing and not in it. */
 export function TraceChart(props: TraceChartProps) {
   const { title, unit, times, range, traces, cursor, onCursor, reading } = props;
-  const span: Range = { low: times[0] ?? 0, high: times.at(-1) ?? 0 };
+  const span = timeSpan(times);
   const across = (time: number): number => placeIn(span, time);
   const follow = (event: PointerEvent<SVGSVGElement>): void => {
     const box = event.currentTarget.getBoundingClientRect();
@@ -97,6 +100,13 @@ function isLine({ low, high }: Trace): boolean {
   return low === high;
 }
 
+/** From the first time to the last; from 0 where the first is close to it. */
+function timeSpan(times: readonly number[]): Range {
+  const high = times.at(-1) ?? 0;
+  const low = times[0] ?? 0;
+  return { low: low < high / 50 ? 0 : low, high };
+}
+
 function tickText(tick: number): string {
   return formatNumber(Math.abs(tick) < 1e-12 ? 0 : tick, 3).replace("-", "\u2212");
 }
@@ -110,7 +120,10 @@ function y(range: Range, value: number): number {
 function Beyond({ limit, range }: { readonly limit: number | undefined; readonly range: Range }) {
   const clip = useId();
   if (limit === undefined) return null;
-  const strokes = Array.from({ length: 50 }, (_, index) => `M${index * 20} ${HEIGHT}l20 -${HEIGHT}`).join("");
+  const strokes = Array.from(
+    { length: STROKES },
+    (_, index) => `M${(index / STROKES) * (WIDTH + LEAN) - LEAN} ${HEIGHT}l${LEAN} -${HEIGHT}`,
+  ).join("");
   const above = y(range, limit);
   const below = y(range, -limit);
   return (

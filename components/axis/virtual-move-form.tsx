@@ -37,8 +37,9 @@ function stiffnessUnit(kind: AxisKind): { readonly unit: string; readonly factor
   return kind === "rotary" ? { unit: "N·m/rad", factor: 1 } : { unit: "N/mm", factor: 1e-3 };
 }
 
-function orEmpty(typed: string): number | null {
-  return typed === "" ? null : Number(typed);
+/** The value that the form starts with comes as it is, what is typed as text. */
+function orEmpty(typed: string | number | null): number | null {
+  return typed === "" || typed === null ? null : Number(typed);
 }
 
 /** To six digits, as a person would type it. */

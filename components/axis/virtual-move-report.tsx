@@ -11,7 +11,7 @@ import { swingSentence, verdictSentence, voltageSentence } from "@/lib/review/mo
 import type { CurrentMoment, MoveMoment } from "@/lib/review/move-traces";
 import type { MoveReport } from "@/lib/review/virtual-move";
 import { TraceChart } from "./trace-chart";
-import { rangeOf } from "./trace-scale";
+import { rangeOf, type Range } from "./trace-scale";
 
 export interface VirtualMoveReportProps {
   readonly report: MoveReport;
@@ -46,7 +46,9 @@ export function VirtualMoveReport({ report, kind, radius }: VirtualMoveReportPro
           { label: "Peak current set", value: <Quantity value={report.peakCurrent} unit="A" basis="peak" /> },
           {
             label: "Lag at the end",
-            value: <Quantity value={outcome.restLag} unit="full steps" digits={2} />,
+            value: (
+              <Quantity value={Math.round(outcome.restLag * 1000) / 1000 + 0} unit="full steps" digits={2} />
+            ),
             note: "beside lost steps",
           },
           {
@@ -64,7 +66,7 @@ export function VirtualMoveReport({ report, kind, radius }: VirtualMoveReportPro
 
 /** Lag and speed over the whole move, read off together. */
 function Courses({ moments, kind }: { readonly moments: readonly MoveMoment[]; readonly kind: AxisKind }) {
-  const [cursor, setCursor] = useState(0);
+  const [cursor, setCursor] = useState(() => largestLagOf(moments));
   const speed = shownUnit(kind === "rotary" ? "rad/s" : "m/s");
   const times = moments.map(({ time }) => time);
   const lag = {
@@ -83,8 +85,8 @@ function Courses({ moments, kind }: { readonly moments: readonly MoveMoment[]; r
       <TraceChart
         {...shared}
         title="Rotor behind the command"
-        unit="full steps"
-        range={rangeOf([...lag.low, ...lag.high, -OUT_OF_STEP, OUT_OF_STEP])}
+        unit="full steps; out of step beyond ±2"
+        range={lagRange([...lag.low, ...lag.high])}
         limit={OUT_OF_STEP}
         traces={[{ name: "lag", ink: "now", ...lag }]}
         reading={words.lag}
@@ -112,6 +114,21 @@ function Courses({ moments, kind }: { readonly moments: readonly MoveMoment[]; r
   );
 }
 
+function largestLagOf(moments: readonly MoveMoment[]): number {
+  const size = ({ lag }: MoveMoment): number => Math.max(lag.high, -lag.low);
+  return moments.reduce((best, moment, index) => {
+    const known = moments[best];
+    return known && size(moment) > size(known) ? index : best;
+  }, 0);
+}
+
+/** The lag fills its chart; the limit comes into sight where the lag gets near it. */
+function lagRange(values: readonly number[]): Range {
+  const range = rangeOf([...values, 0]);
+  const near = Math.max(range.high, -range.low) > OUT_OF_STEP / 2;
+  return near ? rangeOf([...values, -1.2 * OUT_OF_STEP, 1.2 * OUT_OF_STEP]) : range;
+}
+
 function momentWords(
   moment: MoveMoment | undefined,
   kind: AxisKind,
@@ -119,9 +136,13 @@ function momentWords(
   if (!moment) return { lag: "", speed: "" };
   const unit = kind === "rotary" ? "rad/s" : "m/s";
   const at = `At ${showText(moment.time, "s")}`;
+  const speeds = (low: number, high: number): string => {
+    const [least, most] = [showText(low, unit), showText(high, unit)];
+    return least === most ? least : `${least} to ${most}`;
+  };
   return {
-    lag: `${at} ${fromTo(moment.lag)} full steps`,
-    speed: `${at} ${showText(moment.commandedSpeed, unit)} commanded, ${showText(moment.speed.low, unit)} to ${showText(moment.speed.high, unit)} real`,
+    lag: `${at}: ${fromTo(moment.lag)} full steps`,
+    speed: `${at}: ${showText(moment.commandedSpeed, unit)} commanded, ${speeds(moment.speed.low, moment.speed.high)} real`,
   };
 }
 
@@ -144,7 +165,7 @@ function Currents({
   const b = currents.map((moment) => moment.b);
   const now = currents[cursor];
   const reading = now
-    ? `At ${showText(now.time, "s", 4)} phase a ${showText(now.a, "A")}, phase b ${showText(now.b, "A")}`
+    ? `At ${showText(now.time, "s", 4)}: phase a ${showText(now.a, "A")}, phase b ${showText(now.b, "A")}`
     : "";
   return (
     <>

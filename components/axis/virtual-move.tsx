@@ -35,7 +35,7 @@ function Move({ model }: { readonly model: MovedAxis }) {
   const speed = model.kind === "rotary" ? "rad/s" : "m/s";
   return (
     <>
-      <p>
+      <p className="mb-4">
         At most {showText(model.maxSpeed, speed)} and {showText(model.acceleration, `${speed}²`)}, against the
         load. Current, winding, supply, inertia and friction are those of the checks.
         {model.detentTorque === null && " The motor's detent torque is not known and left out."}
