@@ -7,7 +7,8 @@ import { caseOf, overLimitOf, anyAxis } from "./cases";
 
 const roomy = assemblyWith((axis) => {
   axis.load = { ...axis.load, mass_kg: 1 };
-  axis.mount = { softening_c: 90 };
+  axis.mount = { softening_c: 100 };
+  axis.driver!.set_point!.sense_resistor_rating_w = 1;
 });
 
 function orderOf(was: Texts, toBe: Texts, assembly = roomy): SafeOrder {
