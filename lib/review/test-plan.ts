@@ -4,7 +4,7 @@ import { parameterDefinition } from "@/lib/domain/parameters";
 import type { Policy } from "@/lib/domain/policy";
 import type { LadderPlan, LadderTest, RunPlan, Test, TestPlan, TestSetting } from "@/lib/domain/test-sheets";
 import { isLadder, LADDER_PARAMETERS, TEST_WORDS } from "@/lib/domain/test-sheets";
-import { insideUnit, shownUnit } from "@/lib/domain/units";
+import { formatNumber, insideUnit, showText, shownUnit } from "@/lib/domain/units";
 import type { ParameterValue } from "@/lib/domain/values";
 import { peakFromRms } from "@/lib/physics/current-conventions";
 import { radiusPerRadian } from "@/lib/physics/drive-train";
@@ -127,7 +127,8 @@ function ladderPlan(asked: LadderAsked): PlannedLadder {
   const unit = set?.unit ?? insideUnit(parameterDefinition(parameter).dimension, view.kind);
   const levels = levelsOf({ boundary, choices, unit });
   if (!levels.ok) return levels;
-  const { start, step, why } = levels;
+  const { start, step } = levels;
+  const why = [levels.why, ...farFromSetting(start, set)].join(" ");
   const plan: LadderPlan = {
     parameter,
     fails,
@@ -150,6 +151,18 @@ function ladderPlan(asked: LadderAsked): PlannedLadder {
  * up-and-down ladder is shortest. Common practice, no source.
  */
 const STEP_SHARE = 0.06;
+
+/** From here on nobody starts without having gone there by hand. Common practice, no source. */
+const FAR = 2;
+
+function farFromSetting(start: number, set: ParameterValue | undefined): string[] {
+  if (!set || set.value <= 0) return [];
+  const times = Math.max(start / set.value, set.value / start);
+  if (times < FAR) return [];
+  return [
+    `The start is ${formatNumber(times, 2)} times away from the ${showText(set.value, set.unit)} in the text: go there by hand in several steps before the first trial, and stop where the machine itself must not go further.`,
+  ];
+}
 
 interface LevelsAsked {
   readonly boundary: Boundary;

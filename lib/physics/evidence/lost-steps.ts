@@ -37,7 +37,8 @@ export function lostSteps({ fullSteps, repeatability, toothSteps }: MeasuredDevi
   const slips = Math.round(fullSteps / STEPS_OF_A_SLIP);
   // Adding 0 keeps −0 from the page.
   const lost = slips * STEPS_OF_A_SLIP + 0;
-  const remainder = fullSteps - lost;
+  // A deviation read in mm is no whole number of steps to the last digit.
+  const remainder = Math.round((fullSteps - lost) * 1e9) / 1e9 + 0;
   return {
     lost,
     remainder,

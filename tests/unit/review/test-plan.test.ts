@@ -47,6 +47,15 @@ describe("an acceleration ladder", () => {
     expect(levelOf(ladder!, 2)).toBeCloseTo(start + 2 * step, 12);
   });
 
+  it("warns where the start lies far from what the text sets", () => {
+    expect(ladder!.start).toBeGreaterThan(2 * 3);
+    expect(ladder!.why).toMatch(
+      /The start is [\d.]+ times away from the 3000 mm\/s² in the text: go there by hand/,
+    );
+    const near = plan({ test: "acceleration_ladder", choices: { start: 4, step: 0.2 } });
+    expect(near.ladder!.why).toBe("Start and step were chosen by hand.");
+  });
+
   it("keeps the margin that the policy wants at the speed of the test", () => {
     expect(ladder!.margin).toBe(world().input.policy.torque_margin_below_limit_speed);
   });
