@@ -57,6 +57,7 @@ const ALONE: Record<
   lines: { value: (raw) => `k = ${raw}`, element: (raw) => `k = {${raw},0}` },
   defines: { value: (raw) => `#define k ${raw}`, element: (raw) => `#define k {${raw},0}` },
   json: { value: (raw) => `{"k": ${raw}}`, element: (raw) => `{"k": [${raw},0]}` },
+  toml: { value: (raw) => `k = ${raw}`, element: (raw) => `k = [${raw},0]` },
 };
 
 /** A value of these formats ends with its line. */

@@ -3,12 +3,14 @@ import { parseDefines } from "./defines";
 import { parseJson } from "./json";
 import { parseLines } from "./lines";
 import { recogniseFormat } from "./recognise";
+import { parseToml } from "./toml";
 import type { Document, Format } from "./types";
 
 const PARSERS: Record<Format, (path: string, text: string) => Document> = {
   lines: parseLines,
   defines: parseDefines,
   json: parseJson,
+  toml: parseToml,
 };
 
 /** Reads a text of any format; without `format` the text itself decides. Never throws on a text. */

@@ -2,6 +2,7 @@ import { afterLineEnd, CHAR, lineEnd, skipBlanks } from "./chars";
 import { cutLine } from "./lines/lex";
 import { Pieces } from "./pieces";
 import { rankJson } from "./json/rank";
+import { rankToml } from "./toml/rank";
 import { score, type FormatRank } from "./rank";
 import { PIECE, type Format } from "./types";
 
@@ -18,9 +19,9 @@ const LEAST_SCORE = 0.3;
 
 /** Tells the format of a text from its own lines first and from its file name second. */
 export function recogniseFormat({ path, text }: { path: string; text: string }): Recognition {
-  const sample = { text: text.slice(0, SAMPLE), extension: extension(path) };
+  const sample = { text: text.slice(0, SAMPLE), whole: text.length <= SAMPLE, extension: extension(path) };
   const counts = countLines(sample.text);
-  const ranks = [rankLines(path, counts), rankDefines(path, counts), rankJson(sample)];
+  const ranks = [rankJson(sample), rankToml(sample), rankLines(path, counts), rankDefines(path, counts)];
   const ranking = ranks.sort((a, b) => b.score - a.score);
   const best = ranking[0];
   return { format: best && best.score >= LEAST_SCORE ? best.format : null, ranking };

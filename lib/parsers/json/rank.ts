@@ -1,4 +1,4 @@
-import { score, type FormatRank, type Sample } from "../rank";
+import { scoreOfOwnName, type FormatRank, type Sample } from "../rank";
 import { TOKEN, tokensOf } from "./tokens";
 
 const JSON_FILES = ["json", "jsonc", "json5"];
@@ -12,7 +12,7 @@ export function rankJson({ text, extension }: Sample): FormatRank {
   if (begins) reasons.push("it begins as an object in braces or a list in brackets does");
   if (share > 0 && names > 0) reasons.push(`${names} names in double quotes have a colon behind them`);
   if (named) reasons.push(`the file name ends in .${extension}`);
-  return { format: "json", score: score(share, named), reasons };
+  return { format: "json", score: scoreOfOwnName(share, named), reasons };
 }
 
 interface Counts {

@@ -1,5 +1,6 @@
 import type fc from "fast-check";
 import type { Format } from "@/lib/parsers/types";
+import { tomlText, tomlValue } from "./arbitrary-toml";
 import { jsonText, jsonValue } from "./arbitrary-json";
 import { defineText, defineValue, lineText, lineValue, type ModelText } from "./arbitrary-texts";
 
@@ -8,6 +9,7 @@ export const TEXTS: Record<Format, fc.Arbitrary<ModelText>> = {
   lines: lineText,
   defines: defineText,
   json: jsonText,
+  toml: tomlText,
 };
 
 /** Values of each format, as typed. */
@@ -15,4 +17,5 @@ export const VALUES: Record<Format, fc.Arbitrary<string>> = {
   lines: lineValue,
   defines: defineValue,
   json: jsonValue,
+  toml: tomlValue,
 };

@@ -20,6 +20,9 @@ describe("the format", () => {
     ["noname", '{"run_ma": 800}', "json"],
     ["a.conf", '{\n  // rms\n  "x": { "run_ma": 800 }\n}', "json"],
     ["noname", '[{"axis": "x"}]', "json"],
+    ["a.toml", LINES, "toml"],
+    ["a.conf", '[[axis]]\nname = "x"\nrun = 800\n[[axis]]\nname = "z"\nrun = 700', "toml"],
+    ["noname", 'x = { run = 800, hold = "400 mA" }', "toml"],
     ["noname", "/*\n * Head\n */\n#ifndef A_H\n#define A_H\n#endif", "defines"],
   ])("of %s with %j is %s", (path, text, format) => {
     const { format: found, ranking } = recogniseFormat({ path, text });

@@ -1,0 +1,1 @@
+export { parseToml } from "./parse";
