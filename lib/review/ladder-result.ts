@@ -118,5 +118,5 @@ function recommendation(plan: LadderPlan, recommended: number | null): string {
     parameter === "acceleration" && load === null
       ? " The load torque is not known, so the margin was taken on the acceleration alone; it leaves less on the torque."
       : "";
-  return `Recommended: a ${label} of ${fails === "above" ? "at most" : "at least"} ${shown(recommended)}, the estimate with ${wanted} kept.${loadless}`;
+  return `Recommended ${label}: ${fails === "above" ? "at most" : "at least"} ${shown(recommended)}, the estimate with ${wanted} kept.${loadless}`;
 }

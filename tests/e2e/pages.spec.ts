@@ -42,6 +42,21 @@ async function openStep(page: Page): Promise<string> {
   return `/changes/${id}/machines/${open.machineId}`;
 }
 
+async function sheetPlan(page: Page): Promise<string> {
+  return `/test-sheets/new?machineId=${await machine(page)}&axis=x&test=acceleration_ladder`;
+}
+
+/** A test sheet started for this visit. */
+async function openSheet(page: Page): Promise<string> {
+  const machineId = await machine(page);
+  const { assembly } = await ask<{ assembly: { axes: { axis: string }[] } }>(page, `/machines/${machineId}`);
+  const response = await page.request.post("/api/v1/test-sheets", {
+    data: { machineId, axis: assembly.axes[0]?.axis, test: "acceleration_ladder", start: 3, step: 0.2 },
+  });
+  expect(response.status()).toBe(201);
+  return `/test-sheets/${((await response.json()) as { id: string }).id}`;
+}
+
 async function newestMail(page: Page): Promise<string> {
   const link = page.getByRole("table").getByRole("link").first();
   await expect(async () => {
@@ -106,8 +121,16 @@ const PAGES: readonly VisitedPage[] = [
     address: async (page) => `/changes/${await firstOf(page, "/changes?state=evaluation")}/edit`,
     shows: showsEditor,
   },
+  {
+    route: "/changes/[id]/merge",
+    role: "engineer",
+    address: async (page) => `/changes/${await firstOf(page, "/changes?state=evaluation")}/merge`,
+  },
   { route: "/changes/[id]/machines/[machineId]", role: "technician", address: openStep },
   { route: "/work", role: "technician" },
+  { route: "/test-sheets", role: "viewer" },
+  { route: "/test-sheets/new", role: "technician", address: sheetPlan },
+  { route: "/test-sheets/[id]", role: "technician", address: openSheet },
   { route: "/catalog", role: "engineer" },
   { route: "/catalog/[kind]", role: "engineer", address: () => Promise.resolve("/catalog/drive-train") },
   { route: "/catalog/[kind]/new", role: "engineer", address: () => Promise.resolve("/catalog/motor/new") },

@@ -55,6 +55,20 @@ const PAGES: readonly DeskPage[] = [
     words: "implementation apply download verification test lot step technician",
   },
   {
+    action: "test_sheets.read",
+    href: "/test-sheets",
+    title: "Test sheets",
+    note: "Ladders, runs and heat records on machines",
+    words: "test ladder trial lost steps temperature heat acceleration",
+  },
+  {
+    action: "test_sheets.write",
+    href: "/test-sheets/new",
+    title: "Start a test sheet",
+    note: "On a machine's axis, with the expected reading",
+    words: "new test ladder trial lost steps",
+  },
+  {
     action: "check.run",
     href: "/checks",
     title: "Checks",

@@ -1,4 +1,5 @@
 import "server-only";
+import { axisKind, type AxisKind } from "@/lib/domain/axis-kind";
 import type { Test } from "@/lib/domain/test-sheets";
 import type { Planned } from "@/lib/review/test-plan";
 import { PLAN_DEFAULTS, planTest } from "@/lib/review/test-plan";
@@ -9,7 +10,7 @@ import { testBasis } from "./basis";
 export interface ProposedSheet {
   readonly machine: { readonly id: string; readonly serial: string };
   readonly change: { readonly id: string; readonly label: string } | null;
-  readonly axes: readonly string[];
+  readonly axes: readonly { readonly axis: string; readonly kind: AxisKind }[];
   /** Null where no axis and test are chosen yet, or the machine has no such axis. */
   readonly planned: Planned | null;
 }
@@ -31,7 +32,7 @@ export async function proposeSheet(context: Context, asked: Asked): Promise<Prop
   return {
     machine: { id: machine.id, serial: machine.serial },
     change,
-    axes: assembly.axes.map((one) => one.axis),
+    axes: assembly.axes.map((one) => ({ axis: one.axis, kind: axisKind(one.drive_train?.kind) })),
     planned,
   };
 }
