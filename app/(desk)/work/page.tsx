@@ -1,16 +1,22 @@
 import type { Metadata } from "next";
 import { z } from "zod";
 import { StepsTable } from "@/components/implementation/steps-table";
+import { SheetsTable } from "@/components/test-sheet/sheets-table";
 import { Button, ButtonLink } from "@/components/ui/button";
 import { Empty } from "@/components/ui/empty";
 import { SelectField, TextField } from "@/components/ui/field";
-import { Sheet, SheetHead } from "@/components/ui/sheet";
+import { Sheet, SheetHead, SheetSection } from "@/components/ui/sheet";
 import { load, pageActor } from "@/lib/http/page-actor";
 import { readParams, type SearchParams } from "@/lib/http/search-params";
 import { listSteps } from "@/lib/services/implementation/steps";
 import { listSites } from "@/lib/services/sites/list";
+import { listSheets } from "@/lib/services/test-sheets/list";
+import { may } from "@/lib/policies/decide";
 
 export const metadata: Metadata = { title: "Work" };
+
+/** The newest of those that are open; the page of test sheets has them all. */
+const SHEETS_SHOWN = 8;
 
 const query = z.object({ siteId: z.uuid().optional(), q: z.string().trim().max(80).optional() });
 
@@ -19,6 +25,14 @@ export default async function WorkPage({ searchParams }: { readonly searchParams
   const { query: asked, typed, errors } = await readParams(query, searchParams);
   const steps = await load(listSteps(context, asked));
   const { items: sites } = await load(listSites(context, { retired: "no" }));
+  const sheets = await load(
+    listSheets(context, {
+      state: "open",
+      page: 1,
+      pageSize: SHEETS_SHOWN,
+      ...(asked.q ? { q: asked.q } : {}),
+    }),
+  );
   const filtered = Object.keys(typed).length > 0;
   return (
     <Sheet>
@@ -66,6 +80,26 @@ export default async function WorkPage({ searchParams }: { readonly searchParams
             : "Nothing waits. When a change is released to machines, each machine stands here until it is verified."}
         </Empty>
       )}
+      <SheetSection
+        title="Open test sheets"
+        note={sheets.total > SHEETS_SHOWN ? `the newest ${SHEETS_SHOWN} of ${sheets.total}` : undefined}
+        acts={
+          <>
+            {may(context.actor, "test_sheets.write") && (
+              <ButtonLink href="/test-sheets/new">Start a test sheet</ButtonLink>
+            )}
+            <ButtonLink variant="quiet" href="/test-sheets">
+              All test sheets
+            </ButtonLink>
+          </>
+        }
+      >
+        {sheets.items.length > 0 ? (
+          <SheetsTable sheets={sheets.items} />
+        ) : (
+          <p className="quiet">No test sheet is open.</p>
+        )}
+      </SheetSection>
     </Sheet>
   );
 }

@@ -5,6 +5,7 @@ import { z } from "zod";
 import { AsLeftStep } from "@/components/implementation/as-left-step";
 import { DownloadStep } from "@/components/implementation/download-step";
 import { TestStep } from "@/components/implementation/test-step";
+import { MovedTestList } from "@/components/test-sheet/moved-tests";
 import { Tests } from "@/components/changes/machines-progress";
 import { DateTime } from "@/components/ui/date-time";
 import { Notice } from "@/components/ui/notice";
@@ -14,6 +15,7 @@ import { load, pageActor } from "@/lib/http/page-actor";
 import { may } from "@/lib/policies/decide";
 import { machinesOfChange } from "@/lib/services/changes/machines-of-change";
 import { showStep, type StepDetail } from "@/lib/services/implementation/steps";
+import { testsOfChange } from "@/lib/services/test-sheets/tests-of-change";
 
 interface StepPageProps {
   readonly params: Promise<{ id: string; machineId: string }>;
@@ -30,6 +32,7 @@ export default async function StepPage({ params }: StepPageProps) {
   const { id, machineId } = asked.data;
   const step = await load(showStep(context, id, machineId));
   const place = (await load(machinesOfChange(context, id))).find((one) => one.machineId === machineId);
+  const { items: moved } = await load(testsOfChange(context, { changeId: id, machineId }));
   const mayWork = may(context.actor, "verifications.create") && step.verifiedAt === null && !place?.endedAt;
   return (
     <Sheet>
@@ -44,6 +47,14 @@ export default async function StepPage({ params }: StepPageProps) {
       />
       <Progress step={step} ended={place?.endedAt ?? null} />
       {mayWork && <Work step={step} />}
+      <SheetSection title="What to test" note="only what the change moves">
+        <MovedTestList
+          tests={moved}
+          changeId={id}
+          machineId={machineId}
+          mayStart={may(context.actor, "test_sheets.write") && !place?.endedAt}
+        />
+      </SheetSection>
       <SheetSection title="Tests on this machine">
         {place && place.verifications.length > 0 ? (
           <Tests tests={place.verifications} />
