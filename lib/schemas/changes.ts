@@ -12,6 +12,7 @@ import { levelSchema } from "@/lib/domain/levels";
 import { parameterNameSchema } from "@/lib/domain/parameters";
 import { paged, pageQuery } from "./common";
 import { sentFilesSchema } from "./files";
+import { mergeChoicesSchema } from "./texts";
 
 const title = z.string().trim().min(3, "Say in a few words what changes.").max(160);
 const reason = z.string().trim().min(3, "Say why.").max(4000);
@@ -258,6 +259,18 @@ export const changeViewSchema = z.object({
   ),
 });
 export type ChangeViewData = z.infer<typeof changeViewSchema>;
+
+/**
+ * How a proposal is brought up to date. With `choices` it is merged with the text in force (`base`: what both started
+ * from, `ours`: the proposal, `theirs`: the text in force), each conflict as chosen; without, edits that no longer fit
+ * are left out and told.
+ */
+export const bringUpToDateSchema = z.object({
+  /** The text in force that was looked at; another one by now is refused. */
+  baseHash: z.string().length(64).optional(),
+  choices: mergeChoicesSchema.optional(),
+});
+export type BringUpToDate = z.input<typeof bringUpToDateSchema>;
 
 /** What did not fit when a proposal was brought up to date; it is shown and left to the engineer. */
 export const rebaseAnswerSchema = z.object({

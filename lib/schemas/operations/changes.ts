@@ -2,6 +2,7 @@ import { z } from "zod";
 import { idParams } from "@/lib/schemas/common";
 import {
   backOutSchema,
+  bringUpToDateSchema,
   changeListQuery,
   changeListSchema,
   changeViewSchema,
@@ -140,9 +141,10 @@ export const changeOperations = {
     path: "/changes/{id}/bring-up-to-date",
     action: "changes.edit",
     tag,
-    summary: "Open the proposal again on the baseline as it is now, its edits reapplied where they fit",
+    summary:
+      "Open the proposal again on the baseline as it is now: merged as chosen, or its edits reapplied where they fit",
     params: idParams,
-    body: z.object({}),
+    body: bringUpToDateSchema,
     answer: rebaseAnswerSchema,
     ifMatch: "optional",
   }),

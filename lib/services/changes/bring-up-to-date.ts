@@ -1,42 +1,56 @@
 import "server-only";
+import { changeLabel } from "@/lib/domain/changes";
+import { plural } from "@/lib/domain/sentences";
+import { mergeConfigurations } from "@/lib/review/merge";
+import type { MergeChoice } from "@/lib/review/merge-types";
 import { rebaseEdits } from "@/lib/review/rebase";
 import type { RebaseResult } from "@/lib/review/rebase";
-import type { ChangeRequest } from "@/models/changes";
-import type { Context, Tx } from "@/lib/services/kernel/context";
+import type { BringUpToDate } from "@/lib/schemas/changes";
+import type { Context } from "@/lib/services/kernel/context";
 import { authorize } from "@/lib/services/kernel/context";
 import { ServiceError } from "@/lib/services/kernel/errors";
 import { withTransaction } from "@/lib/services/kernel/transaction";
-import { currentKeyTable } from "@/lib/services/key-tables/current";
 import { appendRecord } from "@/lib/services/record/append";
 import type { StoredFile } from "@/lib/services/revisions/files";
-import { acceptFile, rewriteFile } from "@/lib/services/revisions/files";
-import { loadFiles } from "@/lib/services/revisions/load";
-import type { ProposalBase } from "./base";
-import { proposalBase, staleReason } from "./base";
-import { leaveApproval, targetOf } from "./edit";
-import { machinesOf } from "./effectivity";
-import { proposalAssembly } from "./evaluate";
+import { mergedFiles } from "@/lib/services/texts/merged-files";
+import { leaveApproval } from "./edit";
 import type { ChangeBrief } from "./load";
 import { briefOf, currentVersion, demandMove, lockChange, recordObject, subjectOf } from "./load";
+import type { ThreeTexts } from "./three-texts";
+import { threeTexts } from "./three-texts";
 import { writeVersion } from "./write-version";
 
-export interface BroughtUpToDate extends Pick<RebaseResult, "reapplied" | "notFitting" | "textNotFitting"> {
+type Place = Pick<RebaseResult["reapplied"][number], "axis" | "parameter">;
+
+/** What became of the proposal's edits on the text in force. */
+interface Outcome {
+  readonly files: StoredFile[];
+  readonly reapplied: readonly Place[];
+  readonly notFitting: readonly (Place & { readonly reason: string })[];
+  readonly textNotFitting: RebaseResult["textNotFitting"];
+}
+
+export interface BroughtUpToDate extends Omit<Outcome, "files"> {
   readonly change: ChangeBrief;
 }
 
-interface Request {
+interface Request extends BringUpToDate {
   readonly id: string;
   readonly ifMatch: number | null;
 }
 
-/** Opens the proposal again on its base as it is today: its edits reapplied where they still fit, the rest told. */
-export async function bringUpToDate(context: Context, { id, ifMatch }: Request): Promise<BroughtUpToDate> {
+/** Opens the proposal again on its base as it is today: merged as chosen, or its edits reapplied where they still fit and the rest told. */
+export async function bringUpToDate(context: Context, request: Request): Promise<BroughtUpToDate> {
   return withTransaction(context, async (tx) => {
-    const change = await lockChange(tx, id, ifMatch);
+    const change = await lockChange(tx, request.id, request.ifMatch);
     authorize(tx, "changes.edit", subjectOf(change));
     if (change.state !== "draft") demandMove(change, { to: "withdrawn", as: "brought up to date" });
-    const { base, rebased, files } = await rebase(tx, change);
-    await writeVersion(tx, change, { files, base, note: `brought up to date with ${base.label}` });
+    const version = await currentVersion(tx, change);
+    const texts = await threeTexts({ change, version, asOf: tx.now, transaction: tx.transaction });
+    demandSameBase(texts, request, changeLabel(change.number));
+    const { files, ...outcome } = request.choices ? merged(texts, request.choices) : reapplied(texts);
+    const { today } = texts;
+    await writeVersion(tx, change, { files, base: today, note: `brought up to date with ${today.label}` });
     await leaveApproval(tx, change);
     await appendRecord(tx, {
       action: "change.brought_up_to_date",
@@ -45,36 +59,63 @@ export async function bringUpToDate(context: Context, { id, ifMatch }: Request):
       machineId: change.machineId,
       after: {
         version: change.currentVersion,
-        base: base.label,
-        reapplied: rebased.reapplied.map(({ axis, parameter }) => ({ axis, parameter })),
-        notFitting: rebased.notFitting.map(({ axis, parameter, reason }) => ({ axis, parameter, reason })),
+        base: today.label,
+        reapplied: outcome.reapplied.map(({ axis, parameter }) => ({ axis, parameter })),
+        notFitting: outcome.notFitting.map(({ axis, parameter, reason }) => ({ axis, parameter, reason })),
       },
     });
-    const { reapplied, notFitting, textNotFitting } = rebased;
-    return { change: briefOf(change), reapplied, notFitting, textNotFitting };
+    return { change: briefOf(change), ...outcome };
   });
 }
 
-async function rebase(tx: Tx, change: ChangeRequest) {
-  const { transaction } = tx;
-  const target = targetOf(change);
-  const version = await currentVersion(tx, change);
-  const base = await proposalBase({ ...target, asOf: tx.now, transaction });
-  if (!staleReason(version, base))
-    throw new ServiceError("conflict", "The proposal stands on the text in force already. Nothing was done.");
-  const edited = await loadFiles(version.revisionId, transaction);
-  const oldBase = version.baseRevisionId ? await loadFiles(version.baseRevisionId, transaction) : [];
-  const machines = change.machineId === null ? await machinesOf({ ...change.get(), transaction }) : [];
-  const assembly = await proposalAssembly({ ...target, transaction }, machines);
-  const { table: keyTable } = await currentKeyTable(change.modelId, transaction);
-  const rebased = rebaseEdits({ oldBase, edited, newBase: base.files, keyTable, assembly });
-  return { base, rebased, files: filesOf(rebased, base, edited) };
+function demandSameBase({ today }: ThreeTexts, { baseHash }: Request, label: string): void {
+  if (baseHash === undefined || baseHash === today.hash) return;
+  throw new ServiceError(
+    "conflict",
+    `The base of ${label} has moved once more, to ${today.label}. Nothing was done; open the page again and look at the conflicts with it.`,
+  );
 }
 
-/** The rebased texts in the encoding of the file they come from. */
-function filesOf({ files }: RebaseResult, base: ProposalBase, edited: readonly StoredFile[]): StoredFile[] {
-  return files.map((file, index) => {
-    const origin = [...base.files, ...edited].find(({ path }) => path === file.path);
-    return origin ? rewriteFile(origin, file.text) : acceptFile({ file, index });
+function reapplied({ oldBase, edited, today, keyTable, assembly }: ThreeTexts): Outcome {
+  const rebased = rebaseEdits({ oldBase, edited, newBase: today.files, keyTable, assembly });
+  // A text that both have takes the encoding of the one in force.
+  const files = mergedFiles(rebased.files, { base: edited, ours: edited, theirs: today.files });
+  return { ...rebased, files };
+}
+
+function merged(texts: ThreeTexts, choices: Readonly<Record<string, MergeChoice>>): Outcome {
+  const { oldBase, edited, today, keyTable, assembly } = texts;
+  const sides = { base: oldBase, ours: edited, theirs: today.files };
+  const result = mergeConfigurations({
+    ...sides,
+    keyTable,
+    assembly,
+    choices: new Map(Object.entries(choices)),
   });
+  const open = result.conflicts.filter(({ choice }) => choice === null);
+  if (!result.files)
+    throw new ServiceError(
+      "conflict",
+      `${plural(open.length, "conflict")} with ${today.label} still ${open.length === 1 ? "has" : "have"} no choice. Nothing was done; choose for each, then try again.`,
+      { details: { open: open.map(({ id }) => id) } },
+    );
+  const chosen = result.conflicts.flatMap(({ places, choice }) =>
+    places.flatMap(({ axis, parameter }) => (parameter === null ? [] : [{ axis, parameter, choice }])),
+  );
+  return {
+    files: mergedFiles(result.files, sides),
+    reapplied: [
+      ...result.merged.filter(({ from }) => from === "ours"),
+      ...chosen.filter(({ choice }) => choice === "ours"),
+    ].map(({ axis, parameter }) => ({ axis, parameter })),
+    notFitting: chosen
+      .filter(({ choice }) => choice !== "ours")
+      .map(({ axis, parameter, choice }) => ({
+        axis,
+        parameter,
+        reason:
+          choice === "base" ? "As it was before both was chosen." : `What ${today.label} has was chosen.`,
+      })),
+    textNotFitting: [],
+  };
 }

@@ -48,7 +48,6 @@ export default async function ChangePage({ params, searchParams }: ChangePagePro
       {change.state === "draft" && <UnsentNotice changeId={id} />}
       <StaleNotice
         changeId={id}
-        lockVersion={change.lockVersion}
         stale={change.stale}
         mayEdit={may(context.actor, "changes.edit")}
       />
