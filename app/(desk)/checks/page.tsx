@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import Link from "next/link";
+import { ProofSection } from "@/components/checks/proof-section";
 import { RuleSheet } from "@/components/checks/rule-sheet";
 import { ButtonLink } from "@/components/ui/button";
 import { Sheet, SheetHead } from "@/components/ui/sheet";
@@ -36,11 +37,14 @@ export default async function ChecksPage() {
       </nav>
       <p>
         The limits are the defaults; the team&apos;s own margins stand in the{" "}
-        <Link href="/settings/policy">policy</Link>.
+        <Link href="/settings/policy">policy</Link>. A drive that closes its own loop is not covered: its
+        checks of torque, heat and lost steps say cannot check. How far the formulas agree with published
+        values stands <a href="#proof">at the end</a>.
       </p>
       {RULES.map((rule) => (
         <RuleSheet key={rule.id} rule={rule} />
       ))}
+      <ProofSection />
     </Sheet>
   );
 }
