@@ -14,6 +14,7 @@ import {
   type ModelAxis,
   type ModelHardware,
 } from "@/lib/domain/catalog";
+import { withRefined, type RefinedOfAxis } from "./refined-assembly";
 
 /** The data of one version of a catalog item. */
 export interface CatalogEntry {
@@ -28,6 +29,8 @@ export interface ResolveInput {
   /** The machine's own recorded hardware, oldest first; a later fact of the same part wins. */
   readonly facts: readonly HardwareFact[];
   readonly site: { readonly ambient_c: number | null };
+  /** Thermal resistances refined by temperatures measured on the machine. */
+  readonly refined?: readonly RefinedOfAxis[] | undefined;
 }
 
 interface Evidence {
@@ -77,7 +80,11 @@ export function resolveAssembly(input: ResolveInput): ResolvedAssembly {
     axes: model.axes.map((axis) => resolveAxis(desk, axis)),
   };
   noteStrangers(desk);
-  return { assembly: withoutEmpty(assembly), evidence: desk.evidence, ignored: desk.ignored };
+  return {
+    assembly: withRefined(withoutEmpty(assembly), input.refined ?? []),
+    evidence: desk.evidence,
+    ignored: desk.ignored,
+  };
 }
 
 function resolveAxis(desk: Desk, own: ModelAxis): AxisAssembly {

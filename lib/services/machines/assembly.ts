@@ -4,9 +4,11 @@ import type { Transaction } from "sequelize";
 import type { Assembly } from "@/lib/domain/assembly";
 import type { HardwareFact, ModelHardware } from "@/lib/domain/catalog";
 import type { CatalogEntry, ResolvedAssembly, ResolveInput } from "@/lib/review/resolve-assembly";
+import type { RefinedOfAxis } from "@/lib/review/refined-assembly";
 import { resolveAssembly } from "@/lib/review/resolve-assembly";
 import { Axis, CatalogItem, CatalogVersion, MachineModel, MachineModelVersion, Site } from "@/models/catalog";
 import { Machine, MachineHardware } from "@/models/machines";
+import { ThermalFitRow } from "@/models/thermal-fits";
 import { notFound } from "@/lib/services/kernel/errors";
 
 /** The newest version of a model's hardware as the domain has it. */
@@ -79,6 +81,7 @@ interface Sought {
   readonly modelId: string;
   readonly ambientC: number | null;
   readonly facts: readonly HardwareFact[];
+  readonly refined?: readonly RefinedOfAxis[];
   /** Catalog items to have at hand beside those that are fitted. */
   readonly alsoItems?: readonly string[];
   readonly transaction?: Transaction | undefined;
@@ -89,17 +92,23 @@ interface Parts {
   readonly hasReadBack: boolean;
 }
 
-async function partsOf({ modelId, ambientC, facts, alsoItems = [], transaction }: Sought): Promise<Parts> {
+async function partsOf(sought: Sought): Promise<Parts> {
+  const { modelId, ambientC, facts, refined = [], alsoItems = [], transaction } = sought;
   const model = await modelHardware(modelId, transaction);
   const items = await catalogEntries([...namedItems(model, facts), ...alsoItems], transaction);
   return {
-    input: { model, items, facts, site: { ambient_c: ambientC } },
+    input: { model, items, facts, site: { ambient_c: ambientC }, refined },
     hasReadBack: model.has_read_back,
   };
 }
 
 export function toFact(row: MachineHardware): HardwareFact {
   return { axis: row.axis, part: row.part, itemId: row.itemId, data: row.data, evidence: row.evidence };
+}
+
+function toRefined(row: ThermalFitRow): RefinedOfAxis {
+  const { axis, field, catalogKPerW, valueKPerW, lowKPerW, highKPerW, readings } = row;
+  return { axis, field, catalog: catalogKPerW, value: valueKPerW, low: lowKPerW, high: highKPerW, readings };
 }
 
 export interface MachineParts extends Parts {
@@ -119,8 +128,14 @@ export async function machineParts(
     order: [["recordedAt", "ASC"]],
     transaction,
   });
-  const ambientC = machine.site?.ambientC ?? null;
-  const parts = await partsOf({ modelId: machine.modelId, ambientC, facts: rows.map(toFact), ...more });
+  const fits = await ThermalFitRow.findAll({ where: { machineId }, transaction });
+  const parts = await partsOf({
+    modelId: machine.modelId,
+    ambientC: machine.site?.ambientC ?? null,
+    facts: rows.map(toFact),
+    refined: fits.map(toRefined),
+    ...more,
+  });
   return { machine, ...parts };
 }
 

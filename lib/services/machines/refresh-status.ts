@@ -11,6 +11,7 @@ import type { RecordEntry } from "@/lib/services/record/append";
 import { appendRecord } from "@/lib/services/record/append";
 import type { MachineCondition } from "./condition";
 import { machineCondition } from "./condition";
+import { refineThermal } from "./refine-thermal";
 
 export const NO_BASELINE = "no baseline has been released to it yet";
 
@@ -36,6 +37,7 @@ export async function refreshMachineStatus(context: Context, machineId: string):
 async function recompute(tx: Tx, machineId: string): Promise<RecordEntry | null> {
   const { transaction } = tx;
   await Machine.findByPk(machineId, { transaction, lock: transaction.LOCK.UPDATE });
+  await refineThermal(tx, machineId);
   const condition = await machineCondition(machineId, tx.now, transaction);
   const before = await MachineStatus.findByPk(machineId, { transaction });
   const after = statusOf(condition);
