@@ -44,7 +44,7 @@ export default async function TestSheetPage({ params }: { readonly params: Promi
         subtitle={label}
       />
       {sheet.closing === null && <TestCautions falls={plan.falls} />}
-      <Expected plan={plan} />
+      <Expected plan={plan} change={change} />
       <SheetRunner
         key={sheet.id}
         initial={sheet}
@@ -67,11 +67,11 @@ export default async function TestSheetPage({ params }: { readonly params: Promi
 }
 
 /** What the test is made at, and the reading printed beforehand. */
-function Expected({ plan }: Pick<SheetView, "plan">) {
+function Expected({ plan, change }: Pick<SheetView, "plan" | "change">) {
   const facts = plan.settings.map((setting) => ({
     label: parameterLabel(setting.parameter, plan.axisKind),
     value: <ParameterQuantity {...setting} />,
-    note: "as required",
+    note: change ? `as ${change.label} sets it` : "as required",
   }));
   return (
     <SheetSection title="Expected reading">

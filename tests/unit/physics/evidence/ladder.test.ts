@@ -1,3 +1,4 @@
+import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { dixonMood } from "@/lib/physics/evidence/dixon-mood";
 import { isotonicMedian } from "@/lib/physics/evidence/isotonic";
@@ -153,5 +154,33 @@ describe("the isotonic estimate", () => {
   it("is wanting where the trials do not pass one half", () => {
     expect(isotonicMedian(UP, trialsOf("0+ 1+ 2+"))).toBeNull();
     expect(isotonicMedian(UP, trialsOf("0- 1- 2-"))).toBeNull();
+  });
+});
+
+describe("any entries at all", () => {
+  const shapes = fc.record({
+    start: fc.double({ min: 1e-3, max: 1e3, noNaN: true }),
+    step: fc.double({ min: 1e-4, max: 1e2, noNaN: true }),
+    fails: fc.constantFrom("above" as const, "below" as const),
+  });
+  const entries = fc.array(fc.record({ rung: fc.integer({ min: -40, max: 40 }), failed: fc.boolean() }), {
+    maxLength: 40,
+  });
+
+  it("lead to a level above 0 and to finite numbers", () => {
+    fc.assert(
+      fc.property(shapes, entries, (shape, trials) => {
+        const rung = nextRung(shape, trials);
+        expect(Number.isInteger(rung)).toBe(true);
+        expect(levelOf(shape, rung)).toBeGreaterThan(-1e-9);
+        const found = ladderEstimate(shape, trials);
+        if (!found) return;
+        const { mean, deviation, interval } = found;
+        for (const value of [mean, deviation, interval.low, interval.high])
+          expect(Number.isFinite(value)).toBe(true);
+        expect(interval.low).toBeLessThanOrEqual(interval.high);
+      }),
+      { numRuns: 60 },
+    );
   });
 });
