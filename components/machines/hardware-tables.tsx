@@ -19,6 +19,8 @@ export interface HardwareTablesProps {
   readonly fitted: Readonly<Record<string, FittedItem>>;
   /** What is this machine's own, with its evidence; paths as in a finding's `needs`. */
   readonly own: readonly { readonly path: string; readonly evidence: string }[];
+  /** Leads from each axis to its sheet; left out where there is none. */
+  readonly machineId?: string | undefined;
 }
 
 type Part = CatalogKind | "load";
@@ -135,8 +137,35 @@ function axisNote({
   return words.length === 0 ? "" : `: ${words.join(", ")}`;
 }
 
+interface AxisHardwareProps extends Pick<HardwareTablesProps, "fitted" | "own"> {
+  readonly axis: AxisAssembly;
+}
+
+/** The hardware of one axis, part by part. */
+export function AxisHardware({ axis, fitted, own }: AxisHardwareProps) {
+  return (
+    <Table caption={`${axisTitle(axis.axis)}${axisNote(axis)}`}>
+      <PartHeads />
+      <tbody>
+        {AXIS_PARTS.map((part) => (
+          <Row
+            key={part}
+            part={part}
+            path={`axes.${axis.axis}.${part}`}
+            data={
+              axis[part as keyof Pick<AxisAssembly, "motor" | "driver" | "drive_train" | "load" | "mount">]
+            }
+            fitted={fitted}
+            own={own}
+          />
+        ))}
+      </tbody>
+    </Table>
+  );
+}
+
 /** The hardware that counts for a machine, part by part: what is fitted, what is known of it, whose it is. */
-export function HardwareTables({ assembly, fitted, own }: HardwareTablesProps) {
+export function HardwareTables({ assembly, fitted, own, machineId }: HardwareTablesProps) {
   return (
     <>
       <Table caption="Machine">
@@ -153,25 +182,16 @@ export function HardwareTables({ assembly, fitted, own }: HardwareTablesProps) {
         </tbody>
       </Table>
       {assembly.axes.map((axis) => (
-        <Table key={axis.axis} caption={`${axisTitle(axis.axis)}${axisNote(axis)}`}>
-          <PartHeads />
-          <tbody>
-            {AXIS_PARTS.map((part) => (
-              <Row
-                key={part}
-                part={part}
-                path={`axes.${axis.axis}.${part}`}
-                data={
-                  axis[
-                    part as keyof Pick<AxisAssembly, "motor" | "driver" | "drive_train" | "load" | "mount">
-                  ]
-                }
-                fitted={fitted}
-                own={own}
-              />
-            ))}
-          </tbody>
-        </Table>
+        <div key={axis.axis}>
+          <AxisHardware axis={axis} fitted={fitted} own={own} />
+          {machineId !== undefined && (
+            <p>
+              <Link href={`/machines/${machineId}/axes/${encodeURIComponent(axis.axis)}`}>
+                {axisTitle(axis.axis)}: operating map, torque curve, temperatures
+              </Link>
+            </p>
+          )}
+        </div>
       ))}
     </>
   );

@@ -57,6 +57,14 @@ async function openSheet(page: Page): Promise<string> {
   return `/test-sheets/${((await response.json()) as { id: string }).id}`;
 }
 
+async function axisOfMachine(page: Page): Promise<string> {
+  const id = await machine(page);
+  const { assembly } = await ask<{ assembly: { axes: { axis: string }[] } }>(page, `/machines/${id}`);
+  const [first] = assembly.axes;
+  if (!first) throw new Error("The demo's machine has no axis.");
+  return `/machines/${id}/axes/${first.axis}`;
+}
+
 async function newestMail(page: Page): Promise<string> {
   const link = page.getByRole("table").getByRole("link").first();
   await expect(async () => {
@@ -94,6 +102,14 @@ const PAGES: readonly VisitedPage[] = [
     route: "/machines/[id]/edit",
     role: "engineer",
     address: async (page) => `/machines/${await machine(page)}/edit`,
+  },
+  {
+    route: "/machines/[id]/axes/[axis]",
+    role: "engineer",
+    address: axisOfMachine,
+    shows: async (page) => {
+      await expect(page.getByRole("slider", { name: /^Speed on the operating map/ })).toBeVisible();
+    },
   },
   { route: "/machines/new", role: "engineer" },
   { route: "/readings", role: "viewer" },

@@ -220,10 +220,10 @@ function Changes({ machine: { changes } }: PartProps) {
 }
 
 function Hardware({ machine }: PartProps) {
-  const { assembly, fitted, own, ignored } = machine;
+  const { id, assembly, fitted, own, ignored } = machine;
   return (
     <SheetSection title="Hardware" id="hardware" note="Its own recorded hardware counts before its model's">
-      <HardwareTables assembly={assembly} fitted={fitted} own={own} />
+      <HardwareTables assembly={assembly} fitted={fitted} own={own} machineId={id} />
       {ignored.length > 0 && (
         <ul>
           {ignored.map(({ path, reason }) => (
