@@ -2,6 +2,7 @@ import type { Metadata } from "next";
 import Link from "next/link";
 import { notFound } from "next/navigation";
 import { z } from "zod";
+import { MapsOfChange } from "@/components/axis/maps-of-change";
 import { ChangeTexts } from "@/components/changes/change-texts";
 import { ChangeTitleBlock } from "@/components/changes/change-title-block";
 import { ChangedParameters } from "@/components/changes/changed-parameters";
@@ -20,6 +21,7 @@ import { Sheet, SheetHead, SheetSection } from "@/components/ui/sheet";
 import { load, pageActor } from "@/lib/http/page-actor";
 import { readParams, type SearchParams } from "@/lib/http/search-params";
 import { may } from "@/lib/policies/decide";
+import { operatingMapsOfChange } from "@/lib/services/changes/operating-maps";
 import type { ChangeView } from "@/lib/services/changes/show";
 import { showChange } from "@/lib/services/changes/show";
 import { recordOfObject } from "@/lib/services/record/of-object";
@@ -39,6 +41,7 @@ export default async function ChangePage({ params, searchParams }: ChangePagePro
   if (!z.uuid().safeParse(id).success) notFound();
   const asked = (await readParams(query, searchParams)).query.version;
   const change = await load(showChange(context, id, asked));
+  const maps = await load(operatingMapsOfChange(context, { changeId: id, version: change.proposal.version }));
   const events = await load(recordOfObject(context, { type: "change", id }));
   const past = change.proposal.version !== change.versions.at(-1)?.version;
   const mayComment = may(context.actor, "changes.comment");
@@ -61,6 +64,13 @@ export default async function ChangePage({ params, searchParams }: ChangePagePro
           <DeviationsTouched touched={change.deviationsTouched} />
         </SheetSection>
       </div>
+      <SheetSection title="Operating map" note="was and to be, on the hardware of the evaluation">
+        {maps.length > 0 ? (
+          <MapsOfChange maps={maps} />
+        ) : (
+          <p className="quiet">No axis moves on its operating map.</p>
+        )}
+      </SheetSection>
       <SheetSection title="Text" note={`was: ${change.base.label}`}>
         <ChangeTexts change={change} mayComment={mayComment} />
       </SheetSection>
