@@ -2,6 +2,7 @@
 
 import { useState, useSyncExternalStore } from "react";
 import { fieldErrors } from "@/components/api";
+import { LiveOperatingMap } from "@/components/axis/live-operating-map";
 import { Form } from "@/components/forms/form";
 import { Refusal } from "@/components/forms/refusal";
 import { Button } from "@/components/ui/button";
@@ -49,6 +50,13 @@ export function ProposalEditor({ start, change }: ProposalEditorProps) {
             answer={answer}
             baseReport={proposal.baseReport}
             onGoTo={(path, line) => setGoTo({ path, line })}
+          />
+          <LiveOperatingMap
+            base={start.files}
+            files={files}
+            keyTable={start.keyTable}
+            assembly={start.assembly}
+            policy={start.policy}
           />
         </section>
       </div>
