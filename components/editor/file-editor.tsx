@@ -23,6 +23,8 @@ export interface FileEditorProps {
   readonly edition: number;
   readonly findings: readonly Finding[];
   readonly goTo: { readonly path: string; readonly line: number } | null;
+  /** Texts put in the place of the typed ones, as one act that the editor can undo; a new list each time. */
+  readonly taken?: readonly EditedFile[] | null | undefined;
   readonly onChange: (path: string, text: string) => void;
 }
 
@@ -44,7 +46,7 @@ export function marksOf(findings: readonly Finding[], path: string): LineMark[] 
 }
 
 /** The files of a proposal, one open at a time; a plain text field on a phone. */
-export function FileEditor({ files, edition, findings, goTo, onChange }: FileEditorProps) {
+export function FileEditor({ files, edition, findings, goTo, taken, onChange }: FileEditorProps) {
   const narrow = useSyncExternalStore(
     subscribe,
     () => matchMedia(NARROW).matches,
@@ -77,6 +79,7 @@ export function FileEditor({ files, edition, findings, goTo, onChange }: FileEdi
             startText={open.text}
             marks={marksOf(findings, open.path)}
             goTo={goTo?.path === open.path ? goTo : null}
+            replacement={taken?.find(({ path }) => path === open.path)}
             onChange={(text) => onChange(open.path, text)}
           />
         </div>

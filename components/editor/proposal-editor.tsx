@@ -8,6 +8,7 @@ import { Refusal } from "@/components/forms/refusal";
 import { Button } from "@/components/ui/button";
 import { DateTime } from "@/components/ui/date-time";
 import { Notice } from "@/components/ui/notice";
+import { CounterBox } from "./counter-box";
 import { FileEditor } from "./file-editor";
 import { forgetDraft, keptDraft, type KeptDraft } from "./kept-draft";
 import { LiveFindings } from "./live-findings";
@@ -42,10 +43,12 @@ export function ProposalEditor({ start, change }: ProposalEditorProps) {
             edition={proposal.edition}
             findings={answer?.report.findings ?? []}
             goTo={goTo}
+            taken={proposal.taken}
             onChange={proposal.edit}
           />
         </section>
         <section aria-label="What the checks say">
+          <CounterBox start={start} files={files} report={answer?.report ?? null} onTake={proposal.take} />
           <LiveFindings
             answer={answer}
             baseReport={proposal.baseReport}

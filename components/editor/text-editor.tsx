@@ -13,6 +13,8 @@ export interface TextEditorProps {
   readonly marks: readonly LineMark[];
   /** Line to put in sight and the cursor on; a new object each time it is asked for. */
   readonly goTo: { readonly line: number } | null;
+  /** A text to put in the place of the present one, as one act that the editor can undo; a new object each time. */
+  readonly replacement?: { readonly text: string } | null | undefined;
   readonly onChange: (text: string) => void;
 }
 
@@ -35,8 +37,34 @@ const OPTIONS = {
   scrollbar: { alwaysConsumeMouseWheel: false },
 } as const;
 
+/** Changes the lines that differ and leaves the rest of the text, the cursor and the way back alone. */
+function replaceText(editor: Instance, text: string): void {
+  const model = editor.getModel();
+  if (!model || model.getValue() === text) return;
+  const was = model.getValue();
+  let from = 0;
+  while (from < was.length && was[from] === text[from]) from++;
+  let behind = 0;
+  const most = Math.min(was.length, text.length) - from;
+  while (behind < most && was[was.length - 1 - behind] === text[text.length - 1 - behind]) behind++;
+  const [start, end] = [model.getPositionAt(from), model.getPositionAt(was.length - behind)];
+  editor.pushUndoStop();
+  editor.executeEdits("counter-proposal", [
+    {
+      range: {
+        startLineNumber: start.lineNumber,
+        startColumn: start.column,
+        endLineNumber: end.lineNumber,
+        endColumn: end.column,
+      },
+      text: text.slice(from, text.length - behind),
+    },
+  ]);
+  editor.pushUndoStop();
+}
+
 /** Monaco with a level mark beside each line that a finding rests on. Tab leaves it (Ctrl+M changes that). */
-export function TextEditor({ path, startText, marks, goTo, onChange }: TextEditorProps) {
+export function TextEditor({ path, startText, marks, goTo, replacement, onChange }: TextEditorProps) {
   const [editor, setEditor] = useState<Instance | null>(null);
   const marking = useRef<ReturnType<Instance["createDecorationsCollection"]> | null>(null);
   useEffect(() => {
@@ -58,6 +86,11 @@ export function TextEditor({ path, startText, marks, goTo, onChange }: TextEdito
     editor.setPosition({ lineNumber: goTo.line, column: 1 });
     editor.focus();
   }, [editor, goTo]);
+  const [opened] = useState(replacement);
+  useEffect(() => {
+    // The text that the editor opened with has it already.
+    if (editor && replacement && replacement !== opened) replaceText(editor, replacement.text);
+  }, [editor, replacement, opened]);
   return (
     <Editor
       height="min(70vh, 640px)"

@@ -42,6 +42,7 @@ export function useProposal(proposal: Proposal) {
   const [fields, setFields] = useState<ProposalFields>(change?.fields ?? EMPTY_FIELDS);
   const [touched, setTouched] = useState(false);
   const [edition, setEdition] = useState(0);
+  const [taken, setTaken] = useState<readonly EditedFile[] | null>(null);
   const place = placeOf(proposal);
   const { keyTable, assembly, policy } = start;
   const answer = useLiveCheck({ base: start.files, files, keyTable, assembly, policy });
@@ -70,9 +71,16 @@ export function useProposal(proposal: Proposal) {
     baseReport,
     place,
     save,
+    taken,
     edit: (path: string, text: string) => {
       setTouched(true);
       setFiles((present) => present.map((file) => (file.path === path ? { path, text } : file)));
+    },
+    take: (texts: readonly EditedFile[]) => {
+      setTouched(true);
+      const fresh = texts.map(({ path, text }) => ({ path, text }));
+      setFiles(fresh);
+      setTaken(fresh);
     },
     setFields: (next: ProposalFields) => {
       setTouched(true);
