@@ -1,4 +1,5 @@
 import { checkAnswerSchema, checkRequestSchema } from "@/lib/schemas/check";
+import { counterAnswerSchema } from "@/lib/schemas/counter-proposal";
 import { MAX_UPLOAD_BYTES } from "@/lib/schemas/files";
 import { operation } from "@/lib/schemas/operation";
 
@@ -13,5 +14,17 @@ export const checkOperations = {
     body: checkRequestSchema,
     maxBytes: MAX_UPLOAD_BYTES,
     answer: checkAnswerSchema,
+  }),
+  counterProposal: operation({
+    id: "counterProposal",
+    method: "POST",
+    path: "/counter-proposal",
+    action: "check.run",
+    summary:
+      "The smallest change of a configuration's values that clears what is over limit; nothing is stored",
+    tag: "Check",
+    body: checkRequestSchema,
+    maxBytes: MAX_UPLOAD_BYTES,
+    answer: counterAnswerSchema,
   }),
 } as const;

@@ -51,7 +51,8 @@ export async function runCheck(context: Context, input: CheckRequest): Promise<C
 const NO_RULES: KeyTable = { rules: [] };
 const NO_AXES: Assembly = { axes: [] };
 
-async function storedSide(request: Parsed): Promise<{ assembly: Assembly; keyTable: KeyTable }> {
+/** Assembly and key table that a request is checked with: what it brings, else what is stored of its machine or model. */
+export async function storedSide(request: Parsed): Promise<{ assembly: Assembly; keyTable: KeyTable }> {
   const { machineId, machineModelId, assembly, keyTable } = request;
   if (machineId === undefined && machineModelId === undefined)
     return { assembly: assembly ?? NO_AXES, keyTable: keyTable ?? NO_RULES };
