@@ -14,6 +14,7 @@ import { MachinesProgress } from "@/components/changes/machines-progress";
 import { StaleNotice } from "@/components/changes/stale-notice";
 import { UnsentNotice } from "@/components/changes/unsent-notice";
 import { Versions } from "@/components/changes/versions";
+import { CounterSection } from "@/components/solve/counter-section";
 import { EffectsTable } from "@/components/findings/effects-table";
 import { RecordList } from "@/components/record/record-list";
 import { Quantity } from "@/components/ui/quantity";
@@ -21,6 +22,7 @@ import { Sheet, SheetHead, SheetSection } from "@/components/ui/sheet";
 import { load, pageActor } from "@/lib/http/page-actor";
 import { readParams, type SearchParams } from "@/lib/http/search-params";
 import { may } from "@/lib/policies/decide";
+import { counterBasis } from "@/lib/services/changes/counter-basis";
 import { operatingMapsOfChange } from "@/lib/services/changes/operating-maps";
 import type { ChangeView } from "@/lib/services/changes/show";
 import { showChange } from "@/lib/services/changes/show";
@@ -41,6 +43,7 @@ export default async function ChangePage({ params, searchParams }: ChangePagePro
   if (!z.uuid().safeParse(id).success) notFound();
   const asked = (await readParams(query, searchParams)).query.version;
   const change = await load(showChange(context, id, asked));
+  const counter = await load(counterBasis(context, { changeId: id, version: asked }));
   const maps = await load(operatingMapsOfChange(context, { changeId: id, version: change.proposal.version }));
   const events = await load(recordOfObject(context, { type: "change", id }));
   const past = change.proposal.version !== change.versions.at(-1)?.version;
@@ -49,12 +52,16 @@ export default async function ChangePage({ params, searchParams }: ChangePagePro
     <Sheet>
       <Head change={change} past={past} />
       {change.state === "draft" && <UnsentNotice changeId={id} />}
-      <StaleNotice
-        changeId={id}
-        stale={change.stale}
-        mayEdit={may(context.actor, "changes.edit")}
-      />
+      <StaleNotice changeId={id} stale={change.stale} mayEdit={may(context.actor, "changes.edit")} />
       <EvaluationFindings evaluation={change.evaluation} />
+      {counter && (
+        <CounterSection
+          basis={counter}
+          editHref={
+            !past && may(context.actor, "changes.edit") && isEditable(change) ? `/changes/${id}/edit` : null
+          }
+        />
+      )}
       <div className="two-columns">
         <SheetSection title="Effects" note={<EvaluatedOn change={change} />}>
           <Effects change={change} />
@@ -99,6 +106,12 @@ export default async function ChangePage({ params, searchParams }: ChangePagePro
       <ChangeTitleBlock change={change} actor={context.actor} past={past} />
     </Sheet>
   );
+}
+
+const EDITABLE = ["draft", "evaluation", "approved"];
+
+function isEditable({ state }: ChangeView): boolean {
+  return EDITABLE.includes(state);
 }
 
 function Head({ change, past }: { readonly change: ChangeView; readonly past: boolean }) {

@@ -11,9 +11,11 @@ import { DateTime } from "@/components/ui/date-time";
 import { Notice } from "@/components/ui/notice";
 import { Sheet, SheetHead, SheetSection } from "@/components/ui/sheet";
 import { TitleBlock } from "@/components/ui/title-block";
+import { OrderSection } from "@/components/solve/order-section";
 import { load, pageActor } from "@/lib/http/page-actor";
 import { may } from "@/lib/policies/decide";
 import { machinesOfChange } from "@/lib/services/changes/machines-of-change";
+import { orderBasis } from "@/lib/services/implementation/order-basis";
 import { showStep, type StepDetail } from "@/lib/services/implementation/steps";
 import { testsOfChange } from "@/lib/services/test-sheets/tests-of-change";
 
@@ -33,6 +35,7 @@ export default async function StepPage({ params }: StepPageProps) {
   const step = await load(showStep(context, id, machineId));
   const place = (await load(machinesOfChange(context, id))).find((one) => one.machineId === machineId);
   const { items: moved } = await load(testsOfChange(context, { changeId: id, machineId }));
+  const order = await load(orderBasis(context, { changeId: id, machineId }));
   const mayWork = may(context.actor, "verifications.create") && step.verifiedAt === null && !place?.endedAt;
   return (
     <Sheet>
@@ -47,6 +50,7 @@ export default async function StepPage({ params }: StepPageProps) {
       />
       <Progress step={step} ended={place?.endedAt ?? null} />
       {mayWork && <Work step={step} />}
+      {mayWork && order && <OrderSection basis={order} fromReadings={order.fromReadings} />}
       <SheetSection title="What to test" note="only what the change moves">
         <MovedTestList
           tests={moved}
