@@ -32,9 +32,9 @@ function excitations(
   const pitch = hardware(axis, "drive_train", "pitch_mm");
   const belt = axis.hardware.drive_train?.kind === "belt" && pitch.ok ? [pitch.value / 1000] : [];
   return [
-    { words: "full steps", speed, frequency: fullSteps },
-    { words: "every fourth full step", speed, frequency: fullSteps / 4 },
-    ...belt.map((length) => ({ words: "belt teeth", speed, frequency: speed / length })),
+    { words: "full steps come", speed, frequency: fullSteps },
+    { words: "every fourth full step comes", speed, frequency: fullSteps / 4 },
+    ...belt.map((length) => ({ words: "belt teeth come", speed, frequency: speed / length })),
   ];
 }
 
@@ -57,7 +57,7 @@ function assess(axis: AxisView): Assessment {
     sentence: () =>
       hit === undefined
         ? `Load and drive train swing at ${show(own, "Hz")}; nothing that returns at the speeds at which the axis dwells lies within 20 % of it.`
-        : `At ${show(hit.speed, speedUnit(axis))} the ${hit.words} come at ${show(hit.frequency, "Hz")}, near the ${show(own, "Hz")} at which load and drive train swing: vibration is likely, verify it on the machine.`,
+        : `At ${show(hit.speed, speedUnit(axis))} ${hit.words} at ${show(hit.frequency, "Hz")}, near the ${show(own, "Hz")} at which load and drive train swing: vibration is likely, verify it on the machine.`,
     formula: () => resonance.formula(),
   });
 }

@@ -1,3 +1,5 @@
+import { formatNumber } from "@/lib/domain/units";
+import { touchTime } from "@/lib/physics/touch";
 import { exceeds, hint, judged } from "./assessment";
 import type { Assessment } from "./assessment";
 import { currentParameters } from "./candidates";
@@ -22,9 +24,19 @@ function assess(axis: AxisView): Assessment {
     sentence: () =>
       hot
         ? `The motor's case settles at ${show(value, "°C")}, hotter than the ${HOT} °C at which bare metal burns the skin within seconds.`
-        : `The motor's case settles at ${show(value, "°C")}, no hotter than ${HOT} °C.`,
+        : `The motor's case settles at ${show(value, "°C")}, no hotter than ${HOT} °C.${toHold(value)}`,
     formula: () => `${motorCase.formula()} ${hot ? ">" : "≤"} ${HOT} °C`,
   });
+}
+
+/** °C from which a case is hot to hold: bare metal burns within ten minutes. */
+const HOT_TO_HOLD = 48;
+
+function toHold(temperature: number): string {
+  const time = touchTime(temperature);
+  if (temperature < HOT_TO_HOLD || time === null) return "";
+  const words = time < 60 ? `${formatNumber(time, 2)} s` : `${formatNumber(time / 60, 2)} min`;
+  return ` It is hot to hold: bare metal burns the skin after about ${words}.`;
 }
 
 function unsettled(reason: string): Assessment {
@@ -41,7 +53,7 @@ export const TOUCH_TEMPERATURE = axisRule({
   compares: "The settled temperature of the motor's case with 60 °C.",
   formula: "T_case = Ta + R_case·P ≤ 60 °C",
   source:
-    "ISO 13732-1 (burn thresholds for bare metal); 60 °C is the product's choice for a touch of seconds",
+    "ISO 13732-1 (burn thresholds for bare metal, from memory; it sets no limits); 60 °C is the product's choice for a touch of seconds",
   needs: readsOf("case_c"),
   margin: "near above 60 °C, never over",
   caution: "Hot surface: guard it or warn of it, and let it cool before hands go there.",

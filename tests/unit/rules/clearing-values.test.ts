@@ -174,8 +174,11 @@ const wildText = fc
     acceleration: fc.double({ min: 10, max: 60000, noNaN: true }),
     corner: fc.double({ min: 0, max: 400, noNaN: true }),
     pulse: fc.constantFrom(0.5, 1, 4, 40),
+    jerk: fc.constantFrom(0, 5, 500),
+    end: fc.constantFrom(380, 400, 410),
+    seeking: fc.double({ min: 1, max: 500, noNaN: true }),
   })
-  .map(({ run, basis, hold, scale, speed, acceleration, corner, pulse }): Texts => ({
+  .map(({ run, basis, hold, scale, speed, acceleration, corner, pulse, jerk, end, seeking }): Texts => ({
     run_current: { typed: run, unit: "A", basis },
     hold_current: { typed: hold, unit: "%" },
     microsteps: { typed: 16, unit: null },
@@ -184,6 +187,10 @@ const wildText = fc
     acceleration: { typed: acceleration, unit: "mm/s^2", factor: 1e-3 },
     corner_speed: { typed: corner, unit: "mm/s", factor: 1e-3 },
     pulse_width: { typed: pulse, unit: "µs", factor: 1e-6 },
+    jerk: { typed: jerk, unit: "m/s³" },
+    travel_min: { typed: 0, unit: "mm", factor: 1e-3 },
+    travel_max: { typed: end, unit: "mm", factor: 1e-3 },
+    reference_run_speed: { typed: seeking, unit: "mm/s", factor: 1e-3 },
   }));
 
 const wildAxis = fc.record({
@@ -198,6 +205,7 @@ const TIGHT: Readonly<Record<string, ParameterName>> = {
   "sense-resistor": "run_current",
   "step-rate": "max_speed",
   "corner-speed": "corner_speed",
+  "reference-run": "reference_run_speed",
 };
 
 describe("every clearing value", () => {
@@ -209,6 +217,8 @@ describe("every clearing value", () => {
           text,
           assemblyWith((axis) => {
             axis.load = { ...axis.load!, mass_kg: mass, friction_n: friction, incline_deg: incline };
+            axis.load.reference_overtravel_mm = 3;
+            axis.motor!.thermal_class = "E";
           }),
         );
         for (const finding of found.result.findings) {
@@ -231,12 +241,18 @@ describe("every clearing value", () => {
         "driver-junction",
         "hold-torque",
         "mount-temperature",
+        "ramp-torque-margin",
+        "reference-run",
         "run-current-driver",
         "run-current-motor",
         "sense-resistor",
+        "soft-travel",
+        "static-position",
         "step-rate",
         "steps-per-mm",
+        "supply-power",
         "torque-margin",
+        "winding-class",
         "winding-temperature",
       ].sort(),
     );

@@ -200,12 +200,34 @@ function numbersIn(value: unknown): number[] {
   return Object.values(value).flatMap(numbersIn);
 }
 
+/** The example with every further field that a check can use, and a second axis on shared motors. */
+function fullAssembly(): Assembly {
+  return assemblyWith((axis, machine) => {
+    Object.assign(axis.motor!, { thermal_class: "B", rating_of: "half_coil", connection: "series" });
+    Object.assign(axis.load!, {
+      incline_deg: 60,
+      holding_brake: true,
+      brake_delay_ms: 40,
+      reference_overtravel_mm: 5,
+    });
+    Object.assign(axis.drive_train!, {
+      preload_n: 50,
+      preload_friction: 0.2,
+      belt_stiffness_n_per_mm: 7500,
+      belt_width_mm: 9,
+      belt_length_mm: 1000,
+    });
+    Object.assign(machine.supply!, { other_load_w: 10, cable_length_m: 2, cable_ohm_per_km: 19.5 });
+    machine.axes.push({ ...structuredClone(axis), axis: "y", coupled_with: ["x"] });
+  });
+}
+
 describe("any finite numbers", () => {
   it("lead to finite numbers or to none, and never to an exception", () => {
     fc.assert(
       fc.property(anyText, fc.array(anySize, { minLength: 1, maxLength: 40 }), (text, sizes) => {
-        const assembly = resized(exampleAssembly(), sizes) as Assembly;
-        assembly.axes[0]!.motor_count = 1;
+        const assembly = resized(fullAssembly(), sizes) as Assembly;
+        for (const axis of assembly.axes) axis.motor_count = 1;
         const { quantities, findings, provenance } = world(text, assembly).result;
         const odd = numbersIn([quantities, findings, provenance]).filter((value) => !Number.isFinite(value));
         expect(odd).toEqual([]);
