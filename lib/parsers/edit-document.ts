@@ -58,6 +58,7 @@ const ALONE: Record<
   defines: { value: (raw) => `#define k ${raw}`, element: (raw) => `#define k {${raw},0}` },
   json: { value: (raw) => `{"k": ${raw}}`, element: (raw) => `{"k": [${raw},0]}` },
   toml: { value: (raw) => `k = ${raw}`, element: (raw) => `k = [${raw},0]` },
+  yaml: { value: (raw) => `k: ${raw}`, element: (raw) => `k:\n- ${raw}\n- 0` },
 };
 
 /** A value of these formats ends with its line. */
@@ -82,6 +83,8 @@ function dropOverlaps(splices: readonly Splice[], refused: RefusedEdit[]): Splic
   for (const splice of splices) {
     const last = kept[kept.length - 1];
     const same = last && last.edit.entry === splice.edit.entry && last.start === splice.start;
+    const shared = last && last.start === splice.start && last.end === splice.end && !same;
+    if (shared && last.edit.raw === splice.edit.raw && splice.end > splice.start) continue;
     if (last && (splice.start < last.end || same))
       refused.push({ edit: splice.edit, reason: "Another edit already changes this value." });
     else kept.push(splice);
@@ -126,13 +129,21 @@ function readsAsMeant(before: Document, after: Document, splices: readonly Splic
   if (after.entries.length !== before.entries.length) return false;
   const touched = new Map<number, Map<number | null, string>>();
   for (const { edit } of splices) {
-    const raws = touched.get(edit.entry) ?? new Map<number | null, string>();
-    touched.set(edit.entry, raws.set(edit.element, edit.raw.trim()));
+    const place = placeOf(before, edit.entry);
+    const raws = touched.get(place) ?? new Map<number | null, string>();
+    touched.set(place, raws.set(edit.element, edit.raw.trim()));
   }
   return before.entries.every((entry, id) => {
     const next = after.entries[id];
-    return next !== undefined && sameBut(entry, next, touched.get(id));
+    return next !== undefined && sameBut(entry, next, touched.get(placeOf(before, id)));
   });
+}
+
+/** Keys that repeat one value by an alias have one place and change together; a missing value is its key's own. */
+function placeOf({ format, entries }: Document, id: number): number {
+  if (format !== "yaml") return id;
+  const entry = entries[id];
+  return entry && entry.raw !== "" ? entry.valueSpan.start : -1 - id;
 }
 
 /** Same key in the same state, with the values as edited and the rest unchanged. */

@@ -4,6 +4,7 @@ import { parseJson } from "./json";
 import { parseLines } from "./lines";
 import { recogniseFormat } from "./recognise";
 import { parseToml } from "./toml";
+import { parseYaml } from "./yaml";
 import type { Document, Format } from "./types";
 
 const PARSERS: Record<Format, (path: string, text: string) => Document> = {
@@ -11,6 +12,7 @@ const PARSERS: Record<Format, (path: string, text: string) => Document> = {
   defines: parseDefines,
   json: parseJson,
   toml: parseToml,
+  yaml: parseYaml,
 };
 
 /** Reads a text of any format; without `format` the text itself decides. Never throws on a text. */

@@ -3,6 +3,7 @@ import { cutLine } from "./lines/lex";
 import { Pieces } from "./pieces";
 import { rankJson } from "./json/rank";
 import { rankToml } from "./toml/rank";
+import { rankYaml } from "./yaml/rank";
 import { score, type FormatRank } from "./rank";
 import { PIECE, type Format } from "./types";
 
@@ -21,7 +22,13 @@ const LEAST_SCORE = 0.3;
 export function recogniseFormat({ path, text }: { path: string; text: string }): Recognition {
   const sample = { text: text.slice(0, SAMPLE), whole: text.length <= SAMPLE, extension: extension(path) };
   const counts = countLines(sample.text);
-  const ranks = [rankJson(sample), rankToml(sample), rankLines(path, counts), rankDefines(path, counts)];
+  const ranks = [
+    rankJson(sample),
+    rankToml(sample),
+    rankYaml(sample),
+    rankLines(path, counts),
+    rankDefines(path, counts),
+  ];
   const ranking = ranks.sort((a, b) => b.score - a.score);
   const best = ranking[0];
   return { format: best && best.score >= LEAST_SCORE ? best.format : null, ranking };

@@ -167,6 +167,12 @@ export class TreeBuilder {
     subtree.to = this.entries.length;
   }
 
+  /** Puts entries that were found late, such as those in comments, where they stand in the text. */
+  inOrder(): void {
+    this.entries.sort((a, b) => a.at.keyStart - b.at.keyStart || a.id - b.id);
+    this.entries.forEach((entry, id) => (entry.id = id));
+  }
+
   private shadow(
     before: Subtree,
     { name, start, section }: { readonly name: string; readonly start: number; readonly section: Section },

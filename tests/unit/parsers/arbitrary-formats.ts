@@ -1,6 +1,7 @@
 import type fc from "fast-check";
 import type { Format } from "@/lib/parsers/types";
 import { tomlText, tomlValue } from "./arbitrary-toml";
+import { yamlText, yamlValue } from "./arbitrary-yaml";
 import { jsonText, jsonValue } from "./arbitrary-json";
 import { defineText, defineValue, lineText, lineValue, type ModelText } from "./arbitrary-texts";
 
@@ -10,6 +11,7 @@ export const TEXTS: Record<Format, fc.Arbitrary<ModelText>> = {
   defines: defineText,
   json: jsonText,
   toml: tomlText,
+  yaml: yamlText,
 };
 
 /** Values of each format, as typed. */
@@ -18,4 +20,5 @@ export const VALUES: Record<Format, fc.Arbitrary<string>> = {
   defines: defineValue,
   json: jsonValue,
   toml: tomlValue,
+  yaml: yamlValue,
 };

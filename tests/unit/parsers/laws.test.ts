@@ -190,7 +190,11 @@ function expectEdited(document: Document, edit: Edit): void {
   expect(read).toBe(edit.raw);
 }
 
-/** A key in a comment, where some values would read as prose, or a value on several lines in a line comment. */
+/**
+ * A key in a comment, where some values would read as prose, a value on several lines in a line comment, or one in the
+ * place of a list with dashes, which stands on lines of its own.
+ */
 function mayRefuse(document: Document, { entry, raw }: Edit): boolean {
-  return document.entries[entry]!.disabled || raw.includes("\n");
+  const { disabled, raw: was } = document.entries[entry]!;
+  return disabled || raw.includes("\n") || (document.format === "yaml" && was.startsWith("- "));
 }

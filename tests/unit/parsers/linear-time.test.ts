@@ -36,6 +36,15 @@ const HOSTILE: Record<string, (size: number) => string> = {
   "one member again and again": (size) => `{${'"a":{"b":1},'.repeat(size)}"a":1}`,
   "comments that are no members": (size) => `{${'// "a": b\n'.repeat(size)}}`,
   "closed brackets": (size) => "]}".repeat(size),
+  "lists in lists": (size) => "- ".repeat(size),
+  "aliases of aliases": (size) => `a: &a [1]\n${"b: [*a, *a]\n".repeat(size)}`,
+  "anchors without an end": (size) => "a: &a [*a, *a]\n".repeat(size),
+  "keys indented ever deeper": (size) =>
+    Array.from({ length: Math.ceil(Math.sqrt(size)) }, (_, depth) => `${" ".repeat(depth)}a:\n`).join(""),
+  "comments beside keys": (size) => "a: 1 # b\n# c: 1\n".repeat(size),
+  "arrays of tables": (size) => "[[a.b]]\nc = 1\n".repeat(size),
+  "dotted keys": (size) => `${"a.".repeat(size)}b = 1`,
+  "open texts over several lines": (size) => 'k = """\n'.repeat(size),
   "zero-width spaces": (size) => "\u200b".repeat(size),
   "carriage returns": (size) => "\r".repeat(size),
 };

@@ -23,6 +23,10 @@ describe("the format", () => {
     ["a.toml", LINES, "toml"],
     ["a.conf", '[[axis]]\nname = "x"\nrun = 800\n[[axis]]\nname = "z"\nrun = 700', "toml"],
     ["noname", 'x = { run = 800, hold = "400 mA" }', "toml"],
+    ["a.yaml", "run: 800", "yaml"],
+    ["a.conf", "axes:\n  x:\n    run: 800\n", "yaml"],
+    ["noname", "axes:\n- run: 800\n- run: 700\n", "yaml"],
+    ["noname", "run_ma: 800\naccel: 3000", "lines"],
     ["noname", "/*\n * Head\n */\n#ifndef A_H\n#define A_H\n#endif", "defines"],
   ])("of %s with %j is %s", (path, text, format) => {
     const { format: found, ranking } = recogniseFormat({ path, text });
