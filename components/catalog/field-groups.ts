@@ -14,7 +14,14 @@ const PLANS: Partial<Record<FieldSubject, readonly FieldGroupPlan[]>> = {
   motor: [
     {
       legend: "Winding",
-      paths: ["rated_current_a", "rated_current_basis", "resistance_ohm", "inductance_mh"],
+      paths: [
+        "rated_current_a",
+        "rated_current_basis",
+        "resistance_ohm",
+        "inductance_mh",
+        "rating_of",
+        "connection",
+      ],
     },
     {
       legend: "Torque and rotor",
@@ -24,6 +31,7 @@ const PLANS: Partial<Record<FieldSubject, readonly FieldGroupPlan[]>> = {
       legend: "Heat",
       paths: [
         "winding_limit_c",
+        "thermal_class",
         "winding_to_ambient_k_per_w",
         "case_to_ambient_k_per_w",
         "thermal_time_constant_s",
@@ -57,15 +65,41 @@ const PLANS: Partial<Record<FieldSubject, readonly FieldGroupPlan[]>> = {
     },
     { legend: "Chopping", paths: ["chopping_frequency_hz", "min_on_time_us", "decay_mode"] },
   ],
+  supply: [
+    {
+      legend: "Output",
+      paths: ["voltage_v", "tolerance", "rated_power_w", "bus_capacitance_uf", "other_load_w"],
+    },
+    { legend: "Cable to the drivers", paths: ["cable_length_m", "cable_ohm_per_km"] },
+  ],
+  drive_train: [
+    {
+      legend: "Motion",
+      paths: ["kind", "pitch_mm", "teeth", "lead_mm", "module_mm", "ratio", "efficiency", "inertia_kgm2"],
+    },
+    { legend: "Preload", paths: ["preload_n", "preload_friction"] },
+    {
+      legend: "Stiffness",
+      paths: ["belt_stiffness_n_per_mm", "belt_width_mm", "belt_length_mm", "axial_stiffness_n_per_um"],
+    },
+  ],
   load: [
     {
       legend: "Linear axis",
-      paths: ["mass_kg", "friction_n", "incline_deg", "external_force_n", "counterbalance_n"],
+      paths: [
+        "mass_kg",
+        "friction_n",
+        "incline_deg",
+        "external_force_n",
+        "counterbalance_n",
+        "reference_overtravel_mm",
+      ],
     },
     {
       legend: "Rotary axis",
       paths: ["inertia_kgm2", "friction_nm", "external_torque_nm", "gravity_torque_nm"],
     },
+    { legend: "Brake", paths: ["holding_brake", "brake_delay_ms"] },
   ],
 };
 
@@ -95,6 +129,14 @@ const ONLY_FOR: Readonly<Record<string, { readonly choice: string; readonly valu
   teeth: { choice: "kind", values: ["belt", "rack"] },
   lead_mm: { choice: "kind", values: ["screw"] },
   module_mm: { choice: "kind", values: ["rack"] },
+  preload_n: { choice: "kind", values: ["screw"] },
+  preload_friction: { choice: "kind", values: ["screw"] },
+  belt_stiffness_n_per_mm: { choice: "kind", values: ["belt"] },
+  belt_width_mm: { choice: "kind", values: ["belt"] },
+  belt_length_mm: { choice: "kind", values: ["belt"] },
+  axial_stiffness_n_per_um: { choice: "kind", values: ["belt", "screw", "rack"] },
+  connection: { choice: "rating_of", values: ["half_coil"] },
+  brake_delay_ms: { choice: "holding_brake", values: ["yes"] },
   "set_point.gain": { choice: "set_point.method", values: ["reference_voltage"] },
   "set_point.gain_a_per_v": { choice: "set_point.method", values: ["transconductance"] },
   "set_point.full_scale_v": { choice: "set_point.method", values: ["digital_scale"] },

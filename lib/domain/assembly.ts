@@ -30,12 +30,12 @@ export const motorSchema = z.object({
   ),
   rating_of: choice(
     ["winding", "half_coil"],
-    "Rating holds for",
+    "Kind of rating",
     "Half coil: current, resistance and inductance are those of a unipolar rating",
   ),
   connection: choice(
     ["half_coil", "series", "parallel"],
-    "Coils are connected as",
+    "Connection of the coils",
     "For a rating of the half coil: how the coils are wired to this driver",
   ),
 });
@@ -86,7 +86,7 @@ export const driverSchema = z.object({
   decay_mode: choice(["slow", "mixed", "fast"], "Decay mode"),
   feedback: choice(
     ["open_loop", "closed_loop"],
-    "Loop of the drive",
+    "Position loop",
     "A drive that corrects its position by an encoder is not covered by the checks of torque, heat and lost steps",
   ),
   set_point: setPointSchema.optional(),
@@ -131,7 +131,7 @@ export const loadSchema = z.object({
   external_force_n: anyNumber("External force", "N"),
   counterbalance_n: notNegative("Counterbalance", "N"),
   holding_brake: yesNo("Holding brake"),
-  brake_delay_ms: notNegative("Time until the brake holds", "ms", "From the loss of power"),
+  brake_delay_ms: notNegative("Brake delay", "ms", "From the loss of power until the brake holds"),
   reference_overtravel_mm: positive(
     "Free travel behind the reference switch",
     "mm",
@@ -156,10 +156,10 @@ export const supplySchema = z.object({
   tolerance: within(0, 0.5, "Tolerance", "", "As a share of 1"),
   rated_power_w: positive("Rated power", "W"),
   bus_capacitance_uf: positive("Bus capacitance", "µF"),
-  other_load_w: notNegative("Other load on this supply", "W", "Controller, lights, heaters, valves"),
-  cable_length_m: positive("Length of the cable to the drivers", "m", "One way"),
+  other_load_w: notNegative("Other load", "W", "Controller, lights, heaters, valves"),
+  cable_length_m: positive("Cable length to the drivers", "m", "One way"),
   cable_ohm_per_km: positive(
-    "Resistance of one conductor at 20 °C",
+    "Conductor resistance at 20 °C",
     "Ω/km",
     "IEC 60228 class 5: 0.5 mm² 39.0, 0.75 mm² 26.0, 1 mm² 19.5, 1.5 mm² 13.3, 2.5 mm² 7.98",
   ),

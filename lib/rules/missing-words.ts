@@ -31,6 +31,8 @@ const WORDS: Readonly<Record<string, string>> = {
   "driver.max_current_basis": "whether the driver's maximum current is peak or rms",
   "driver.set_point.basis": "whether the driver's set-point is peak or rms",
   "drive_train.kind": "the kind of drive train",
+  "motor.connection": "how the motor's coils are connected",
+  "load.holding_brake": "whether the load has a holding brake",
   "load.inertia_kgm2": "the load inertia at the output",
 };
 
