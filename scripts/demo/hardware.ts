@@ -17,7 +17,13 @@ const motor = (code: string, name: string, data: Readonly<Record<string, unknown
   code,
   name,
   evidence: SHEET,
-  data: { rated_current_basis: "rms", step_angle_deg: 1.8, winding_limit_c: 130, ...data },
+  data: {
+    rated_current_basis: "rms",
+    step_angle_deg: 1.8,
+    winding_limit_c: 130,
+    thermal_class: "B",
+    ...data,
+  },
 });
 
 const driver = (code: string, name: string, data: Readonly<Record<string, unknown>>): DemoItem => ({
@@ -36,6 +42,7 @@ const driver = (code: string, name: string, data: Readonly<Record<string, unknow
     min_pulse_low_us: 1,
     min_direction_setup_us: 0.5,
     decay_mode: "mixed",
+    feedback: "open_loop",
     ...data,
   },
 });
@@ -122,30 +129,45 @@ export const DEMO_ITEMS: readonly DemoItem[] = [
     code: "supply-24",
     name: "24 V supply",
     evidence: "Label of the supply; its output capacitors are not stated",
-    data: { voltage_v: 24, tolerance: 0.05, rated_power_w: 240 },
+    data: {
+      voltage_v: 24,
+      tolerance: 0.05,
+      rated_power_w: 240,
+      other_load_w: 35,
+      cable_length_m: 1.5,
+      cable_ohm_per_km: 13.3,
+    },
   },
   {
     kind: "supply",
     code: "supply-30",
     name: "30 V supply",
     evidence: SHEET,
-    data: { voltage_v: 30, tolerance: 0.05, rated_power_w: 200, bus_capacitance_uf: 2200 },
+    data: {
+      voltage_v: 30,
+      tolerance: 0.05,
+      rated_power_w: 200,
+      bus_capacitance_uf: 2200,
+      other_load_w: 20,
+      cable_length_m: 2,
+      cable_ohm_per_km: 13.3,
+    },
   },
-  belt("carriage-belt", "Carriage belt", 20),
-  belt("shuttle-belt", "Shuttle belt", 24),
+  belt({ code: "carriage-belt", name: "Carriage belt", teeth: 20, length: 1300 }),
+  belt({ code: "shuttle-belt", name: "Shuttle belt", teeth: 24, length: 2000 }),
   {
     kind: "drive_train",
     code: "lift-screw",
     name: "Lift screw",
     evidence: MEASURED,
-    data: { kind: "screw", lead_mm: 4, efficiency: 0.5, inertia_kgm2: 2e-6 },
+    data: { kind: "screw", lead_mm: 4, efficiency: 0.5, inertia_kgm2: 2e-6, axial_stiffness_n_per_um: 20 },
   },
   {
     kind: "drive_train",
     code: "feed-screw",
     name: "Feed screw",
     evidence: SHEET,
-    data: { kind: "screw", lead_mm: 2, efficiency: 0.35 },
+    data: { kind: "screw", lead_mm: 2, efficiency: 0.35, axial_stiffness_n_per_um: 20 },
   },
   {
     kind: "drive_train",
@@ -170,7 +192,24 @@ export const DEMO_ITEMS: readonly DemoItem[] = [
   },
 ];
 
-function belt(code: string, name: string, teeth: number): DemoItem {
-  const data = { kind: "belt", pitch_mm: 2, teeth, ratio: 1, efficiency: 0.95 };
+interface Belt {
+  readonly code: string;
+  readonly name: string;
+  readonly teeth: number;
+  /** mm, both spans. */
+  readonly length: number;
+}
+
+function belt({ code, name, teeth, length }: Belt): DemoItem {
+  const data = {
+    kind: "belt",
+    pitch_mm: 2,
+    teeth,
+    ratio: 1,
+    efficiency: 0.95,
+    belt_stiffness_n_per_mm: 7500,
+    belt_width_mm: 9,
+    belt_length_mm: length,
+  };
   return { kind: "drive_train", code, name, evidence: MEASURED, data };
 }
