@@ -26,7 +26,6 @@ const DIPS = 3;
 const MOST_ROUNDS = 8;
 /** Among three knobs and more, so many rounds of exchanges between two. */
 const EXCHANGES = 3;
-const MOST_ORDERS = 24;
 const GAIN = 1e-9;
 
 function at(problem: Problem, index: number) {
@@ -68,7 +67,7 @@ export function cheapest(place: Place, point: Point, budget: number): Found | nu
     other === undefined
       ? restored(place, helped, [one])
       : more.length === 0
-        ? bestOfPair(place, present, { one, other, budget })
+        ? bestOfPair(place, present, { one, other, budget, count: SAMPLES })
         : bestOfMany(place, helped, budget);
   return best && best.cost <= budget + GAIN ? best : null;
 }
@@ -97,6 +96,8 @@ function backwards(place: Place, point: Point, index: number): number[] {
 }
 
 interface Pair {
+  /** So many values of the first knob are looked at before the best ones are looked at closer. */
+  readonly count: number;
   readonly one: number;
   readonly other: number;
   readonly budget: number;
@@ -121,13 +122,13 @@ function bestOfPair(place: Place, point: Point, pair: Pair): Found | null {
   let spans = [[presentOf(problem, one), end] as const];
   for (let round = 0; spans.length > 0 && round < MOST_ROUNDS; round++) {
     const tried = spans.flatMap((span) =>
-      samples(...span, round === 0 ? SAMPLES : CLOSER).map((to) => {
+      samples(...span, round === 0 ? pair.count : CLOSER).map((to) => {
         const budget = best ? Math.min(best.cost * NEARLY, pair.budget) : pair.budget;
         return { to, span, found: answered(place, point, { one, other, budget, to }) };
       }),
     );
     for (const { found } of tried) better(found);
-    spans = closer(tried, round === 0 ? SAMPLES : CLOSER);
+    spans = closer(tried, round === 0 ? pair.count : CLOSER);
   }
   return best;
 }
@@ -162,7 +163,7 @@ function closer(tried: readonly Tried[], count: number): Span[] {
 function answered(
   place: Place,
   point: Point,
-  { one, other, budget, to }: Pair & { to: number },
+  { one, other, budget, to }: Omit<Pair, "count"> & { to: number },
 ): Found | null {
   const { problem } = place;
   const left = budget - knobCost(at(problem, one), to);
@@ -194,7 +195,7 @@ function bestOfMany(place: Place, helped: Point, budget: number): Found | null {
     for (const one of knobs)
       for (const other of knobs) {
         if (one >= other) continue;
-        const found = bestOfPair(place, best.point, { one, other, budget: Infinity });
+        const found = bestOfPair(place, best.point, { one, other, budget: Infinity, count: CLOSER });
         if (found && found.cost < best.cost - GAIN) best = found;
       }
     if (best.cost >= before - GAIN) break;
@@ -223,8 +224,8 @@ function evenly(place: Place, helped: Point): number[] {
 
 /** Orders of a few knobs; of many, each one first once. */
 function orders(knobs: readonly number[]): (readonly number[])[] {
-  if (knobs.length > 4) return knobs.map((_, index) => [...knobs.slice(index), ...knobs.slice(0, index)]);
-  return permutations(knobs).slice(0, MOST_ORDERS);
+  if (knobs.length > 3) return knobs.map((_, index) => [...knobs.slice(index), ...knobs.slice(0, index)]);
+  return permutations(knobs);
 }
 
 function permutations(knobs: readonly number[]): (readonly number[])[] {

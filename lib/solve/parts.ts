@@ -5,7 +5,7 @@ import type { Knob } from "./knobs";
 import { cheapestTogether } from "./leaves";
 import { presentPoint, problemOf, type Constraint } from "./problem";
 import { restoredSingly, solveProblem } from "./solve-problem";
-import type { Conflict } from "./types";
+import { placeKey, type Conflict } from "./types";
 
 /** Knobs of one or more axes that have a key or a check in common, and the checks on them. */
 export interface Part {
@@ -76,7 +76,7 @@ function overFirst(constraints: readonly Constraint[]): Constraint[] {
  */
 export function solvePart({ context, policy }: Ground, { knobs, constraints }: Part): Solved {
   if (!constraints.some(({ over }) => over)) return { steps: new Map(), conflicts: [] };
-  const problem = problemOf(context, knobs, constraints);
+  const problem = problemOf(context, knobs);
   const conflicts: Conflict[] = [];
   let bound = constraints;
   for (;;) {
@@ -122,9 +122,9 @@ interface Across {
 
 /** Brings the checks of the whole machine within limits too, from where the parts by themselves have come to. */
 export function solveAcross({ context }: Ground, { knobs, constraints, across, apart }: Across): Solved {
-  const named = new Set(apart.conflicts.flatMap(({ checks }) => checks.map((one) => keyOf(one))));
-  const bound = overFirst(constraints.map((one) => (named.has(keyOf(one)) ? relaxed(context, one) : one)));
-  const problem = problemOf(context, knobs, bound);
+  const named = new Set(apart.conflicts.flatMap(({ checks }) => checks.map(placeKey)));
+  const bound = overFirst(constraints.map((one) => (named.has(one.key) ? relaxed(context, one) : one)));
+  const problem = problemOf(context, knobs);
   const point = presentPoint(problem).map((present, index) => {
     const knob = knobs[index];
     return (knob && apart.steps.get(knob)) ?? present;
@@ -147,8 +147,4 @@ export function solveAcross({ context }: Ground, { knobs, constraints, across, a
     ...apart,
     conflicts: [...apart.conflicts, ...broken.map((one) => ({ checks: [placeOnly(one)] }))],
   };
-}
-
-function keyOf({ ruleId, axis }: { readonly ruleId: string; readonly axis: string | null }): string {
-  return `${ruleId}|${axis ?? ""}`;
 }

@@ -21,8 +21,7 @@ export type Point = readonly number[];
 
 export interface Problem {
   readonly knobs: readonly Knob[];
-  readonly constraints: readonly Constraint[];
-  /** The first of the constraints that a point breaks; null where it breaks none. */
+  /** One of the constraints that a point breaks; null where it breaks none. */
   readonly broken: (point: Point, among: readonly Constraint[]) => Constraint | null;
 }
 
@@ -48,12 +47,8 @@ function touches({ tracks }: Knob, { needs }: Rule, axis: string | null): boolea
   );
 }
 
-/** A problem over all the given knobs and constraints. */
-export function problemOf(
-  context: RuleContext,
-  knobs: readonly Knob[],
-  constraints: readonly Constraint[],
-): Problem {
+/** The search space of some knobs, everything else as the context has it. */
+export function problemOf(context: RuleContext, knobs: readonly Knob[]): Problem {
   const contextAt = contexts(context, knobs);
   const known = new Map<Constraint, Map<string, boolean>>();
   let last: Constraint | null = null;
@@ -68,12 +63,12 @@ export function problemOf(
   };
   return {
     knobs,
-    constraints,
     broken: (point, among) => {
       // What broke the point before is likely to break this one too.
       if (last && among.includes(last) && breaks(last, point)) return last;
-      last = among.find((constraint) => breaks(constraint, point)) ?? last;
-      return last && among.includes(last) && breaks(last, point) ? last : null;
+      const found = among.find((constraint) => breaks(constraint, point)) ?? null;
+      last = found ?? last;
+      return found;
     },
   };
 }

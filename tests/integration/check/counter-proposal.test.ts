@@ -58,6 +58,10 @@ test("stores nothing", async () => {
 });
 
 test("is refused to a token without the scope", async () => {
-  const reader = { ...viewer, actor: { ...viewer.actor, scopes: ["read"] } } as Context;
+  const [id, ownerId] = [crypto.randomUUID(), crypto.randomUUID()];
+  const reader: Context = {
+    ...viewer,
+    actor: { kind: "token", id, name: "a reader", role: "viewer", scopes: ["read"], ownerId },
+  };
   await expect(counterPropose(reader, request(TEXT))).rejects.toMatchObject({ code: "forbidden" });
 });

@@ -8,7 +8,7 @@ import { placeOf } from "@/lib/solve/with-values";
 import { exampleAssembly, parametersOf, texts, type Texts } from "../rules/world";
 import { anyAxis, caseOf, LONG, overLimitOf, typedBy } from "./cases";
 
-const RUNS = LONG ? 1000 : 25;
+const RUNS = LONG ? 1000 : 16;
 const TIMEOUT = LONG ? 3_600_000 : 120_000;
 
 /** Mostly one axis by itself, some machines of two and three, whose checks of the whole machine join them. */
