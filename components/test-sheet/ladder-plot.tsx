@@ -2,6 +2,7 @@ import { parameterLabel } from "@/lib/domain/parameters";
 import type { LadderPlan } from "@/lib/domain/test-sheets";
 import { showQuantity } from "@/lib/domain/units";
 import { levelOf } from "@/lib/physics/evidence/ladder";
+import { ScrollRegion } from "@/components/ui/scroll-region";
 import type { LadderEstimate } from "@/lib/physics/evidence/ladder-estimate";
 
 const WIDTH = 640;
@@ -30,50 +31,52 @@ export function LadderPlot({ plan, trials, estimate }: LadderPlotProps) {
   const { unit } = showQuantity(levelOf(plan, 0), plan.unit, 4);
   const label = `${parameterLabel(plan.parameter)}, ${unit}`;
   return (
-    <svg
-      viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
-      className="ladder-plot"
-      role="img"
-      aria-label={`${label} of each trial; the table of entries gives the numbers.`}
-    >
-      {marked.map((rung) => (
-        <g key={rung}>
-          <line x1={LEFT} x2={WIDTH} y1={y(rung)} y2={y(rung)} className="ladder-line" />
-          <text x={LEFT - 6} y={y(rung) + 4} textAnchor="end">
-            {showQuantity(levelOf(plan, rung), plan.unit, 4).number}
-          </text>
-        </g>
-      ))}
-      <polyline
-        className="ladder-way"
-        points={trials.map(({ rung }, index) => `${x(index)},${y(rung)}`).join(" ")}
-      />
-      {estimate && (
-        <line
-          x1={LEFT}
-          x2={WIDTH}
-          y1={y((estimate.mean - plan.start) / plan.step)}
-          y2={y((estimate.mean - plan.start) / plan.step)}
-          className="ladder-estimate"
+    <ScrollRegion label="Levels by trial">
+      <svg
+        viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
+        className="ladder-plot"
+        role="img"
+        aria-label={`${label} of each trial; the table of entries gives the numbers.`}
+      >
+        {marked.map((rung) => (
+          <g key={rung}>
+            <line x1={LEFT} x2={WIDTH} y1={y(rung)} y2={y(rung)} className="ladder-line" />
+            <text x={LEFT - 6} y={y(rung) + 4} textAnchor="end">
+              {showQuantity(levelOf(plan, rung), plan.unit, 4).number}
+            </text>
+          </g>
+        ))}
+        <polyline
+          className="ladder-way"
+          points={trials.map(({ rung }, index) => `${x(index)},${y(rung)}`).join(" ")}
         />
-      )}
-      {trials.map(({ rung, failed }, index) =>
-        failed ? (
-          <rect
-            key={index}
-            x={x(index) - 5}
-            y={y(rung) - 5}
-            width={10}
-            height={10}
-            className="ladder-failed"
+        {estimate && (
+          <line
+            x1={LEFT}
+            x2={WIDTH}
+            y1={y((estimate.mean - plan.start) / plan.step)}
+            y2={y((estimate.mean - plan.start) / plan.step)}
+            className="ladder-estimate"
           />
-        ) : (
-          <circle key={index} cx={x(index)} cy={y(rung)} r={5} className="ladder-passed" />
-        ),
-      )}
-      <text x={LEFT} y={HEIGHT - 8}>
-        {`${label}, by trial; open dot passed, filled square failed${estimate ? ", line at the estimate" : ""}`}
-      </text>
-    </svg>
+        )}
+        {trials.map(({ rung, failed }, index) =>
+          failed ? (
+            <rect
+              key={index}
+              x={x(index) - 5}
+              y={y(rung) - 5}
+              width={10}
+              height={10}
+              className="ladder-failed"
+            />
+          ) : (
+            <circle key={index} cx={x(index)} cy={y(rung)} r={5} className="ladder-passed" />
+          ),
+        )}
+        <text x={LEFT} y={HEIGHT - 8}>
+          {`${label}, by trial; open dot passed, filled square failed${estimate ? ", line at the estimate" : ""}`}
+        </text>
+      </svg>
+    </ScrollRegion>
   );
 }

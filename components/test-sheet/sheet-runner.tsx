@@ -146,7 +146,7 @@ function CloseActs({ page: { sheet, waiting, replace } }: { readonly page: Sheet
   if (waiting > 0)
     return <p className="quiet">The sheet can be closed once the entries that wait here are sent.</p>;
   return (
-    <div className="acts print-hidden">
+    <div className="acts entries-acts print-hidden">
       <ActButton label="Close as finished" title="Close this test sheet" reasoned send={send("finished")}>
         <p>Its result stands as it is now. Put the settings back to what the machine is required to run.</p>
       </ActButton>

@@ -95,7 +95,12 @@ function Row({ number, trial, plan, onStrike }: RowProps) {
       {onStrike && (
         <td>
           {!struck && (
-            <Button variant="quiet" onClick={onStrike} aria-label={`Strike out entry ${number}`}>
+            <Button
+              variant="quiet"
+              className="strike-out"
+              onClick={onStrike}
+              aria-label={`Strike out entry ${number}`}
+            >
               strike out
             </Button>
           )}

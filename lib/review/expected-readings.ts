@@ -14,13 +14,14 @@ export function expectedReadings(plan: Omit<TestPlan, "expected">, view: AxisVie
 
 function ladderReading({ parameter, unit, basis, predicted, fails, set }: LadderPlan): string {
   const shown = (value: number) => `${showText(value, unit)}${basis === null ? "" : ` ${basis}`}`;
+  const about = (value: number) => shown(Number(value.toPrecision(3)));
   const label = parameterLabel(parameter).toLowerCase();
   const now = set === null ? "" : ` The text sets ${shown(set)}.`;
   if (!predicted)
     return `No boundary is predicted for the ${label}; the ladder finds it from the start given by hand.${now}`;
   const { careful, farthest } = predicted;
-  const until = farthest === null ? "" : `; the true boundary may lie as far as ${shown(farthest)}`;
-  const where = fails === "above" ? `from about ${shown(careful)} on` : `below about ${shown(careful)}`;
+  const until = farthest === null ? "" : `; the true boundary may lie as far as ${about(farthest)}`;
+  const where = fails === "above" ? `from about ${about(careful)} on` : `below about ${about(careful)}`;
   return `Steps are lost ${where}, reckoned with care${until}.${now}`;
 }
 

@@ -52,6 +52,12 @@ const shownIn =
   (value: number) =>
     `${showText(value, unit)}${basis === null ? "" : ` ${basis}`}`;
 
+/** An estimate to three digits: more would only look exact. */
+const about =
+  (plan: LadderPlan) =>
+  (value: number): string =>
+    shownIn(plan)(Number(value.toPrecision(3)));
+
 function tooEarly(trials: readonly RungTrial[]): string {
   if (trials.length === 0) return "No trial is entered yet.";
   const turned = countedTrials(trials).length > 0;
@@ -61,7 +67,7 @@ function tooEarly(trials: readonly RungTrial[]): string {
 }
 
 function estimateSentences(plan: LadderPlan, estimate: LadderEstimate, trials: number): string[] {
-  const shown = shownIn(plan);
+  const shown = about(plan);
   const { mean, interval, counted, deviation, deviationReliable, isotonic, longEnough } = estimate;
   const percent = formatNumber(INTERVAL_CONFIDENCE * 100);
   return [
@@ -77,7 +83,7 @@ function estimateSentences(plan: LadderPlan, estimate: LadderEstimate, trials: n
     ...(longEnough
       ? []
       : [
-          `${plural(LEAST_TRIALS - counted, "more trial")} on single steps are wanted for an estimate to stand on.`,
+          `${plural(LEAST_TRIALS - counted, "more trial on single steps is", "more trials on single steps are")} wanted for an estimate to stand on.`,
         ]),
   ];
 }

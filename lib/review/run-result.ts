@@ -71,7 +71,7 @@ function demand({ plan, trials, failures, needed, met }: Demanded): string[] {
   if (needed === null) return [`The demanded ${demanded} cannot be shown any more on a bench.`, independent];
   const lost = failures === 0 ? "" : ` after ${plural(failures, "loss", "losses")}`;
   return [
-    `${plural(needed - trials, "more trial")} without a loss are wanted for the demanded ${demanded}${lost}.`,
+    `${plural(needed - trials, "more trial without a loss is", "more trials without a loss are")} wanted for the demanded ${demanded}${lost}.`,
     independent,
   ];
 }
