@@ -12,10 +12,23 @@ export interface LiveOperatingMapProps extends Texts {
   readonly base: readonly ConfigurationFile[];
 }
 
+/** A file stays in the format that it had: recognising it anew at each key would take longer than the map itself. */
+function asBase(
+  files: readonly ConfigurationFile[],
+  base: readonly ConfigurationFile[],
+): readonly ConfigurationFile[] {
+  const formats = new Map(base.map(({ path, format }) => [path, format]));
+  return files.map((file) => ({ ...file, format: file.format ?? formats.get(file.path) }));
+}
+
 /** The operating maps that the text moves, redrawn while it is typed. */
 export function LiveOperatingMap({ base, files, keyTable, assembly, policy }: LiveOperatingMapProps) {
   const question = useMemo(
-    () => ({ kind: "change" as const, base, texts: { files, keyTable, assembly, policy } }),
+    () => ({
+      kind: "change" as const,
+      base,
+      texts: { files: asBase(files, base), keyTable, assembly, policy },
+    }),
     [base, files, keyTable, assembly, policy],
   );
   const answer = usePictures(question);

@@ -73,9 +73,20 @@ export interface ChangeMaps {
 export type PicturesRequest = AxisPicturesRequest | ChangeMapsRequest;
 export type PicturesAnswer = AxisPictures | ChangeMaps;
 
-/** The worker's whole work. */
-export function answerPictures(request: PicturesRequest): PicturesAnswer {
-  return request.kind === "axis" ? axisPictures(request) : changeMapsOfTexts(request);
+/** The worker's whole work. `before` is what `readBefore` makes of the same request, where the caller has it already. */
+export function answerPictures(
+  request: PicturesRequest,
+  before: RuleInput | null = readBefore(request),
+): PicturesAnswer {
+  if (request.kind === "axis") return axisPictures(request);
+  const { id, texts } = request;
+  return { kind: "change", id, maps: changeMaps(before, inputOf(texts, texts.files)) };
+}
+
+/** The texts that a change starts from, as read: the same while it is typed, so that they need reading only once. */
+export function readBefore(request: PicturesRequest): RuleInput | null {
+  if (request.kind === "axis" || request.base.length === 0) return null;
+  return inputOf(request.texts, request.base);
 }
 
 /** The three pictures of one axis: as its text stands or, where numbers are tried, the text before and the trial after. */
@@ -116,12 +127,6 @@ function withTried(input: {
 function nowOf(context: RuleContext, axis: string, parameter: Tried): TriedNow[] {
   const found = axisOf(context, axis)?.parameter(parameter);
   return found ? [{ parameter, value: found.value, unit: found.unit, basis: found.basis }] : [];
-}
-
-function changeMapsOfTexts({ id, base, texts }: ChangeMapsRequest): ChangeMaps {
-  const after = inputOf(texts, texts.files);
-  const before = base.length === 0 ? null : inputOf(texts, base);
-  return { kind: "change", id, maps: changeMaps(before, after) };
 }
 
 /** The maps that a change moves, in the order of the assembly; without anything before, every axis's. */

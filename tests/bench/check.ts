@@ -129,14 +129,19 @@ function words({ median, p95, fastest }: Timing): string {
   return `median ${median.toFixed(2)} ms, p95 ${p95.toFixed(2)} ms, fastest ${fastest.toFixed(2)} ms`;
 }
 
-/** Text → findings for a 5-axis, 400-key text beside the time that the package `yaml` takes just to parse the same content. */
-export function runCheckBench(): string[] {
-  const input: CheckInput = {
+/** A text of 400 keys for a machine of five axes. */
+export function benchInput(): CheckInput {
+  return {
     files: [{ path: "bench.conf", text: linesText() }],
     keyTable: keyTable(),
     assembly: ASSEMBLY,
     policy: DEFAULT_POLICY,
   };
+}
+
+/** Text → findings for a 5-axis, 400-key text beside the time that the package `yaml` takes just to parse the same content. */
+export function runCheckBench(): string[] {
+  const input = benchInput();
   const report = checkConfiguration(input);
   const yaml = yamlText();
   const [check, parsed] = timings(

@@ -1,6 +1,8 @@
 import { runCheckBench } from "./check";
+import { runMapBench } from "./map";
 import { runParseBench } from "./parse";
 import { runRulesBench } from "./rules";
 
 /** Prints what was measured on this machine. */
-for (const line of [...runParseBench(), ...runRulesBench(), ...runCheckBench()]) console.log(line);
+for (const line of [...runParseBench(), ...runRulesBench(), ...runCheckBench(), ...runMapBench()])
+  console.log(line);
