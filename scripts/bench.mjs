@@ -16,5 +16,8 @@ await build({
   build: { ssr: "tests/bench/main.ts", outDir: FOLDER, emptyOutDir: true, minify: false, target: "node20" },
 });
 
-const { status } = spawnSync(process.execPath, [path.join(FOLDER, "main.js")], { stdio: "inherit" });
+const { status } = spawnSync(process.execPath, [path.join(FOLDER, "main.js")], {
+  stdio: "inherit",
+  cwd: ROOT,
+});
 process.exitCode = status ?? 1;

@@ -1,8 +1,17 @@
 import { runCheckBench } from "./check";
 import { runMapBench } from "./map";
+import { runMoveBench } from "./move";
+import { runFormatsBench } from "./formats";
 import { runParseBench } from "./parse";
 import { runRulesBench } from "./rules";
 
 /** Prints what was measured on this machine. */
-for (const line of [...runParseBench(), ...runRulesBench(), ...runCheckBench(), ...runMapBench()])
+for (const line of [
+  ...runParseBench(),
+  ...runFormatsBench(),
+  ...runRulesBench(),
+  ...runCheckBench(),
+  ...runMapBench(),
+  ...runMoveBench(),
+])
   console.log(line);

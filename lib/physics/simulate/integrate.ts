@@ -93,12 +93,13 @@ function commandedSpeed(memory: Float64Array, tau: number): number {
  *
  * Phases: L·di/dt = v − R·i − e with e_a = −Ke·ω·sin Nr·θ, e_b = Ke·ω·cos Nr·θ. Wanted currents are I_pk·cos φ and
  * I_pk·sin φ, φ the commanded electrical angle. The chopper is taken as its mean over a period: it sets
- * v = R·i + e + L·(di*\/dt + k·(i* − i)) clipped to ±V, k = 20 000/s. Rotor: J·dω/dt = Ke·(i_b·cos Nr·θ − i_a·sin Nr·θ)
- * − T_d·sin 4·Nr·θ − c·(ω − ω*) − load, with the friction T_f·ω/√(ω² + ω_s²) in place of a jump at standstill. A load
+ * v = R·i + e + L·(di_w/dt + k·(i_w − i)) clipped to ±V, i_w the wanted current, k = 20 000/s. Rotor:
+ * J·dω/dt = Ke·(i_b·cos Nr·θ − i_a·sin Nr·θ) − T_d·sin 4·Nr·θ − c·(ω − ω_w) − load, ω_w the commanded speed, with the
+ * friction T_f·ω/√(ω² + ω_s²) in place of a jump at standstill. A load
  * behind a compliance follows K·(θ − θ_l) + C·(ω − ω_l). SI units; inductance constant, no iron loss.
  * Source: Acarnley, Stepping Motors; Kenjo & Sugawara (phase equations).
  */
-// eslint-disable-next-line max-lines-per-function -- all in local variables: kept in arrays, the loop takes three times as long
+// eslint-disable-next-line max-lines-per-function -- all in local variables: kept in arrays, the loop takes twice as long
 export function integrate(m: Float64Array, steps: number, samples: Float32Array): void {
   const teeth = at(m, TEETH);
   const peak = at(m, PEAK_CURRENT);
@@ -255,8 +256,8 @@ function clipped(value: number, most: number): number {
   return value > most ? most : value < -most ? -most : value;
 }
 
-// Sine and cosine within 10⁻¹⁵ + 10⁻¹⁶·|x| for |x| < 10⁶ rad, by the Taylor series on ±π/4. Calls of the built-in ones
-// are not inlined and take half of the whole time.
+// Sine and cosine within 10⁻¹⁵ + 10⁻¹⁶·|x| for |x| < 10⁶ rad, by the Taylor series on ±π/4. With the built-in ones, which
+// are calls and reduce their angle twice, the loop takes about half as long again.
 const TWO_OVER_PI = 2 / Math.PI;
 /** π/2 in two parts; the first has 33 bits, so that its multiples up to 2^20 are exact. */
 const HALF_PI_HIGH = 1.57079632673412561417;
