@@ -58,6 +58,9 @@ const ALONE: Record<
   defines: { value: (raw) => `#define k ${raw}`, element: (raw) => `#define k {${raw},0}` },
   json: { value: (raw) => `{"k": ${raw}}`, element: (raw) => `{"k": [${raw},0]}` },
   toml: { value: (raw) => `k = ${raw}`, element: (raw) => `k = [${raw},0]` },
+  properties: { value: (raw) => `k=${raw}`, element: (raw) => `k=[${raw},0]` },
+  env: { value: (raw) => `k=${raw}`, element: (raw) => `k=${raw}` },
+  csv: { value: (raw) => `key,value\nk,${raw}`, element: (raw) => `k,${raw}` },
   yaml: { value: (raw) => `k: ${raw}`, element: (raw) => `k:\n- ${raw}\n- 0` },
 };
 

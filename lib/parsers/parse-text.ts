@@ -5,6 +5,9 @@ import { parseLines } from "./lines";
 import { recogniseFormat } from "./recognise";
 import { parseToml } from "./toml";
 import { parseYaml } from "./yaml";
+import { parseProperties } from "./properties";
+import { parseEnv } from "./env";
+import { parseCsv } from "./csv";
 import type { Document, Format } from "./types";
 
 const PARSERS: Record<Format, (path: string, text: string) => Document> = {
@@ -13,6 +16,9 @@ const PARSERS: Record<Format, (path: string, text: string) => Document> = {
   json: parseJson,
   toml: parseToml,
   yaml: parseYaml,
+  properties: parseProperties,
+  env: parseEnv,
+  csv: parseCsv,
 };
 
 /** Reads a text of any format; without `format` the text itself decides. Never throws on a text. */

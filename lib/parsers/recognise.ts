@@ -4,6 +4,9 @@ import { Pieces } from "./pieces";
 import { rankJson } from "./json/rank";
 import { rankToml } from "./toml/rank";
 import { rankYaml } from "./yaml/rank";
+import { rankCsv } from "./csv/rank";
+import { rankEnv } from "./env/rank";
+import { rankProperties } from "./properties/rank";
 import { score, type FormatRank } from "./rank";
 import { PIECE, type Format } from "./types";
 
@@ -26,6 +29,9 @@ export function recogniseFormat({ path, text }: { path: string; text: string }):
     rankJson(sample),
     rankToml(sample),
     rankYaml(sample),
+    rankProperties(sample),
+    rankEnv(sample),
+    rankCsv(sample),
     rankLines(path, counts),
     rankDefines(path, counts),
   ];

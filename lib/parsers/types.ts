@@ -2,7 +2,7 @@ import type { Diagnostic } from "@/lib/domain/diagnostic";
 import type { Span } from "@/lib/domain/span";
 
 /** Formats that have a parser. */
-export const FORMATS = ["lines", "defines", "json", "toml", "yaml"] as const;
+export const FORMATS = ["lines", "defines", "json", "toml", "yaml", "properties", "env", "csv"] as const;
 export type Format = (typeof FORMATS)[number];
 
 /** A value read as far as its own spelling allows; what it means is the key table's business. */

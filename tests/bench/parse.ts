@@ -1,10 +1,9 @@
 import ini from "ini";
 import { parseText } from "@/lib/parsers/parse-text";
 import { stringify } from "@/lib/parsers/stringify";
+import { medianTimes, RUNS } from "./times";
 
 const MEGABYTE = 1_000_000;
-const RUNS = 7;
-const WARM_UP = 3;
 
 /** A line-family text of one megabyte: sections, numbers with and without units, quoted names, comments, disabled keys. */
 export function megabyteOfLines(): string {
@@ -33,24 +32,6 @@ function blockOfLines(i: number): string {
     ``,
     ``,
   ].join("\n");
-}
-
-function timeOf(work: () => unknown): number {
-  const start = performance.now();
-  work();
-  return performance.now() - start;
-}
-
-function median(times: readonly number[]): number {
-  return [...times].sort((a, b) => a - b)[times.length >> 1] ?? NaN;
-}
-
-/** Medians in milliseconds of two works that take turns, so that a busy machine slows both alike. The first turns do not count. */
-function medianTimes(one: () => unknown, other: () => unknown): [number, number] {
-  const turns = Array.from({ length: WARM_UP + RUNS }, () => [timeOf(one), timeOf(other)] as const).slice(
-    WARM_UP,
-  );
-  return [median(turns.map(([time]) => time)), median(turns.map(([, time]) => time))];
 }
 
 /** Our parser beside the package `ini` on the same text. Ours keeps every byte and position. */

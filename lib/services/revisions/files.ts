@@ -49,7 +49,7 @@ export function acceptFile({ file, index, format, field = "files" }: Incoming): 
     throw refusal({
       path: file.path,
       sentence:
-        "Its format is not recognised: neither lines of keys and values nor #define lines were found. Nothing was stored; check that it is the right file, or choose the format yourself.",
+        "Its format is not recognised: it reads neither as lines of keys and values nor as any other format that is known here. Nothing was stored; check that it is the right file, or choose the format yourself.",
       code: "unknown-format",
       pointer,
     });

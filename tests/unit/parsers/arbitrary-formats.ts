@@ -2,6 +2,7 @@ import type fc from "fast-check";
 import type { Format } from "@/lib/parsers/types";
 import { tomlText, tomlValue } from "./arbitrary-toml";
 import { yamlText, yamlValue } from "./arbitrary-yaml";
+import { csvText, csvValue, envText, envValue, propertiesText, propertiesValue } from "./arbitrary-plain";
 import { jsonText, jsonValue } from "./arbitrary-json";
 import { defineText, defineValue, lineText, lineValue, type ModelText } from "./arbitrary-texts";
 
@@ -12,6 +13,9 @@ export const TEXTS: Record<Format, fc.Arbitrary<ModelText>> = {
   json: jsonText,
   toml: tomlText,
   yaml: yamlText,
+  properties: propertiesText,
+  env: envText,
+  csv: csvText,
 };
 
 /** Values of each format, as typed. */
@@ -21,4 +25,7 @@ export const VALUES: Record<Format, fc.Arbitrary<string>> = {
   json: jsonValue,
   toml: tomlValue,
   yaml: yamlValue,
+  properties: propertiesValue,
+  env: envValue,
+  csv: csvValue,
 };

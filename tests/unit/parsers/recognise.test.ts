@@ -27,6 +27,12 @@ describe("the format", () => {
     ["a.conf", "axes:\n  x:\n    run: 800\n", "yaml"],
     ["noname", "axes:\n- run: 800\n- run: 700\n", "yaml"],
     ["noname", "run_ma: 800\naccel: 3000", "lines"],
+    ["a.properties", "x.run=800\ny.run=700", "properties"],
+    ["noname", "! drive\nx\\:run=800\nlabel=\\u00b5", "properties"],
+    [".env", "RUN_MA=800\nHOLD_MA=400", "env"],
+    ["noname", "export RUN_MA=800\nexport HOLD_MA=400", "env"],
+    ["a.csv", "axis,run_ma\nx,800", "csv"],
+    ["noname", "axis;run_ma;hold_ma\nx;800;400\ny;700;350", "csv"],
     ["noname", "/*\n * Head\n */\n#ifndef A_H\n#define A_H\n#endif", "defines"],
   ])("of %s with %j is %s", (path, text, format) => {
     const { format: found, ranking } = recogniseFormat({ path, text });

@@ -1,0 +1,1 @@
+export { parseCsv } from "./parse";

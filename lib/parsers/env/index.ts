@@ -1,0 +1,1 @@
+export { parseEnv } from "./parse";

@@ -1,0 +1,1 @@
+export { parseProperties } from "./parse";
