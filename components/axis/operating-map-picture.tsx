@@ -9,6 +9,7 @@ import {
   PlotPoint,
   PlotUpright,
 } from "@/components/charts/plot-marks";
+import { PlotNumbers } from "@/components/charts/plot-numbers";
 import { axisTitle } from "@/components/findings/axis-title";
 import { LevelMark } from "@/components/ui/level-mark";
 import { Quantity } from "@/components/ui/quantity";
@@ -140,30 +141,31 @@ function Numbers({ map, was, toBe, units }: Sides & { readonly units: Units }) {
     </NumberCell>
   );
   return (
-    <details>
-      <summary>The numbers of this map</summary>
-      <Table caption={`Operating map of the ${axisTitle(map.axis)}`}>
-        <thead>
-          <tr>
-            <Head number>Speed</Head>
-            {was && <Head number>Highest acceleration before</Head>}
-            <Head number>Highest acceleration with margin</Head>
-            <Head number>Pull-out, no margin</Head>
-          </tr>
-        </thead>
-        <tbody>
-          {someOf(map.speeds.length, 16).map((index) => (
-            <tr key={index}>
-              <NumberCell>
-                <Quantity value={map.speeds[index] ?? null} unit={units.speed} />
-              </NumberCell>
-              {was && cell(was.boundary[index])}
-              {cell(toBe.boundary[index])}
-              {cell(toBe.pullOut[index])}
+    <PlotNumbers summary="The numbers of this map">
+      {() => (
+        <Table caption={`Operating map of the ${axisTitle(map.axis)}`}>
+          <thead>
+            <tr>
+              <Head number>Speed</Head>
+              {was && <Head number>Highest acceleration before</Head>}
+              <Head number>Highest acceleration with margin</Head>
+              <Head number>Pull-out, no margin</Head>
             </tr>
-          ))}
-        </tbody>
-      </Table>
-    </details>
+          </thead>
+          <tbody>
+            {someOf(map.speeds.length, 16).map((index) => (
+              <tr key={index}>
+                <NumberCell>
+                  <Quantity value={map.speeds[index] ?? null} unit={units.speed} />
+                </NumberCell>
+                {was && cell(was.boundary[index])}
+                {cell(toBe.boundary[index])}
+                {cell(toBe.pullOut[index])}
+              </tr>
+            ))}
+          </tbody>
+        </Table>
+      )}
+    </PlotNumbers>
   );
 }

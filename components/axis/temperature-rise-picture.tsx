@@ -9,6 +9,7 @@ import {
   PlotLine,
   PlotName,
 } from "@/components/charts/plot-marks";
+import { PlotNumbers } from "@/components/charts/plot-numbers";
 import { axisTitle } from "@/components/findings/axis-title";
 import { LevelMark } from "@/components/ui/level-mark";
 import { Quantity } from "@/components/ui/quantity";
@@ -178,33 +179,34 @@ function Numbers({ course, was, toBe }: Sides) {
     side.parts.filter(({ settled }) => settled !== null).map((part) => ({ part, behind })),
   );
   return (
-    <details>
-      <summary>The numbers of these temperatures</summary>
-      <Table caption={`Temperatures of the ${axisTitle(course.axis)}`}>
-        <thead>
-          <tr>
-            <Head number>Time</Head>
-            {columns.map(({ part, behind }) => (
-              <Head number key={`${part.part}${behind}`}>
-                {capital(WORDS[part.part])}
-                {behind}
-              </Head>
-            ))}
-          </tr>
-        </thead>
-        <tbody>
-          {someOf(course.times.length, 12).map((index) => (
-            <tr key={index}>
-              <NumberCell>{minutes(course.times[index] ?? 0)}</NumberCell>
+    <PlotNumbers summary="The numbers of these temperatures">
+      {() => (
+        <Table caption={`Temperatures of the ${axisTitle(course.axis)}`}>
+          <thead>
+            <tr>
+              <Head number>Time</Head>
               {columns.map(({ part, behind }) => (
-                <NumberCell key={`${part.part}${behind}`}>
-                  <Quantity value={valueAt(part, index)} unit="°C" />
-                </NumberCell>
+                <Head number key={`${part.part}${behind}`}>
+                  {capital(WORDS[part.part])}
+                  {behind}
+                </Head>
               ))}
             </tr>
-          ))}
-        </tbody>
-      </Table>
-    </details>
+          </thead>
+          <tbody>
+            {someOf(course.times.length, 12).map((index) => (
+              <tr key={index}>
+                <NumberCell>{minutes(course.times[index] ?? 0)}</NumberCell>
+                {columns.map(({ part, behind }) => (
+                  <NumberCell key={`${part.part}${behind}`}>
+                    <Quantity value={valueAt(part, index)} unit="°C" />
+                  </NumberCell>
+                ))}
+              </tr>
+            ))}
+          </tbody>
+        </Table>
+      )}
+    </PlotNumbers>
   );
 }

@@ -9,6 +9,7 @@ import {
   PlotPoint,
   PlotUpright,
 } from "@/components/charts/plot-marks";
+import { PlotNumbers } from "@/components/charts/plot-numbers";
 import { axisTitle } from "@/components/findings/axis-title";
 import { LevelMark } from "@/components/ui/level-mark";
 import { Quantity } from "@/components/ui/quantity";
@@ -140,34 +141,35 @@ function Numbers({ curve, was, toBe, units }: Sides & { readonly units: Units })
     </NumberCell>
   );
   return (
-    <details>
-      <summary>The numbers of this curve</summary>
-      <Table caption={`Torque of each motor of the ${axisTitle(curve.axis)}`}>
-        <thead>
-          <tr>
-            <Head number>Speed</Head>
-            {was && <Head number>Conservative before</Head>}
-            <Head number>Conservative</Head>
-            <Head number>Expected</Head>
-            <Head number>Allowed</Head>
-            <Head number>The ramp asks</Head>
-          </tr>
-        </thead>
-        <tbody>
-          {someOf(curve.speeds.length, 16).map((index) => (
-            <tr key={index}>
-              <NumberCell>
-                <Quantity value={curve.speeds[index] ?? null} unit={units.speed} />
-              </NumberCell>
-              {was && cell(was.available[index])}
-              {cell(toBe.available[index])}
-              {cell(toBe.expected[index])}
-              {cell(toBe.allowed[index])}
-              {cell(toBe.required[index])}
+    <PlotNumbers summary="The numbers of this curve">
+      {() => (
+        <Table caption={`Torque of each motor of the ${axisTitle(curve.axis)}`}>
+          <thead>
+            <tr>
+              <Head number>Speed</Head>
+              {was && <Head number>Conservative before</Head>}
+              <Head number>Conservative</Head>
+              <Head number>Expected</Head>
+              <Head number>Allowed</Head>
+              <Head number>The ramp asks</Head>
             </tr>
-          ))}
-        </tbody>
-      </Table>
-    </details>
+          </thead>
+          <tbody>
+            {someOf(curve.speeds.length, 16).map((index) => (
+              <tr key={index}>
+                <NumberCell>
+                  <Quantity value={curve.speeds[index] ?? null} unit={units.speed} />
+                </NumberCell>
+                {was && cell(was.available[index])}
+                {cell(toBe.available[index])}
+                {cell(toBe.expected[index])}
+                {cell(toBe.allowed[index])}
+                {cell(toBe.required[index])}
+              </tr>
+            ))}
+          </tbody>
+        </Table>
+      )}
+    </PlotNumbers>
   );
 }
