@@ -5,6 +5,7 @@ import { z } from "zod";
 import { AxisPictures } from "@/components/axis/axis-pictures";
 import { AxisQuantities } from "@/components/axis/axis-quantities";
 import { FaultFingerprint } from "@/components/axis/fault-fingerprint";
+import { HeatingForecast } from "@/components/axis/heating-forecast";
 import { MeasuredPredicted } from "@/components/axis/measured-predicted";
 import { TestSheetSection } from "@/components/axis/test-sheets";
 import { ToleranceOdds } from "@/components/axis/tolerance-odds";
@@ -50,6 +51,7 @@ export default async function AxisPage({ params }: PageProps) {
       <AxisPictures basis={basis} />
       <VirtualMove basis={basis} />
       <ToleranceOdds basis={basis} />
+      <HeatingForecast basis={basis} />
       <MeasuredPredicted basis={basis} />
       <FaultFingerprint basis={basis} />
       <TestSheetSection basis={basis} />
