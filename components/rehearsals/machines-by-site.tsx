@@ -7,7 +7,7 @@ import { LevelMark } from "@/components/ui/level-mark";
 import { NoValue, Quantity } from "@/components/ui/quantity";
 import { SheetSection } from "@/components/ui/sheet";
 import { Head, NumberCell, Table } from "@/components/ui/table";
-import { roomNotes } from "./room-words";
+import { roomLack, roomNotes } from "./room-words";
 
 export interface MachinesBySiteProps {
   /** Site by site, as the list comes. */
@@ -111,6 +111,7 @@ function Gravest({ machine: { graver } }: { readonly machine: RehearsalMachineVi
 function Room({ machine: { hottestRoom } }: { readonly machine: RehearsalMachineView }) {
   if (!hottestRoom) return <NoValue />;
   const { kind, ambientC } = hottestRoom;
+  const lack = roomLack(hottestRoom);
   return (
     <>
       {kind === "cannot" ? (
@@ -123,6 +124,12 @@ function Room({ machine: { hottestRoom } }: { readonly machine: RehearsalMachine
           {note}
         </p>
       ))}
+      {lack !== null && (
+        <details className="row-note">
+          <summary>Not everything could be checked</summary>
+          <p>{lack}</p>
+        </details>
+      )}
     </>
   );
 }

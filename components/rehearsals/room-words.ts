@@ -13,16 +13,16 @@ export function checkWords({ ruleId, axis }: Check): string {
   return axis === null ? lower : `${axisWord(axis)} ${lower}`;
 }
 
-/** What limits the room, and what the number leaves out; sentences. */
-export function roomNotes(room: HottestRoom): string[] {
-  const { kind, limitedBy, alwaysOver, needs } = room;
+/** What limits the room, and what does not for it is over limit anyway; sentences. */
+export function roomNotes({ kind, limitedBy, alwaysOver }: HottestRoom): string[] {
   const notes: string[] = [];
   if (limitedBy) notes.push(`Limited by ${checkWords(limitedBy)}.`);
   if (kind === "any") notes.push("No check limits it up to there.");
   if (alwaysOver.length > 0) notes.push(`Over limit in any room: ${joinWords(alwaysOver.map(checkWords))}.`);
-  if (needs.length > 0)
-    notes.push(
-      `Not everything could be checked; missing: ${joinWords(needs.map((path) => needWords(path).words))}.`,
-    );
   return notes;
+}
+
+/** The data that checks of heat lacked; null where they lacked none. */
+export function roomLack({ needs }: HottestRoom): string | null {
+  return needs.length === 0 ? null : `Missing: ${joinWords(needs.map((path) => needWords(path).words))}.`;
 }

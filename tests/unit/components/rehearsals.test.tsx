@@ -187,7 +187,7 @@ test("machines stand under their site with level, sentence and the hottest room 
     "Limited by X",
   ])
     expect(words).toContain(part);
-  expect(words).toContain("missing: winding resistance at 20 °C of the Z motor");
+  expect(words).toContain("Missing: winding resistance at 20 °C of the Z motor");
   expect(screen.getByText(/ambient temperature not stated/)).toBeTruthy();
 });
 
