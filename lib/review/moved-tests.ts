@@ -17,8 +17,8 @@ const SAME = 1e-9;
 
 interface Asks {
   readonly quantities: readonly QuantityName[];
-  /** The test, by the effect of the first of these quantities that moved. */
-  readonly test: (effect: Effect) => Test;
+  /** The test, by the effects on those of these quantities that moved. */
+  readonly test: (moved: readonly Effect[]) => Test;
 }
 
 /** Near or over its limit, or not to be checked: then only a ladder says how far away the boundary is. */
@@ -26,12 +26,12 @@ const isDoubtful = ({ levelToBe }: Effect): boolean => levelToBe !== null && lev
 
 const ASKED: readonly Asks[] = [
   {
-    quantities: ["torque_margin"],
-    test: (effect) => (isDoubtful(effect) ? "acceleration_ladder" : "move_run"),
+    quantities: ["torque_margin", "ramp_torque_margin", "coupled_torque_margin"],
+    test: (moved) => (moved.some(isDoubtful) ? "acceleration_ladder" : "move_run"),
   },
   {
     quantities: ["start_stop_speed"],
-    test: (effect) => (isDoubtful(effect) ? "corner_ladder" : "corner_run"),
+    test: (moved) => (moved.some(isDoubtful) ? "corner_ladder" : "corner_run"),
   },
   { quantities: ["hold_torque_margin"], test: () => "hold_run" },
   { quantities: ["case_c", "winding_c", "driver_junction_c"], test: () => "heat_record" },
@@ -47,9 +47,8 @@ export function movedTests(effects: readonly Effect[], changes: readonly Paramet
     const own = effects.filter((effect) => effect.axis === axis);
     return ASKED.flatMap(({ quantities, test }) => {
       const moved = own.filter((effect) => quantities.includes(effect.quantity) && hasMoved(effect, changes));
-      const [first] = moved;
-      if (!first) return [];
-      return [{ axis, test: test(first), because: moved.map((effect) => because(effect, changes)) }];
+      if (moved.length === 0) return [];
+      return [{ axis, test: test(moved), because: moved.map((effect) => because(effect, changes)) }];
     });
   });
 }
