@@ -19,6 +19,7 @@ import {
 import { insideUnit } from "@/lib/domain/units";
 import { load, pageActor, type PageContext } from "@/lib/http/page-actor";
 import { readParams, type SearchParams } from "@/lib/http/search-params";
+import { may } from "@/lib/policies/decide";
 import { axisWord } from "@/lib/review/axis-word";
 import { listMachines } from "@/lib/services/machines/list";
 import { proposeSheet, type ProposedSheet } from "@/lib/services/test-sheets/propose";
@@ -35,9 +36,10 @@ const query = z.object({
 type Query = z.infer<typeof query>;
 
 export default async function NewTestSheetPage({ searchParams }: { readonly searchParams: SearchParams }) {
-  const context = await pageActor("test_sheets.write");
+  const context = await pageActor("test_sheets.read");
   const { query: asked } = await readParams(query, searchParams);
   if (!asked.machineId) return <MachineChoice context={context} q={asked.q ?? ""} />;
+  const mayStart = may(context.actor, "test_sheets.write");
   const { machineId, changeId = null, axis = null, test = null } = asked;
   const proposed = await load(proposeSheet(context, { machineId, changeId, axis, test }));
   return (
@@ -54,7 +56,7 @@ export default async function NewTestSheetPage({ searchParams }: { readonly sear
             )}
           </>
         }
-        title="Start a test sheet"
+        title={mayStart ? "Start a test sheet" : "Plan of a test"}
         subtitle={
           proposed.change
             ? "The plan rests on the text of this change."
@@ -62,7 +64,9 @@ export default async function NewTestSheetPage({ searchParams }: { readonly sear
         }
       />
       <TestChoice asked={asked} proposed={proposed} />
-      {axis !== null && test !== null && <Plan {...{ machineId, changeId, axis, test, proposed }} />}
+      {axis !== null && test !== null && (
+        <Plan {...{ machineId, changeId, axis, test, proposed, mayStart }} />
+      )}
     </Sheet>
   );
 }
@@ -134,9 +138,11 @@ interface PlanProps {
   readonly axis: string;
   readonly test: Test;
   readonly proposed: ProposedSheet;
+  /** Others read the plan alone. */
+  readonly mayStart: boolean;
 }
 
-function Plan({ machineId, changeId, axis, test, proposed: { planned, axes } }: PlanProps) {
+function Plan({ machineId, changeId, axis, test, proposed: { planned, axes }, mayStart }: PlanProps) {
   if (planned === null) return <Empty>This machine has no axis {axisWord(axis)}.</Empty>;
   const plan = planned.ok ? planned.plan : null;
   const { dimension } = parameterDefinition(
@@ -155,7 +161,7 @@ function Plan({ machineId, changeId, axis, test, proposed: { planned, axes } }: 
         {!planned.ok && <p>No boundary can be predicted: give start and step yourself. {planned.why}</p>}
       </SheetSection>
       <TestCautions falls={plan?.falls ?? true} />
-      <StartForm key={`${axis} ${test}`} {...{ machineId, axis, test, changeId, plan, unit }} />
+      {mayStart && <StartForm key={`${axis} ${test}`} {...{ machineId, axis, test, changeId, plan, unit }} />}
     </>
   );
 }
