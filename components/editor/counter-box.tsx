@@ -3,6 +3,7 @@
 import { useEffect, useState } from "react";
 import type { CheckReport } from "@/lib/review/types";
 import { CounterMoves } from "@/components/solve/counter-moves";
+import { kindsOf } from "@/components/solve/kinds";
 import { useSolver } from "@/components/solve/use-solver";
 import { Button } from "@/components/ui/button";
 import { SheetSection } from "@/components/ui/sheet";
@@ -39,7 +40,7 @@ export function CounterBox({
     <SheetSection title="Counter-proposal" note="the smallest change that clears what is over limit">
       <div aria-live="polite">
         {searching && <p className="quiet">Searching …</p>}
-        {edit && <CounterMoves edit={edit} />}
+        {edit && <CounterMoves edit={edit} kinds={kindsOf(assembly)} />}
       </div>
       <div className="acts">
         {edit && edit.moves.length > 0 && (

@@ -1,4 +1,3 @@
-import type { AxisKind } from "@/lib/domain/axis-kind";
 import { parameterLabel } from "@/lib/domain/parameters";
 import { joinWords } from "@/lib/domain/sentences";
 import { formatNumber } from "@/lib/domain/units";
@@ -8,21 +7,19 @@ import { checkWords, conflictSentence, counterSentence } from "@/lib/review/coun
 import { changeWords } from "@/components/findings/parameter-changes-table";
 import { NoValue, ParameterQuantity } from "@/components/ui/quantity";
 import { Head, NumberCell, Table } from "@/components/ui/table";
-
-/** Kind by axis name in lower case; left out: linear. */
-export type Kinds = Readonly<Record<string, AxisKind>>;
+import type { Kinds } from "./kinds";
 
 interface Place {
   readonly axis: string | null;
   readonly parameter: CounterRow["parameter"];
 }
 
-export function placeWords({ axis, parameter }: Place, kinds: Kinds | undefined): string {
-  const label = parameterLabel(parameter, kinds?.[axis?.toLowerCase() ?? ""]);
+export function placeWords({ axis, parameter }: Place, kinds: Kinds): string {
+  const label = parameterLabel(parameter, kinds[axis?.toLowerCase() ?? ""]);
   return axis === null ? label : `${axisWord(axis)} ${label.toLowerCase()}`;
 }
 
-function Row({ move, kinds }: { readonly move: CounterRow; readonly kinds: Kinds | undefined }) {
+function Row({ move, kinds }: { readonly move: CounterRow; readonly kinds: Kinds }) {
   const { parameter, was, toBe, change, because, also, path, line } = move;
   return (
     <tr>
@@ -47,13 +44,7 @@ function Row({ move, kinds }: { readonly move: CounterRow; readonly kinds: Kinds
 }
 
 /** What a counter-proposal changes, why, and what it cannot clear. */
-export function CounterMoves({
-  edit,
-  kinds,
-}: {
-  readonly edit: CounterEdit;
-  readonly kinds?: Kinds | undefined;
-}) {
+export function CounterMoves({ edit, kinds }: { readonly edit: CounterEdit; readonly kinds: Kinds }) {
   const { moves, cost, conflicts, leastShare } = edit;
   return (
     <>

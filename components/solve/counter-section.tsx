@@ -5,6 +5,7 @@ import type { CheckInput } from "@/lib/review/types";
 import { ButtonLink } from "@/components/ui/button";
 import { SheetSection } from "@/components/ui/sheet";
 import { CounterMoves } from "./counter-moves";
+import { kindsOf } from "./kinds";
 import { useSolver } from "./use-solver";
 
 export interface CounterSectionProps {
@@ -21,7 +22,7 @@ export function CounterSection({ basis, editHref }: CounterSectionProps) {
     <SheetSection title="Counter-proposal" note="the smallest change that clears what is over limit">
       <div aria-live="polite">
         {answer?.kind === "counter" ? (
-          <CounterMoves edit={answer.edit} />
+          <CounterMoves edit={answer.edit} kinds={kindsOf(basis.assembly)} />
         ) : (
           <p className="quiet">Searching …</p>
         )}

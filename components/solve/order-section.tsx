@@ -6,6 +6,7 @@ import { checkWords } from "@/lib/review/counter-words";
 import type { OrderInput, OrderStep, SafeOrder } from "@/lib/solve/safe-order";
 import { SheetSection } from "@/components/ui/sheet";
 import { placeWords } from "./counter-moves";
+import { kindsOf, type Kinds } from "./kinds";
 import { useSolver } from "./use-solver";
 
 export interface OrderSectionProps {
@@ -23,7 +24,7 @@ export function OrderSection({ basis, fromReadings }: OrderSectionProps) {
     <SheetSection title="Order of typing" note={from}>
       <div aria-live="polite">
         {answer?.kind === "order" ? (
-          <OrderWords order={answer.order} />
+          <OrderWords order={answer.order} kinds={kindsOf(basis.assembly)} />
         ) : (
           <p className="quiet">Searching …</p>
         )}
@@ -33,7 +34,7 @@ export function OrderSection({ basis, fromReadings }: OrderSectionProps) {
 }
 
 /** The order found, or why there is none. */
-export function OrderWords({ order }: { readonly order: SafeOrder }) {
+export function OrderWords({ order, kinds }: { readonly order: SafeOrder; readonly kinds: Kinds }) {
   if (order.kind === "needless")
     return <p className="quiet">At most one key changes; there is no state in between.</p>;
   if (order.kind === "found")
@@ -45,7 +46,11 @@ export function OrderWords({ order }: { readonly order: SafeOrder }) {
         </p>
         <ol>
           {order.steps.map((step) => (
-            <Step key={`${step.source.path} ${step.source.start} ${step.source.key}`} step={step} />
+            <Step
+              key={`${step.source.path} ${step.source.start} ${step.source.key}`}
+              step={step}
+              kinds={kinds}
+            />
           ))}
         </ol>
       </>
@@ -70,11 +75,11 @@ function sideWords(side: OrderStep["was"]): string {
   return side.unit === null ? String(side.value) : `${side.value}\u00a0${side.unit}`;
 }
 
-function Step({ step: { parameters, was, toBe, source } }: { readonly step: OrderStep }) {
+function Step({ step, kinds }: { readonly step: OrderStep; readonly kinds: Kinds }) {
+  const { parameters, was, toBe, source } = step;
   return (
     <li>
-      {joinWords(parameters.map((place) => placeWords(place, undefined)))}: {sideWords(was)} →{" "}
-      {sideWords(toBe)}{" "}
+      {joinWords(parameters.map((place) => placeWords(place, kinds)))}: {sideWords(was)} → {sideWords(toBe)}{" "}
       <span className="quiet">
         {source.key}, {source.path}, line {source.line}
       </span>

@@ -83,13 +83,13 @@ describe("the order of typing", () => {
 
   it("says what stands in the way where there is none, and what to do", () => {
     const blocking = [{ ruleId: "steps-per-mm", axis: "x" }];
-    render(<OrderWords order={{ kind: "none", steps: [], blocking, tried: 2 }} />);
+    render(<OrderWords order={{ kind: "none", steps: [], blocking, tried: 2 }} kinds={{}} />);
     expect(screen.getByText(/There is no order/).textContent).toContain("motors off");
     expect(screen.getByText(/X steps per mm/)).toBeTruthy();
   });
 
   it("says how much was tried where not every order was", () => {
-    render(<OrderWords order={{ kind: "not-found", steps: [], blocking: [], tried: 4096 }} />);
+    render(<OrderWords order={{ kind: "not-found", steps: [], blocking: [], tried: 4096 }} kinds={{}} />);
     expect(screen.getByText(/4096 states; not every order was tried/)).toBeTruthy();
   });
 });
