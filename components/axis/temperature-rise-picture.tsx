@@ -101,25 +101,32 @@ function capital(words: string): string {
 function Marks({ course, was, toBe, space }: Sides & { readonly space: PlotSpace }) {
   const line = { space, xs: course.times };
   const ys = (part: HeatedCourse) => course.times.map((_, index) => valueAt(part, index));
-  const end = course.times.at(-1) ?? 0;
+  // Names of curves that run close together stand one after the other.
+  const nameAt = (row: number) => Math.round((course.times.length - 1) * (1 - 0.2 * row));
   return (
     <>
       {toBe.parts.map(
-        ({ part, limit }) =>
+        ({ part, limit }, index) =>
           limit !== null && (
-            <PlotLimit key={part} space={space} y={limit} label={`limit of the ${LIMITED[part]}`} />
+            <PlotLimit
+              key={part}
+              space={space}
+              y={limit}
+              label={`limit of the ${LIMITED[part]}`}
+              at={0.27 * index}
+            />
           ),
       )}
       {was?.parts.map((part) => (
         <PlotLine key={part.part} {...line} ys={ys(part)} kind="was" />
       ))}
-      {toBe.parts.map((part) => (
+      {toBe.parts.map((part, row) => (
         <g key={part.part}>
           <PlotLine {...line} ys={ys(part)} kind={LINES[part.part]} />
           <PlotName
             space={space}
-            x={end}
-            y={valueAt(part, course.times.length - 1) ?? -1e9}
+            x={course.times[nameAt(row)] ?? 0}
+            y={valueAt(part, nameAt(row)) ?? -1e9}
             name={WORDS[part.part]}
           />
         </g>

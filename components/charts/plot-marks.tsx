@@ -40,22 +40,29 @@ export function PlotBeyond(curve: Curve) {
   return <path d={region} fill={`url(#${space.hatch})`} clipPath={`url(#${space.clip})`} />;
 }
 
-/** A level limit with strokes on its far side, as a wall is drawn. */
-export function PlotLimit({ space, y, label }: { space: PlotSpace; y: number; label: string }) {
-  const at = space.y(y);
-  if (at < space.top - 1 || at > space.bottom + 1) return null;
+/** A level limit with strokes on its far side, as a wall is drawn; `at` is where its name begins, share of the width. */
+export function PlotLimit(mark: {
+  readonly space: PlotSpace;
+  readonly y: number;
+  readonly label: string;
+  readonly at: number;
+}) {
+  const { space, label } = mark;
+  const y = space.y(mark.y);
+  if (y < space.top - 1 || y > space.bottom + 1) return null;
+  const width = space.right - space.left;
   return (
     <g>
       <rect
         x={space.left}
-        y={at - 8}
-        width={space.right - space.left}
+        y={y - 8}
+        width={width}
         height={8}
         fill={`url(#${space.hatch})`}
         clipPath={`url(#${space.clip})`}
       />
-      <path className="plot-line plot-line-limit" d={`M${space.left} ${at}H${space.right}`} />
-      <text className="plot-label" x={space.right - 4} y={at - 10} textAnchor="end">
+      <path className="plot-line plot-line-limit" d={`M${space.left} ${y}H${space.right}`} />
+      <text className="plot-label" x={space.left + 6 + mark.at * width} y={y + 14}>
         {label}
       </text>
     </g>
@@ -93,7 +100,7 @@ export function PlotUpright({ space, x, label }: { space: PlotSpace; x: number; 
       <text
         className="plot-label"
         x={late ? at - 4 : at + 4}
-        y={space.bottom - 6}
+        y={space.top + 14}
         textAnchor={late ? "end" : "start"}
       >
         {label}

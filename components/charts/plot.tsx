@@ -55,7 +55,7 @@ export interface PlotProps {
 }
 
 const HEIGHT = 330;
-const EDGE = { left: 58, right: 14, top: 28, bottom: 46 } as const;
+const EDGE = { left: 58, right: 22, top: 28, bottom: 46 } as const;
 /** Drawn before the page knows how much room there is. */
 const FIRST_WIDTH = 640;
 
