@@ -1,6 +1,6 @@
 import { Pieces } from "../pieces";
 import { readScalar, type Scalar } from "../scalar";
-import { Section, TreeBuilder, type ScalarAt } from "../tree";
+import { TreeBuilder, type ScalarAt, type Section } from "../tree";
 import type { Document } from "../types";
 import { cutRecords, delimiterOf, type CsvFault, type Field } from "./records";
 import { shapeOf, type Shape } from "./shape";

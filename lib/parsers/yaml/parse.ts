@@ -1,13 +1,4 @@
-import {
-  Composer,
-  CST,
-  isMap,
-  Lexer,
-  Parser,
-  type Document as YamlDocument,
-  type Token,
-  type YAMLError,
-} from "yaml";
+import { Composer, CST, isMap, Lexer, Parser, type Document as YamlDocument, type YAMLError } from "yaml";
 import { CHAR } from "../chars";
 import { MOST_DEPTH, TreeBuilder } from "../tree";
 import type { Document } from "../types";
@@ -44,8 +35,8 @@ export function parseYaml(path: string, text: string): Document {
 }
 
 /** The documents of a text. One that nests deeper than is read is left out and said; the next is read again. */
-function composed(build: TreeBuilder, text: string): YamlDocument[] {
-  const tokens: Token[] = [];
+function composed(build: TreeBuilder, text: string): YamlDocument.Parsed[] {
+  const tokens: CST.Token[] = [];
   let parser: Parser | null = new Parser();
   let at = 0;
   for (const lexeme of new Lexer().lex(text)) {
@@ -61,7 +52,7 @@ function composed(build: TreeBuilder, text: string): YamlDocument[] {
   }
   if (parser) tokens.push(...parser.end());
   const composer = new Composer({ version: "1.2", uniqueKeys: false, prettyErrors: false });
-  return [...composer.compose(tokens)].filter((document): document is YamlDocument => "contents" in document);
+  return [...composer.compose(tokens)];
 }
 
 function beginsDocument(lexeme: string, text: string, at: number): boolean {
