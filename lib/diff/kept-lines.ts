@@ -17,8 +17,7 @@ export function keptLines(was: readonly string[], toBe: readonly string[]): Kept
   let tail = 0;
   while (tail < shorter - head && was[was.length - 1 - tail] === toBe[toBe.length - 1 - tail]) tail++;
   const middle = keptBetween(
-    shared(was, toBe, { from: head, to: was.length - tail }),
-    shared(toBe, was, { from: head, to: toBe.length - tail }),
+    shared(was.slice(head, was.length - tail), toBe.slice(head, toBe.length - tail), head),
   );
   return [...run(head, 0, 0), ...middle, ...run(tail, was.length - tail, toBe.length - tail)];
 }
@@ -30,28 +29,28 @@ function run(count: number, wasFrom: number, toBeFrom: number): KeptLine[] {
   }));
 }
 
+/** A line by its place and by a number that equal lines share: numbers compare faster than long lines. */
 interface NumberedLine {
   readonly index: number;
-  readonly line: string;
+  readonly id: number;
 }
 
-/** The lines of a stretch that the other text has too; the others cannot stay, and need no comparing. */
-function shared(
-  lines: readonly string[],
-  others: readonly string[],
-  { from, to }: { from: number; to: number },
-): NumberedLine[] {
-  const there = new Set(others);
-  const found: NumberedLine[] = [];
-  for (let index = from; index < to; index++) {
-    const line = lines[index];
-    if (line !== undefined && there.has(line)) found.push({ index, line });
-  }
-  return found;
+/** The lines that both stretches have; the others cannot stay, and need no comparing. */
+function shared(was: readonly string[], toBe: readonly string[], from: number): NumberedLine[][] {
+  const ids = new Map<string, number>();
+  for (const line of was) if (!ids.has(line)) ids.set(line, ids.size);
+  const there = new Set<number>();
+  const numbered = (line: string, index: number): NumberedLine => ({
+    index: from + index,
+    id: ids.get(line) ?? -1,
+  });
+  const right = toBe.map(numbered).filter(({ id }) => id >= 0);
+  for (const { id } of right) there.add(id);
+  return [was.map(numbered).filter(({ id }) => there.has(id)), right];
 }
 
-function keptBetween(was: NumberedLine[], toBe: NumberedLine[]): KeptLine[] {
-  const comparator = (one: NumberedLine, other: NumberedLine) => one.line === other.line;
+function keptBetween([was = [], toBe = []]: NumberedLine[][]): KeptLine[] {
+  const comparator = (one: NumberedLine, other: NumberedLine) => one.id === other.id;
   const parts = diffArrays(was, toBe, { comparator, maxEditLength: MOST_EDITS }) ?? [];
   const kept: KeptLine[] = [];
   let wasAt = 0;

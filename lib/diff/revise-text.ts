@@ -1,15 +1,17 @@
 import { keptLines } from "./kept-lines";
+import { markMoved } from "./moved-lines";
 import { pairLines, type LinePair } from "./pair-lines";
 import { splitLines, substance, withoutLineEnd } from "./text-lines";
 import type { RevisionLine, RevisionSegment, RevisionStretch } from "./types";
 import { reviseWords } from "./words";
 
 /**
- * A text as a drawing revision: every line once, changed lines with their old and new words beside each other.
+ * A text as a drawing revision: every line once, changed lines with their old and new words beside each other, moved
+ * blocks told as moved.
  * Unchanged runs of more than 2·context + 2 lines are closed but for `context` lines beside each change.
  */
 export function reviseText(was: string, toBe: string, context = 3): RevisionStretch[] {
-  return stretches(reviseLines(splitLines(was), splitLines(toBe)), context);
+  return stretches(markMoved(reviseLines(splitLines(was), splitLines(toBe))), context);
 }
 
 interface Cursor {

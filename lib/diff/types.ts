@@ -16,6 +16,8 @@ export interface RevisionLine {
   readonly segments: readonly RevisionSegment[];
   /** Only white space (or only a comment) differs. */
   readonly onlySpace: boolean;
+  /** For an added or removed line of a block that stands elsewhere in the other text: its line number there. */
+  readonly moved?: number | undefined;
 }
 
 /** A run of rows: shown, or closed by a break line that opens on demand. */

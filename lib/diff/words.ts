@@ -13,12 +13,28 @@ const MOST_EDITS = 400;
 
 /** The words of a changed line: kept, struck, put in. The kept and struck ones are the old line, the kept and put in the new. */
 export function reviseWords(was: string, toBe: string): RevisionSegment[] {
-  const parts = diffArrays(splitWords(was), splitWords(toBe), { maxEditLength: MOST_EDITS });
-  if (!parts) return [segment("was", was), segment("to_be", toBe)].filter(({ text }) => text !== "");
-  return tidy(
-    parts.map(({ value, added, removed }) =>
+  const [old, wanted] = [splitWords(was), splitWords(toBe)];
+  const shorter = Math.min(old.length, wanted.length);
+  let head = 0;
+  while (head < shorter && old[head] === wanted[head]) head++;
+  let tail = 0;
+  while (tail < shorter - head && old[old.length - 1 - tail] === wanted[wanted.length - 1 - tail]) tail++;
+  const middle = reviseMiddle(old.slice(head, old.length - tail), wanted.slice(head, wanted.length - tail));
+  if (!middle) return [segment("was", was), segment("to_be", toBe)].filter(({ text }) => text !== "");
+  const before = segment("same", old.slice(0, head).join(""));
+  const after = segment("same", old.slice(old.length - tail).join(""));
+  return tidy([before, ...middle, after].filter(({ text }) => text !== ""));
+}
+
+/** What lies between the words that both lines begin and end with: in most lines one number against another. */
+function reviseMiddle(was: string[], toBe: string[]): RevisionSegment[] | null {
+  if (was.length < 2 && toBe.length < 2)
+    return [segment("was", was.join("")), segment("to_be", toBe.join(""))].filter(({ text }) => text !== "");
+  const parts = diffArrays(was, toBe, { maxEditLength: MOST_EDITS });
+  return (
+    parts?.map(({ value, added, removed }) =>
       segment(added ? "to_be" : removed ? "was" : "same", value.join("")),
-    ),
+    ) ?? null
   );
 }
 
