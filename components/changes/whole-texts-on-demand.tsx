@@ -2,6 +2,7 @@
 
 import dynamic from "next/dynamic";
 import { useState } from "react";
+import { unifiedDiff } from "@/lib/diff/unified";
 import { Button } from "@/components/ui/button";
 
 const WholeTexts = dynamic(
@@ -18,7 +19,18 @@ interface WholeTextsOnDemandProps {
   readonly toBe: string;
 }
 
-/** Both texts in full, fetched and laid out only when asked for. */
+/** The difference as a file that the usual tools apply to the old text. */
+function keepDifference({ path, was, toBe }: WholeTextsOnDemandProps): void {
+  const difference = unifiedDiff({ path, was: was === "" ? null : was, toBe: toBe === "" ? null : toBe });
+  const address = URL.createObjectURL(new Blob([difference], { type: "text/plain" }));
+  const link = document.createElement("a");
+  link.href = address;
+  link.download = `${path.split("/").at(-1) ?? "text"}.diff`;
+  link.click();
+  URL.revokeObjectURL(address);
+}
+
+/** Both texts in full, fetched and laid out only when asked for; and their difference as a file. */
 export function WholeTextsOnDemand(props: WholeTextsOnDemandProps) {
   const [open, setOpen] = useState(false);
   return (
@@ -26,6 +38,11 @@ export function WholeTextsOnDemand(props: WholeTextsOnDemandProps) {
       <Button variant="quiet" aria-expanded={open} onClick={() => setOpen(!open)}>
         {open ? "Fold both whole texts away" : "Show both whole texts"}
       </Button>
+      {props.was !== props.toBe && (
+        <Button variant="quiet" onClick={() => keepDifference(props)}>
+          Save the difference (unified)
+        </Button>
+      )}
       {open && <WholeTexts {...props} />}
     </>
   );

@@ -1,99 +1,21 @@
-import type { CSSProperties, ReactNode } from "react";
+import type { CSSProperties } from "react";
 import { plural } from "@/lib/domain/sentences";
-import type { RevisionLine, RevisionSegment, RevisionStretch } from "@/lib/diff/types";
-import { RevisionMarks } from "@/components/ui/revision-mark";
-import { CodeText } from "./code-text";
-
-type ByLine<T> = Readonly<Record<number, T>>;
+import type { RevisionStretch } from "@/lib/diff/types";
+import { FoldQuiet } from "./fold-quiet";
+import { isFoldable, RevisionRow, type LineContext } from "./revision-row";
 
 export interface DrawingRevisionProps {
   readonly path: string;
   readonly stretches: readonly RevisionStretch[];
-  /** Revision letters by line number of the new text, and by line number of the old one for lines that went. */
-  readonly letters?:
-    | {
-        readonly toBe: ByLine<readonly string[]>;
-        readonly was: ByLine<readonly string[]>;
-      }
-    | undefined;
-  /** What stands below a line: its comments, the way to add one. Keyed as `letters`. */
-  readonly notes?: { readonly toBe: ByLine<ReactNode>; readonly was: ByLine<ReactNode> } | undefined;
+  readonly letters?: LineContext["letters"];
+  readonly notes?: LineContext["notes"];
+  readonly keep?: LineContext["keep"];
   /** Which of the page's texts this is, from 0; sets the lines' addresses. */
   readonly index?: number | undefined;
 }
 
-interface LineContext {
-  readonly letters: DrawingRevisionProps["letters"];
-  readonly notes: DrawingRevisionProps["notes"];
-  readonly index: number;
-}
-
-function Segment({ segment }: { segment: RevisionSegment }) {
-  const words = <CodeText text={segment.text} blanks={segment.text.trim() === ""} />;
-  if (segment.kind === "same") return <CodeText text={segment.text} />;
-  if (segment.kind === "was")
-    return (
-      <del>
-        <span className="visually-hidden">was </span>
-        {words}
-      </del>
-    );
-  return (
-    <ins>
-      <span className="visually-hidden">to be </span>
-      {words}
-    </ins>
-  );
-}
-
-/** Said where a firmware reads the same as before. */
-function Aside({ line }: { line: RevisionLine }) {
-  if (!line.onlySpace || line.kind !== "changed") return null;
-  const inLine = line.segments.some(({ kind }) => kind !== "same");
-  return (
-    <bdi className="line-aside">
-      {inLine ? "only spacing or a comment differs" : "only the line end differs"}
-    </bdi>
-  );
-}
-
-/** The value of a keyed record for a line: by its new number, else by its old one. */
-function ofLine<T>(
-  record: { toBe: ByLine<T>; was: ByLine<T> } | undefined,
-  line: RevisionLine,
-): T | undefined {
-  const found = line.toBeLine === null ? undefined : record?.toBe[line.toBeLine];
-  if (found !== undefined || line.kind === "same" || line.wasLine === null) return found;
-  return record?.was[line.wasLine];
-}
-
-function Line({ line, context }: { line: RevisionLine; context: LineContext }) {
-  const number = line.toBeLine ?? line.wasLine ?? 0;
-  const letters = ofLine(context.letters, line) ?? [];
-  const note = ofLine(context.notes, line);
-  const id = `${line.toBeLine === null ? "was" : "to-be"}-${context.index}-${number}`;
-  return (
-    <li id={id} className={`code-line code-line-${line.kind}`}>
-      <span className="line-margin">
-        <RevisionMarks letters={letters} />
-      </span>
-      <span className="line-number">
-        <span className="visually-hidden">{line.toBeLine === null ? "was line " : "line "}</span>
-        {number}
-      </span>
-      <span className="line-text">
-        {line.segments.map((segment, index) => (
-          <Segment key={index} segment={segment} />
-        ))}
-        <Aside line={line} />
-      </span>
-      {note !== undefined && <div className="line-note">{note}</div>}
-    </li>
-  );
-}
-
 /** The zigzag of a shortened part. */
-function BreakLine() {
+export function BreakLine() {
   return (
     <span className="break-line" aria-hidden="true">
       <svg width="36" height="14" viewBox="0 0 36 14">
@@ -113,7 +35,9 @@ function Closed({ stretch, context }: { stretch: RevisionStretch; context: LineC
         </summary>
         <ol className="code-lines">
           {stretch.lines.map((line, index) => (
-            <Line key={index} line={line} context={context} />
+            <li key={index}>
+              <RevisionRow line={line} context={context} />
+            </li>
           ))}
         </ol>
       </details>
@@ -125,8 +49,9 @@ function Closed({ stretch, context }: { stretch: RevisionStretch; context: LineC
  * Was / To be as a drawing revision: one column of text, the old value struck, the new one beside it underlined, the
  * revision letter in the margin. What stays as it was closes with a break line that opens without script.
  */
-export function DrawingRevision({ path, stretches, letters, notes, index = 0 }: DrawingRevisionProps) {
-  const context: LineContext = { letters, notes, index };
+export function DrawingRevision({ path, stretches, letters, notes, keep, index = 0 }: DrawingRevisionProps) {
+  const context: LineContext = { letters, notes, keep, index };
+  const foldable = stretches.flatMap(({ lines }) => lines).filter((line) => isFoldable(line, context)).length;
   const numbers = stretches.flatMap(({ lines }) => lines.map((line) => line.toBeLine ?? line.wasLine ?? 0));
   const widest = { "--digits": String(Math.max(1, numbers.at(-1) ?? 1)).length } as CSSProperties;
   return (
@@ -134,12 +59,17 @@ export function DrawingRevision({ path, stretches, letters, notes, index = 0 }: 
       <p className="revision-key" aria-hidden="true">
         <del>was</del> <ins>to be</ins>
       </p>
+      <FoldQuiet count={foldable} />
       <ol className="code-lines">
         {stretches.map((stretch, at) =>
           stretch.closed ? (
             <Closed key={at} stretch={stretch} context={context} />
           ) : (
-            stretch.lines.map((line, row) => <Line key={`${at}.${row}`} line={line} context={context} />)
+            stretch.lines.map((line, row) => (
+              <li key={`${at}.${row}`}>
+                <RevisionRow line={line} context={context} />
+              </li>
+            ))
           ),
         )}
       </ol>

@@ -1,10 +1,13 @@
 import { cleanup, render, screen, within } from "@testing-library/react";
 import { renderToStaticMarkup } from "react-dom/server";
 import { afterEach, describe, expect, it } from "vitest";
+import { outlineOf } from "@/lib/diff/outline";
 import { reviseText } from "@/lib/diff/revise-text";
+import { splitLines } from "@/lib/diff/text-lines";
 import { DrawingRevision } from "@/components/revision/drawing-revision";
 import { lineHref, lineId } from "@/components/revision/line-anchor";
 import { MarkedText } from "@/components/revision/marked-text";
+import { revisionItems } from "@/components/revision/revision-items";
 
 afterEach(cleanup);
 
@@ -68,12 +71,51 @@ describe("DrawingRevision", () => {
     expect(ends.container.textContent).toContain("only the line end differs");
   });
 
+  it("folds lines away where only spacing or a comment differs, but none that somebody spoke of", () => {
+    const stretches = reviseText("a = 1 # x\nb = 2 # x\nc = 3\n", "a = 1 # y\nb = 2 # y\nc = 4\n");
+    const { container } = render(
+      <DrawingRevision path="a.conf" stretches={stretches} keep={{ toBe: { 2: true }, was: {} }} />,
+    );
+    expect(screen.getByRole("checkbox", { name: /fold 1 line where/ })).toBeTruthy();
+    const foldable = [...container.querySelectorAll(".code-line-foldable")];
+    expect(foldable.map(({ id }) => id)).toEqual(["to-be-0-1"]);
+    cleanup();
+    render(<DrawingRevision path="a.conf" stretches={reviseText("c = 3", "c = 4")} />);
+    expect(screen.queryByRole("checkbox")).toBeNull();
+  });
+
+  it("tells a moved line where it stands in the other text", () => {
+    const [block, rest] = ["alpha = 1\nbeta = 2\n", "gamma = 3\ndelta = 4\nepsilon = 5\n"];
+    const { container } = render(
+      <DrawingRevision path="a.conf" stretches={reviseText(block + rest, rest + block)} />,
+    );
+    const asides = [...container.querySelectorAll(".line-aside")].map(({ textContent }) => textContent);
+    expect(asides).toEqual(["moved to line 4", "moved to line 5", "moved, was line 1", "moved, was line 2"]);
+  });
+
   it("shows a character that would turn the line around", () => {
     const { container } = render(
       <DrawingRevision path="a.conf" stretches={reviseText("a = 1", "a = \u202e1")} />,
     );
     expect(container.querySelector(".hidden-character")?.textContent).toContain("U+202E");
     expect(container.textContent).not.toContain("\u202e");
+  });
+});
+
+describe("revisionItems", () => {
+  it("lists a break for what stays, its lines once opened, and leaves folded lines out", () => {
+    const whole = reviseText(was, toBe);
+    const closed = whole.findIndex((stretch) => stretch.closed);
+    const list = (opened: readonly number[], folded = false) =>
+      revisionItems(outlineOf(whole), {
+        opened: new Set(opened),
+        folded: ({ kind }) => folded && kind === "same",
+        toBe: () => splitLines(toBe),
+      });
+    expect(list([])).toContainEqual({ kind: "break", stretch: closed, count: 16 });
+    const every = whole.flatMap(({ lines: own }) => own.map((line) => ({ kind: "line", line })));
+    expect(list(whole.map((_, index) => index))).toEqual(every);
+    expect(list([], true).every((item) => item.kind === "break" || item.line.kind !== "same")).toBe(true);
   });
 });
 
