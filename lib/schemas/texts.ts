@@ -42,6 +42,8 @@ export const editAnswerSchema = z.object({
       path: z.string(),
       line: z.number(),
       alsoAxes: z.array(z.string()),
+      /** `enabled`: the key stood commented out; `added`: the text had no such key. */
+      how: z.enum(["changed", "enabled", "added"]),
     }),
   ),
   refused: z.array(

@@ -28,7 +28,9 @@ describe("writing parameters into sent texts", () => {
     const answer = await editTexts(viewer, { files: sent(TEXT), keyTable, changes });
     expect(answer).toEqual({
       files: sent(TEXT.replace("800", "900")),
-      applied: [{ axis: "x", parameter: "run_current", path: "gantry.conf", line: 2, alsoAxes: [] }],
+      applied: [
+        { axis: "x", parameter: "run_current", path: "gantry.conf", line: 2, alsoAxes: [], how: "changed" },
+      ],
       refused: [],
     });
   });
