@@ -3,6 +3,7 @@ import { runMapBench } from "./map";
 import { runMoveBench } from "./move";
 import { runFormatsBench } from "./formats";
 import { runParseBench } from "./parse";
+import { runReviseBench } from "./revise";
 import { runRulesBench } from "./rules";
 
 /** Prints what was measured on this machine. */
@@ -13,5 +14,6 @@ for (const line of [
   ...runCheckBench(),
   ...runMapBench(),
   ...runMoveBench(),
+  ...runReviseBench(),
 ])
   console.log(line);
