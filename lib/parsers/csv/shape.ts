@@ -8,17 +8,20 @@ export type Shape =
 
 const KEY_WORDS = ["key", "name", "parameter", "setting", "property"];
 const VALUE_WORDS = ["value", "values"];
+/** What the rows of a table of axes are headed by (common practice, no source). */
+const ROW_WORDS = ["axis", "axes", "motor", "drive", "joint"];
 const UNIT_WORDS = ["unit", "units"];
 const COMMENT_WORDS = ["comment", "comments", "note", "notes", "remark", "description"];
 
-/** Two columns, or a column headed “value” behind the first, are names with values; anything wider is a table of rows and columns. */
+/** Two columns, or a column headed “value” behind the first, are names with values; anything wider, or headed “axis”, is a table of rows and columns. */
 export function shapeOf(records: readonly (readonly Field[])[]): Shape {
   const first = (records[0] ?? []).map(({ said }) => said.trim());
   const words = first.map((word) => word.toLowerCase());
   const valued = VALUE_WORDS.includes(words[1] ?? "");
   const find = (known: readonly string[]) =>
     words.findIndex((word, index) => index > 1 && known.includes(word));
-  if (first.length <= 2 || valued) {
+  const rows = ROW_WORDS.includes(words[0] ?? "") && !isNumber(first[1]) && records.length > 1;
+  if ((first.length <= 2 && !rows) || valued) {
     const header = valued || (KEY_WORDS.includes(words[0] ?? "") && !isNumber(first[1]));
     return { kind: "pairs", header, unit: find(UNIT_WORDS), comment: find(COMMENT_WORDS) };
   }

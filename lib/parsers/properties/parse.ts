@@ -91,8 +91,10 @@ function cutPair(text: string, start: number, end: number): Pair {
   while (i < end) {
     const code = text.charCodeAt(i);
     if (code === CHAR.backslash) {
-      if (isLineEnd(text.charCodeAt(i + 1)) && skipGap(text, i, end) === end) break;
-      i += 2;
+      const spliced = isLineEnd(text.charCodeAt(i + 1));
+      const next = spliced ? skipGap(text, i, end) : i + 2;
+      if (spliced && next >= end) break;
+      i = next;
       continue;
     }
     if (isWhite(code) || isLineEnd(code) || code === CHAR.equals || code === CHAR.colon) break;
