@@ -10,7 +10,7 @@ export function TestSheetSection({ basis: { machineId, axis } }: { readonly basi
   const at = (test: string) =>
     `/test-sheets/new?${new URLSearchParams({ machineId, axis, test }).toString()}`;
   return (
-    <SheetSection title="Test on the machine" note="settles what the physics cannot">
+    <SheetSection title="Test on the machine" id="tests" note="settles what the physics cannot">
       <ul className="moved-tests">
         {TESTS.map((test) => (
           <li key={test}>

@@ -47,6 +47,7 @@ export default async function AxisPage({ params }: PageProps) {
             : `As baseline ${sheet.baseline} with the machine's permitted deviations requires it, on the machine's own hardware.`
         }
       />
+      <Contents />
       <Hardware sheet={sheet} />
       <AxisPictures basis={basis} />
       <VirtualMove basis={basis} />
@@ -57,6 +58,32 @@ export default async function AxisPage({ params }: PageProps) {
       <TestSheetSection basis={basis} />
       <AxisTitleBlock sheet={sheet} now={context.now} />
     </Sheet>
+  );
+}
+
+const CONTENTS = [
+  ["operating-map", "Operating map"],
+  ["torque-curve", "Torque curve"],
+  ["temperature-rise", "Temperature rise"],
+  ["virtual-move", "Virtual test move"],
+  ["tolerance-odds", "Tolerance odds"],
+  ["heating-forecast", "Settled temperature"],
+  ["measured-predicted", "Measured against predicted"],
+  ["fault-fingerprint", "Fault fingerprint"],
+  ["tests", "Test on the machine"],
+] as const;
+
+function Contents() {
+  return (
+    <nav aria-label="On this sheet">
+      <ul className="flex flex-wrap gap-x-5 gap-y-1">
+        {CONTENTS.map(([id, words]) => (
+          <li key={id}>
+            <a href={`#${id}`}>{words}</a>
+          </li>
+        ))}
+      </ul>
+    </nav>
   );
 }
 
