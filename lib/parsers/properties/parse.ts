@@ -91,7 +91,7 @@ function cutPair(text: string, start: number, end: number): Pair {
   while (i < end) {
     const code = text.charCodeAt(i);
     if (code === CHAR.backslash) {
-      const spliced = isLineEnd(text.charCodeAt(i + 1));
+      const spliced = i + 1 < end && isLineEnd(text.charCodeAt(i + 1));
       const next = spliced ? skipGap(text, i, end) : i + 2;
       if (spliced && next >= end) break;
       i = next;

@@ -48,6 +48,11 @@ describe("properties", () => {
     ]);
   });
 
+  it("comes to an end where a comment of one word ends in a backslash", () => {
+    const text = "#run\\\n!\\\nhold=400\n";
+    expect(parse(text).entries.map(({ key }) => key)).toEqual(["hold"]);
+  });
+
   it("lets the later of two keys count and names an escape that is cut short", () => {
     const { entries, diagnostics } = parse("a=1\na=\\u00b");
     expect(entries.map(({ shadowed }) => shadowed)).toEqual([true, false]);
