@@ -24,25 +24,39 @@ export function weightTorque(input: {
 }
 
 /**
- * Acceleration, m/s², with which an axis falls once its current is gone: (|W| − F_f − n·T_d/r)/(m + n·J/r²), 0 where
- * friction and detent torque hold it. W weight along the axis and F_f friction in N, T_d detent torque of each of n motors
- * in N·m, r in m/rad, m in kg, J rotor and drive train at each shaft in kg·m². The worst case: the friction of the drive
- * train is not counted on. Source: Newton's second law.
+ * Acceleration, m/s², with which an axis falls once its current is gone: (|W| − F_f)/(m + n·J/r²), 0 where friction
+ * carries the weight. W weight along the axis and F_f friction in N, r in m/rad, m in kg, J rotor and drive train at each
+ * of n shafts in kg·m². Detent torque has no part in it: it is periodic in the rotor's angle and does no work over a tooth
+ * pitch, so that it cannot slow what has begun to fall. The worst case: the friction of the drive train is not counted on.
+ * Source: Newton's second law.
  */
 export function fallAcceleration(input: {
   readonly weight: number;
   readonly friction: number;
-  readonly detentTorque: number;
   readonly motors: number;
   readonly radius: number;
   readonly mass: number;
   readonly shaftInertia: number;
 }): number {
-  const { radius, motors } = input;
-  const drive = Math.abs(input.weight) - input.friction - (motors * input.detentTorque) / radius;
-  const inertia = input.mass + (motors * input.shaftInertia) / radius ** 2;
+  const drive = Math.abs(input.weight) - input.friction;
+  const inertia = input.mass + (input.motors * input.shaftInertia) / input.radius ** 2;
   return inertia > 0 ? Math.max(0, drive) / inertia : 0;
 }
+
+/**
+ * Force, N, up to which the detent torque of n motors keeps a resting load where it is: n·T_d/r; T_d in N·m, r in m/rad.
+ * It holds at rest only. Source: Acarnley, Stepping Motors (detent torque, periodic in the rotor's angle; from memory).
+ */
+export function detentForce(input: {
+  readonly detentTorque: number;
+  readonly motors: number;
+  readonly radius: number;
+}): number {
+  return (input.motors * input.detentTorque) / input.radius;
+}
+
+/** Times the weight that detent torque must carry before a load without current counts as held; the product's choice. */
+export const DETENT_RESERVE = 2;
 
 /** Way, m, fallen from rest in the time t (s) at the acceleration a (m/s²): a·t²/2. Source: kinematics. */
 export function fallDistance(acceleration: number, time: number): number {

@@ -3,7 +3,7 @@ import { describe, expect, it } from "vitest";
 import { busierMotor, busierMotorTorque, crossedInertia } from "@/lib/physics/coupled";
 import { connectionFactors, peakFromRms } from "@/lib/physics/current-conventions";
 import { conductionLoss, driverSteadyState, highestDriverCurrent } from "@/lib/physics/driver-heat";
-import { fallAcceleration, fallDistance, FREE_FALL } from "@/lib/physics/gravity";
+import { detentForce, fallAcceleration, fallDistance, FREE_FALL } from "@/lib/physics/gravity";
 import { steadyFromRecord } from "@/lib/physics/heating-record";
 import { dutyTorque, preloadTorque } from "@/lib/physics/load-torque";
 import { microstepsToMove } from "@/lib/physics/microstep-fidelity";
@@ -294,7 +294,6 @@ describe("a raised load without current", () => {
   const input = {
     weight: 20,
     friction: 0,
-    detentTorque: 0,
     motors: 1,
     radius: 0.01,
     mass: 20 / FREE_FALL,
@@ -305,28 +304,28 @@ describe("a raised load without current", () => {
     expect(fallDistance(FREE_FALL, 0.1)).toBeCloseTo(0.04903325, 9);
   });
 
-  it("stays where friction and detent torque carry it", () => {
-    expect(fallAcceleration({ ...input, friction: 12, detentTorque: 0.08 })).toBe(0);
+  it("is slowed by friction alone, and stays where friction carries it", () => {
+    expect(fallAcceleration({ ...input, friction: 12 })).toBeCloseTo(0.4 * FREE_FALL, 9);
+    expect(fallAcceleration({ ...input, friction: 20 })).toBe(0);
   });
 
-  law(
-    "falls no faster with more friction, detent torque or inertia",
-    4,
-    (weight = 1, a = 1, b = 1, mass = 1) => {
-      const at = (friction: number, shaftInertia: number) =>
-        fallAcceleration({
-          weight,
-          friction,
-          detentTorque: 0.001,
-          motors: 2,
-          radius: 0.01,
-          mass,
-          shaftInertia,
-        });
-      expect(at(Math.max(a, b), 1e-5)).toBeLessThanOrEqual(at(Math.min(a, b), 1e-5));
-      expect(at(0, Math.max(a, b))).toBeLessThanOrEqual(at(0, Math.min(a, b)));
-    },
-  );
+  it("rests on n·T_d/r of detent torque", () => {
+    expect(detentForce({ detentTorque: 0.08, motors: 2, radius: 0.01 })).toBeCloseTo(16, 12);
+  });
+
+  law("falls no faster with more friction or inertia", 4, (weight = 1, a = 1, b = 1, mass = 1) => {
+    const at = (friction: number, shaftInertia: number) =>
+      fallAcceleration({
+        weight,
+        friction,
+        motors: 2,
+        radius: 0.01,
+        mass,
+        shaftInertia,
+      });
+    expect(at(Math.max(a, b), 1e-5)).toBeLessThanOrEqual(at(Math.min(a, b), 1e-5));
+    expect(at(0, Math.max(a, b))).toBeLessThanOrEqual(at(0, Math.min(a, b)));
+  });
 });
 
 describe("motors on crossed belts", () => {
