@@ -56,7 +56,8 @@ export function jerkRampTime(input: {
 
 /**
  * Highest speed of a move from rest to rest with limited jerk, m/s: the v with v·t(v) = d, at most the set speed.
- * Symbols as `jerkRampTime`, d in m. Source: kinematics; v·(v/a + a/j) = d, or 2·v·√(v/j) = d for short moves.
+ * Symbols as `jerkRampTime`, d in m; 0 where a is 0. Source: kinematics; v·(v/a + a/j) = d, or 2·v·√(v/j) = d for
+ * short moves.
  */
 export function jerkPeakSpeed(input: {
   readonly speed: number;
@@ -65,6 +66,7 @@ export function jerkPeakSpeed(input: {
   readonly travel: number;
 }): number {
   const { speed, acceleration: a, jerk, travel } = input;
+  if (a === 0) return 0;
   const short = Math.cbrt((jerk * travel ** 2) / 4);
   if (short <= a ** 2 / jerk) return Math.min(speed, short);
   const b = a ** 2 / jerk;
@@ -101,7 +103,31 @@ export function jerkRampAcceleration(input: {
   return Math.min(acceleration, rising, falling);
 }
 
+/**
+ * Travel, m, that a move from rest to rest with limited jerk needs to reach speed v: v·t(v), t as `jerkRampTime`, whose
+ * symbols and units hold; a and j more than 0. Source: kinematics, each ramp of the S-curve takes v·t/2.
+ */
+export function jerkTravelToReach(input: {
+  readonly speed: number;
+  readonly acceleration: number;
+  readonly jerk: number;
+}): number {
+  return input.speed * jerkRampTime(input);
+}
+
 /** Way, m, from a speed v (m/s) to rest at the deceleration a (m/s²): v²/2a. Source: kinematics. */
 export function stoppingDistance(speed: number, acceleration: number): number {
   return speed ** 2 / (2 * acceleration);
+}
+
+/**
+ * Way, m, from a speed v to rest with limited jerk: v·t(v)/2, t as `jerkRampTime`, whose symbols and units hold; never
+ * less than v²/2a. Source: kinematics, the speed of the S-curve falls evenly about its half.
+ */
+export function jerkStoppingDistance(input: {
+  readonly speed: number;
+  readonly acceleration: number;
+  readonly jerk: number;
+}): number {
+  return (input.speed * jerkRampTime(input)) / 2;
 }

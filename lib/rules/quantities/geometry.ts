@@ -46,6 +46,10 @@ export function accelerationUnit(axis: AxisView): string {
   return `${lengthUnit(axis)}/s²`;
 }
 
+export function jerkUnit(axis: AxisView): string {
+  return `${lengthUnit(axis)}/s³`;
+}
+
 export function speedUnit(axis: AxisView): string {
   return `${lengthUnit(axis)}/s`;
 }

@@ -30,6 +30,15 @@ export function travel(axis: AxisView): Datum {
   return travel_mm === undefined ? missing(axisPath(axis, "travel_mm")) : given(travel_mm / 1000);
 }
 
+/**
+ * Jerk of the text, m/s³ (rad/s³); null where it has none or 0, and the acceleration is then there at once. One below 0
+ * is unusable.
+ */
+export function jerkLimit(axis: AxisView): Datum | null {
+  const found = axis.parameter("jerk");
+  return !found || found.value === 0 ? null : fromText(axis, "jerk", "positive");
+}
+
 export const PEAK_SPEED: QuantityDefinition = {
   reads: ["max_speed", "acceleration", ...TRAVEL_READS],
   from: [],

@@ -12,7 +12,9 @@ import {
   jerkPeakSpeed,
   jerkRampAcceleration,
   jerkRampTime,
+  jerkStoppingDistance,
   jerkTimes,
+  jerkTravelToReach,
   stoppingDistance,
   trapezoidTimes,
 } from "@/lib/physics/profiles";
@@ -234,6 +236,31 @@ describe("moves", () => {
       expect(Math.abs(time / jerkRampTime({ speed: peak, acceleration, jerk }) - 1)).toBeLessThan(1e-3);
     },
   );
+
+  law(
+    "with limited jerk never stop sooner than without, and stop as soon where it is boundless",
+    3,
+    (speed = 1, acceleration = 1, jerk = 1) => {
+      const hard = stoppingDistance(speed, acceleration);
+      expect(jerkStoppingDistance({ speed, acceleration, jerk })).toBeGreaterThanOrEqual(hard * (1 - 1e-9));
+      const boundless = jerkStoppingDistance({ speed, acceleration, jerk: 1e15 * acceleration });
+      expect(Math.abs(boundless / hard - 1)).toBeLessThan(1e-6);
+    },
+  );
+
+  law(
+    "with limited jerk just reach their speed on the travel that they need for it",
+    3,
+    (speed = 1, acceleration = 1, jerk = 1) => {
+      const travel = jerkTravelToReach({ speed, acceleration, jerk });
+      const reached = jerkPeakSpeed({ speed: 2 * speed, acceleration, jerk, travel });
+      expect(Math.abs(reached / speed - 1)).toBeLessThan(1e-9);
+    },
+  );
+
+  it("turn round where they stand without an acceleration", () => {
+    expect(jerkPeakSpeed({ speed: 1, acceleration: 0, jerk: 1, travel: 1 })).toBe(0);
+  });
 
   law("stop sooner with more deceleration", 3, (speed = 1, one = 1, other = 1) => {
     expect(stoppingDistance(speed, Math.max(one, other))).toBeLessThanOrEqual(
