@@ -4,6 +4,7 @@ import { formatNumber } from "@/lib/domain/units";
 export const EXPLANATION_WORDS: Readonly<Record<Explanation, string>> = {
   as_predicted: "Nothing but the spread of the catalog data",
   peak_for_rms: "A peak current taken for rms, or rms for peak",
+  hold_current: "It stood on hold current",
   sense_resistor: "A sense resistor off by two",
   other_winding: "A motor with another winding",
   less_airflow: "Less air at the motor",
@@ -22,7 +23,7 @@ export const TELLING_WORDS: Readonly<
   Record<TellingMeasurement, { readonly act: string; readonly unit: string }>
 > = {
   winding_current: {
-    act: "Measure the current in one phase while the axis stands on run current: the root of the sum of the squares of both phases over √2 is the rms current.",
+    act: "Measure the current in one phase while the axis stands as it stood for the temperature: the root of the sum of the squares of both phases over √2 is the rms current.",
     unit: "A",
   },
   cold_resistance: {

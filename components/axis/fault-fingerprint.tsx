@@ -78,7 +78,7 @@ interface WeighingProps {
 
 function Weighing({ basis, model, winding }: WeighingProps) {
   const [rows, setRows] = useState<readonly TypedHeat[]>([NOTHING]);
-  const { current, resistanceAt20, caseResistance } = model;
+  const { current, holdCurrent, resistanceAt20, caseResistance } = model;
   const measured = rows.flatMap(
     (row) => measurementOf(caseResistance === null ? { ...row, place: "winding" } : row) ?? [],
   );
@@ -88,7 +88,14 @@ function Weighing({ basis, model, winding }: WeighingProps) {
     measured.length === 0
       ? null
       : faultFingerprint(
-          { current, resistanceAt20, windingResistance: winding, caseResistance, spread: CATALOG_SPREAD },
+          {
+            current,
+            holdCurrent,
+            resistanceAt20,
+            windingResistance: winding,
+            caseResistance,
+            spread: CATALOG_SPREAD,
+          },
           measured,
         );
   return (
@@ -108,6 +115,11 @@ function Weighing({ basis, model, winding }: WeighingProps) {
         </Button>
         <FromVerification basis={basis} onTaken={setRows} />
       </div>
+      {holdCurrent === null && (
+        <p className="quiet">
+          The hold current is not known: that the motor stood on it cannot be weighed as an explanation.
+        </p>
+      )}
       {found ? (
         <Found found={found} />
       ) : (
@@ -144,6 +156,7 @@ function HeatFields({ row, number, withCase, put }: HeatFieldsProps) {
       <TextField
         label="Measured"
         unit="°C"
+        help="Standing on run current, settled"
         inputMode="decimal"
         value={row.celsius}
         error={wrong(row.celsius)}

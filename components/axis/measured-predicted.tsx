@@ -21,6 +21,8 @@ const REFUSED = {
   too_few: "Not refined: it takes two temperatures of a motor that had settled.",
   contradictory:
     "Not refined: the temperatures and the catalog contradict each other. Find out which is wrong; measure again with the motor settled.",
+  far_from_catalog:
+    "Not refined, the catalog value is kept: the temperatures would move it by more than 60 %. See whether the motor stood on run current, not on hold current, and had settled.",
 } as const;
 
 type Reading = MeasuredHeatView["readings"][number];
@@ -92,7 +94,7 @@ function Fits({ fits }: { readonly fits: readonly Fit[] }) {
             </NumberCell>
             <td>
               {fit.ok
-                ? `${plural(readings, "temperature")}, with ${Math.round(fit.weight * 100)} % of the weight; the checks use the refined value`
+                ? `${plural(readings, "temperature")}, with ${Math.round(fit.weight * 100)} % of the weight; the checks use the upper end of the interval`
                 : REFUSED[fit.because]}
             </td>
           </tr>

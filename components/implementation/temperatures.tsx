@@ -62,6 +62,7 @@ export function Temperatures({ axes, value, onChange }: TemperaturesProps) {
           <TextField
             label="Measured"
             unit="°C"
+            help="Standing on run current, settled. A driver that falls back to hold current at standstill must be kept from it."
             inputMode="decimal"
             value={celsius}
             onChange={(event) => put(index, { celsius: event.target.value })}

@@ -176,7 +176,7 @@ export const axisAssemblySchema = z.object({
   travel_mm: positive("Travel", "mm", "Linear axes"),
   travel_deg: positive("Travel", "deg", "Rotary axes"),
   coupled_with: z.array(z.string().min(1).max(40)).max(8).optional(),
-  /** Fields of the motor that temperatures measured on this machine have refined; the motor holds the refined values. */
+  /** Fields of the motor that temperatures measured on this machine have refined; the motor holds their upper ends. */
   refined: z.array(refinedFieldSchema).max(4).optional(),
 });
 

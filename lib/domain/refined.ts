@@ -7,10 +7,10 @@ export type RefinableField = (typeof REFINABLE_FIELDS)[number];
 /** A catalog value of one motor that has given way to a refined one; all in K/W. */
 export const refinedFieldSchema = z.object({
   field: z.enum(REFINABLE_FIELDS),
-  /** What the catalog says; the refined value stands in the motor's own field. */
+  /** What the catalog says. */
   catalog: z.number().positive(),
   value: z.number().positive(),
-  /** Ends of the 95 % interval. */
+  /** Ends of the 95 % interval. The upper one, the cautious one, stands in the motor's own field. */
   low: z.number().min(0),
   high: z.number().positive(),
   /** How many measured temperatures it rests on. */

@@ -5,6 +5,7 @@ import { PROBE_UNCERTAINTY } from "./thermal-fit";
 export const EXPLANATIONS = [
   "as_predicted",
   "peak_for_rms",
+  "hold_current",
   "sense_resistor",
   "other_winding",
   "less_airflow",
@@ -18,6 +19,8 @@ export type TellingMeasurement = (typeof TELLING_MEASUREMENTS)[number];
 export interface PredictedHeat {
   /** A rms in one winding. */
   readonly current: number;
+  /** A rms that the driver falls back to at standstill; null where not known. */
+  readonly holdCurrent: number | null;
   /** Ω of one winding at 20 °C. */
   readonly resistanceAt20: number;
   /** K/W, winding to ambient. */
@@ -87,10 +90,11 @@ const CURRENT_SPREAD = 0.06;
 const RESISTANCE_SPREAD = 0.06;
 
 /**
- * Which single explanation fits measured temperatures best, with odds by Bayes' rule. Prior: the five are equally likely.
+ * Which single explanation fits measured temperatures best, with odds by Bayes' rule. Prior: all are equally likely.
  * Likelihood: each temperature is normal about the steady state of `windingSteadyState` with the probe's 2.2 K; that the
  * catalog's thermal resistances are only good to `spread` is one log-normal factor common to all temperatures of a
  * motor, integrated out on a grid. Explanations: peak taken for rms changes the current by √2 and the copper loss by 2,
+ * standing on hold current makes it the hold current (left out where that is not known or is the run current),
  * a sense resistor off by two changes the current by 2 and the loss by 4, each up or down with equal share; another
  * winding has a resistance 1.5 to 4 times as great or small, less airflow a path from case to air 1.2 to 3 times as
  * resistive, each log-uniform. A vaguer explanation thus pays for its freedom.
@@ -100,7 +104,7 @@ export function faultFingerprint(
   predicted: PredictedHeat,
   measurements: readonly HeatMeasurement[],
 ): Fingerprint {
-  const likelihoods = EXPLANATIONS.map((explanation) => {
+  const likelihoods = explanationsOf(predicted).map((explanation) => {
     const states = statesOf(explanation, predicted);
     const logs = states.map((state) => Math.log(state.prior) + logLikelihood(state, measurements));
     return { explanation, states, logs, log: logSum(logs) };
@@ -114,12 +118,19 @@ export function faultFingerprint(
   const explanations = weighed.map(({ explanation, odds, states }) => ({
     explanation,
     odds,
-    factor: Math.exp(states.reduce((sum, { state, share }) => sum + share * Math.log(state.factor), 0)),
+    factor: Math.exp(
+      states.reduce((sum, { state, share }) => sum + (share > 0 ? share * Math.log(state.factor) : 0), 0),
+    ),
   }));
   return {
     explanations: [...explanations].sort((one, other) => other.odds - one.odds),
     telling: mostTelling(weighed, measurements),
   };
+}
+
+function explanationsOf({ current, holdCurrent }: PredictedHeat): readonly Explanation[] {
+  const differs = current > 0 && holdCurrent !== null && holdCurrent !== current;
+  return differs ? EXPLANATIONS : EXPLANATIONS.filter((explanation) => explanation !== "hold_current");
 }
 
 function logSum(logs: readonly number[]): number {
@@ -128,7 +139,10 @@ function logSum(logs: readonly number[]): number {
 }
 
 /** Factors of an explanation with their shares. */
-function factorsOf(explanation: Explanation): readonly { readonly factor: number; readonly share: number }[] {
+function factorsOf(
+  explanation: Explanation,
+  { current, holdCurrent }: PredictedHeat,
+): readonly { readonly factor: number; readonly share: number }[] {
   const either = (factor: number) => [
     { factor, share: 0.5 },
     { factor: 1 / factor, share: 0.5 },
@@ -138,6 +152,8 @@ function factorsOf(explanation: Explanation): readonly { readonly factor: number
       return [{ factor: 1, share: 1 }];
     case "peak_for_rms":
       return either(Math.SQRT2);
+    case "hold_current":
+      return [{ factor: (holdCurrent ?? current) / current, share: 1 }];
     case "sense_resistor":
       return either(2);
     case "other_winding":
@@ -157,7 +173,7 @@ function spread([from, to]: readonly [number, number]): number[] {
 
 function statesOf(explanation: Explanation, predicted: PredictedHeat): State[] {
   const nuisances = nuisanceGrid(predicted.spread);
-  return factorsOf(explanation).flatMap(({ factor, share }) =>
+  return factorsOf(explanation, predicted).flatMap(({ factor, share }) =>
     nuisances.map(({ scale, share: of }) => ({
       ...stateAt(explanation, { predicted, factor, scale }),
       prior: share * of,
@@ -180,6 +196,8 @@ function nuisanceGrid(deviation: number): readonly { readonly scale: number; rea
   }));
 }
 
+const OF_CURRENT: readonly Explanation[] = ["peak_for_rms", "hold_current", "sense_resistor"];
+
 interface At {
   readonly predicted: PredictedHeat;
   readonly factor: number;
@@ -191,7 +209,7 @@ function stateAt(
   explanation: Explanation,
   { predicted, factor, scale }: At,
 ): Omit<State, "prior" | "factor"> {
-  const ofCurrent = explanation === "peak_for_rms" || explanation === "sense_resistor";
+  const ofCurrent = OF_CURRENT.includes(explanation);
   const air = explanation === "less_airflow" ? factor : 1;
   const { caseResistance } = predicted;
   // Only the path from the case to the air changes; that from the winding to the case is inside the motor.

@@ -7,7 +7,8 @@ export interface RefinedOfAxis extends RefinedField {
 }
 
 /**
- * The assembly with thermal resistances refined by measured temperatures. One whose catalog value is no longer what the
+ * The assembly with thermal resistances refined by measured temperatures: the upper end of each 95 % interval, K/W, so
+ * that what is not known of it counts against the motor and never for it. One whose catalog value is no longer what the
  * motor has (another motor, other data, a value recorded on the machine itself) is left out.
  */
 export function withRefined(assembly: Assembly, refined: readonly RefinedOfAxis[]): Assembly {
@@ -20,7 +21,7 @@ function refineAxis(axis: AxisAssembly, refined: readonly RefinedOfAxis[]): Axis
     (one) => one.axis.toLowerCase() === axis.axis.toLowerCase() && axis.motor?.[one.field] === one.catalog,
   );
   if (own.length === 0) return axis;
-  const values = Object.fromEntries(own.map(({ field, value }) => [field, value]));
+  const values = Object.fromEntries(own.map(({ field, high }) => [field, high]));
   return {
     ...axis,
     motor: { ...axis.motor, ...values },

@@ -112,8 +112,8 @@ function refinedNote({ needs }: CheckWords, { hardware: { refined = [] } }: Axis
   const told = refined.filter(({ field }) => needs.includes(`motor.${field}`));
   return told
     .map(
-      ({ field, value, catalog, readings }) =>
-        ` Its thermal resistance from ${field.startsWith("case") ? "case" : "winding"} to ambient, ${plain(value)} K/W, is refined from ${plural(readings, "temperature")} measured on this machine; the catalog says ${plain(catalog)} K/W.`,
+      ({ field, value, high, catalog, readings }) =>
+        ` Its thermal resistance from ${field.startsWith("case") ? "case" : "winding"} to ambient is refined from ${plural(readings, "temperature")} measured on this machine; the catalog says ${plain(catalog)} K/W. The check takes the upper end of the 95 % interval, ${plain(high)} K/W, in place of its middle, ${plain(value)} K/W.`,
     )
     .join("");
 }

@@ -8,6 +8,8 @@ export interface HeatModel {
   readonly axis: string;
   /** A rms in one winding. */
   readonly current: number;
+  /** A rms at standstill; null where the text does not say. */
+  readonly holdCurrent: number | null;
   /** Ω of one winding as connected, at 20 °C. */
   readonly resistanceAt20: number;
   /** K/W, winding to ambient and case to ambient; null where not stated. */
@@ -42,6 +44,7 @@ function modelOf(view: AxisView): KnownHeatModel | Missing {
     value: {
       axis: view.axis,
       ...parts.values,
+      holdCurrent: valueOf(view.quantity("hold_current_rms")),
       windingResistance: valueOf(hardware(view, "motor", "winding_to_ambient_k_per_w")),
       caseResistance: valueOf(hardware(view, "motor", "case_to_ambient_k_per_w")),
       ambient: valueOf(motorAmbient(view)),

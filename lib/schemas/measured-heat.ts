@@ -28,7 +28,7 @@ const fitSchema = z.discriminatedUnion("ok", [
     /** Share of 1 that the measurements have in the value. */
     weight: z.number(),
   }),
-  z.object({ ok: z.literal(false), because: z.enum(["too_few", "contradictory"]) }),
+  z.object({ ok: z.literal(false), because: z.enum(["too_few", "contradictory", "far_from_catalog"]) }),
 ]);
 
 export const measuredHeatSchema = z.object({

@@ -7,6 +7,7 @@ import type { AxisBasis } from "@/components/axis/types";
 import { FaultFingerprint } from "@/components/axis/fault-fingerprint";
 import { MeasuredPredicted } from "@/components/axis/measured-predicted";
 import { ToleranceOdds } from "@/components/axis/tolerance-odds";
+import { Temperatures } from "@/components/implementation/temperatures";
 import { runOdds } from "@/lib/review/odds-protocol";
 import type { OddsInput } from "@/lib/review/tolerance-odds";
 import type { MeasuredHeatView } from "@/lib/schemas/measured-heat";
@@ -79,7 +80,7 @@ test("a typed temperature gets its explanations with odds, and the next measurem
   const rows = within(screen.getByRole("table", { name: /Explanations/ }))
     .getAllByRole("row")
     .slice(1);
-  expect(rows).toHaveLength(5);
+  expect(rows).toHaveLength(6);
   const percent = rows.map((row) => Number(/(\d+)\s%/.exec(row.textContent ?? "")?.[1]));
   expect(percent).toEqual([...percent].sort((a, b) => b - a));
   expect(screen.getByText(/To tell them apart: /)).toBeTruthy();
@@ -130,6 +131,31 @@ test("measured temperatures stand beside the predicted ones, a refined value bes
   for (const words of ["7 K/W", "9.4 K/W", "8 K/W to 10.8 K/W", "2 temperatures, with 93 % of the weight"])
     expect(refined.textContent?.replaceAll("\u00a0", " ")).toContain(words);
   expect(screen.getByText("The ambient temperature was not measured beside it.")).toBeTruthy();
+});
+
+test("a fit far from the catalog is refused with a sentence", async () => {
+  heat = {
+    readings: [READING],
+    fits: [
+      {
+        axis: AXIS_BASIS.axis,
+        field: "case_to_ambient_k_per_w",
+        catalog: 7,
+        readings: 2,
+        fit: { ok: false, because: "far_from_catalog" },
+      },
+    ],
+  };
+  show(<MeasuredPredicted basis={AXIS_BASIS} />);
+  expect(await screen.findByText(/the catalog value is kept: .*by more than 60 %/)).toBeTruthy();
+});
+
+test("the field of a measured temperature says how the motor must stand", () => {
+  const row = { axis: "x", place: "case", celsius: "" } as const;
+  show(<Temperatures axes={["x"]} value={[row]} onChange={() => undefined} />);
+  const help = screen.getByLabelText("Measured").getAttribute("aria-describedby")?.split(" ") ?? [];
+  const words = help.map((id) => document.getElementById(id)?.textContent).join(" ");
+  expect(words).toContain("Standing on run current, settled");
 });
 
 test("an axis that was never measured says what belongs there", async () => {

@@ -5,6 +5,7 @@ import { windingSteadyState } from "@/lib/physics/motor-heat";
 
 const PREDICTED = {
   current: 0.7,
+  holdCurrent: 0.42,
   resistanceAt20: 2.1,
   windingResistance: 8.5,
   caseResistance: 7,
@@ -33,12 +34,22 @@ describe("the fingerprint of a fault", () => {
     ["as_predicted", truth()],
     ["peak_for_rms", truth({ current: Math.SQRT2 })],
     ["peak_for_rms", truth({ current: Math.SQRT1_2 })],
+    ["hold_current", truth({ current: 0.6 })],
     ["sense_resistor", truth({ current: 2 })],
     ["other_winding", truth({ resistance: 2.9 })],
     ["less_airflow", truth({ air: 2.2 })],
   ] as const)("finds %s in the temperatures that it gives", (explanation, measured) => {
     const { explanations } = first(measured);
     expect(explanations[0]?.explanation).toBe(explanation);
+  });
+
+  test("leaves hold current out where it is not known or is the run current, and weighs one of 0", () => {
+    const odds = (holdCurrent: number | null, measured: HeatMeasurement[]) =>
+      faultFingerprint({ ...PREDICTED, holdCurrent }, measured).explanations;
+    for (const same of [null, PREDICTED.current])
+      expect(odds(same, truth()).map(({ explanation }) => explanation)).not.toContain("hold_current");
+    expect(odds(0, truth({ current: 0 }))[0]).toMatchObject({ explanation: "hold_current", factor: 0 });
+    expect(odds(0, truth()).find(({ explanation }) => explanation === "hold_current")?.factor).toBe(0);
   });
 
   test("finds the factor of a path to the air that is more resistive", () => {

@@ -72,6 +72,19 @@ describe("a thermal resistance from settled temperatures", () => {
     expect(fitThermalResistance(8.5, readings)).toEqual({ ok: false, because: "contradictory" });
   });
 
+  test("is refused where it would lead more than two deviations away from the catalog", () => {
+    // By hand: on half the current the loss is a quarter of what is reckoned, so readings say 0.25·8.5 K/W: 75 % below the
+    // catalog, where two deviations are 60 %.
+    const onHold = at(0.25 * 8.5, 8, 8, 8);
+    expect(fitThermalResistance(8.5, onHold)).toEqual({ ok: false, because: "far_from_catalog" });
+    expect(fitThermalResistance(8.5, at(1.75 * 8.5, 8, 8))).toEqual({
+      ok: false,
+      because: "far_from_catalog",
+    });
+    expect(fitThermalResistance(8.5, at(0.45 * 8.5, 8, 8)).ok).toBe(true);
+    expect(fitThermalResistance(8.5, at(1.55 * 8.5, 8, 8)).ok).toBe(true);
+  });
+
   test("has a wider interval where readings scatter more than they should", () => {
     const calm = fitted(8.5, at(9, 5, 5));
     const wild = fitted(8.5, [...at(7.8, 5), ...at(10.2, 5)]);
