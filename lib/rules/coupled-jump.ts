@@ -1,5 +1,4 @@
-import { ALLOWED_SHARE_OF_JUMP, speedJumpBound } from "@/lib/physics/start-stop";
-import { rotorTeeth } from "@/lib/physics/drive-train";
+import { allowedJump } from "@/lib/physics/start-stop";
 import { busierMotor, crossedInertia } from "@/lib/physics/coupled";
 import { judged, judgeUpper, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
@@ -8,10 +7,8 @@ import { machineRule } from "./check";
 import { bothMissing, fromText, gather, hardware, merged } from "./data";
 import { coupledPairs } from "./quantities/coupled";
 import { force, FORCE_READS, INERTIA_READS, moved, shaftInertia } from "./quantities/load";
-import { GEOMETRY_READS, radius } from "./quantities/geometry";
 import { readsOf } from "./quantities/table";
-import { HOLDING_READS, holdingTorque } from "./quantities/torque";
-import { isClosedLoop, notCovered } from "./quantities/open-loop";
+import { driven, DRIVEN_READS, holdingTorque } from "./quantities/torque";
 import { plain } from "./show";
 import type { AxisView, Missing, RuleContext } from "./types";
 
@@ -28,33 +25,32 @@ interface Jump {
 
 /** The jump of the busier motor at a corner where both axes jump; the first axis' motor stands for both. */
 function jumpOf([one, other]: readonly [AxisView, AxisView]): Jump | Missing {
-  if (isClosedLoop(one.hardware)) return notCovered(one.axis);
+  const motor = driven(one);
   const first = gather({
     corner: fromText(one, "corner_speed"),
     holding: holdingTorque(one, one.quantity("winding_current_rms")),
     force: force(one),
     mass: moved(one),
     shaft: shaftInertia(one),
-    radius: radius(one),
     efficiency: hardware(one, "drive_train", "efficiency"),
-    stepAngle: hardware(one, "motor", "step_angle_deg"),
   });
   const second = gather({ corner: fromText(other, "corner_speed"), force: force(other), mass: moved(other) });
-  if (!first.ok) return second.ok ? first : bothMissing(first, second);
-  if (!second.ok) return second;
+  const lacks = [motor, first, second].flatMap((part) => (part.ok ? [] : [part]));
+  if (!motor.ok || !first.ok || !second.ok) return lacks.reduce(bothMissing);
   const [x, y] = [first.values, second.values];
-  const bound = speedJumpBound({
-    torque: x.holding,
-    loadTorque: ((x.force + y.force) * x.radius) / (2 * x.efficiency),
-    inertia: crossedInertia({ masses: [x.mass, y.mass], radius: x.radius, motorInertia: x.shaft }),
-    rotorTeeth: rotorTeeth(x.stepAngle),
+  const { radius } = motor;
+  const allowed = allowedJump({
+    motor: motor.motor,
+    holdingTorque: x.holding,
+    loadTorque: ((x.force + y.force) * radius) / (2 * x.efficiency),
+    inertia: crossedInertia({ masses: [x.mass, y.mass], radius, motorInertia: x.shaft }),
   });
   return {
     ok: true,
     axes: [one, other],
-    jump: busierMotor(x.corner, y.corner, x.radius),
-    allowed: ALLOWED_SHARE_OF_JUMP * bound,
-    assumed: merged(first.assumed, second.assumed),
+    jump: busierMotor(x.corner, y.corner, radius),
+    allowed: allowed.jump,
+    assumed: [motor.assumed, first.assumed, second.assumed].reduce(merged),
   };
 }
 
@@ -81,23 +77,23 @@ export const COUPLED_JUMP = machineRule({
   title: "Corner speed of shared motors",
   compares:
     "The jump of the busier of two shared motors, when both axes jump at a corner, with what it follows.",
-  formula: "(v1 + v2)/r ≤ 0.5·Δω with J = Jm + (m1 + m2)·r²/4 and T_L = (F1 + F2)·r/(2·η)",
-  source: "Kinematics of crossed belts; equal-area criterion, half of the bound is the product's choice",
+  formula:
+    "(v1 + v2)/r ≤ 0.5·Δω with J = Jm + (m1 + m2)·r²/4, T_L = (F1 + F2)·r/(2·η), and the pull-out torque in place of Th(I) above the voltage-limit speed",
+  source:
+    "Kinematics of crossed belts; equal-area criterion and conservative pull-out, half of the bound is the product's choice",
   needs: [
-    ...readsOf("winding_current_rms"),
-    ...HOLDING_READS,
+    ...readsOf("winding_current_rms", "winding_c"),
+    ...DRIVEN_READS,
     ...FORCE_READS,
     ...INERTIA_READS,
-    ...GEOMETRY_READS,
     "corner_speed",
     "drive_train.efficiency",
-    "motor.step_angle_deg",
     "axis.coupled_with",
     "driver.feedback",
   ],
   margin: "near above 80 % of the allowed jump, over above it",
   caution: null,
-  parameters: ["corner_speed"],
+  parameters: ["corner_speed", "run_current", "reference_voltage", "current_scale"],
   candidates: (context) =>
     coupledPairs(context)
       .flat()

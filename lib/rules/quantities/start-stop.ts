@@ -1,6 +1,5 @@
-import { conservativePullOut, voltageLimitSpeed } from "@/lib/physics/pull-out";
 import { magneticStiffness, naturalFrequency } from "@/lib/physics/resonance";
-import { ALLOWED_SHARE_OF_JUMP, speedJumpBound } from "@/lib/physics/start-stop";
+import { allowedJump } from "@/lib/physics/start-stop";
 import { rotorTeeth } from "@/lib/physics/drive-train";
 import { bothMissing, computed, gather, hardware, merged } from "../data";
 import { plain, show } from "../show";
@@ -23,13 +22,13 @@ export const START_STOP_SPEED: QuantityDefinition = {
     if (!parts.ok) return parts;
     const { holding, loadTorque: load, inertia } = parts.values;
     const teeth = motor.motor.rotorTeeth;
-    const allowed = (torque: number) =>
-      ALLOWED_SHARE_OF_JUMP * speedJumpBound({ torque, loadTorque: load, inertia, rotorTeeth: teeth });
-    const settled = allowed(holding);
-    // Above the voltage-limit speed the holding torque is not there to catch the rotor: the pull-out torque is.
-    const torque =
-      settled > voltageLimitSpeed(motor.motor) ? conservativePullOut(motor.motor, settled) : holding;
-    const speed = allowed(torque) * motor.radius;
+    const { jump, torque } = allowedJump({
+      motor: motor.motor,
+      holdingTorque: holding,
+      loadTorque: load,
+      inertia,
+    });
+    const speed = jump * motor.radius;
     return computed(
       speed,
       merged(motor.assumed, parts.assumed),

@@ -101,6 +101,7 @@ describe("what a field unlocks", () => {
       "Corner speed",
       "Supply against the winding's inductance",
       "Motors shared by two axes",
+      "Corner speed of shared motors",
     ]);
     expect(unlockedBy("driver", "set_point.sense_resistor_rating_w")).toEqual(["Heat of the sense resistor"]);
     expect(unlockedBy("axis", "travel_mm")).toContain("Maximum speed reached");
