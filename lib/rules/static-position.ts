@@ -57,7 +57,7 @@ export const STATIC_POSITION = axisRule({
     "T·sin(Nr·θ) about a step (Acarnley, Stepping Motors); 0.7246 is the greatest load that may come suddenly, from the equal-area criterion; 0.5 is the product's choice",
   needs: [...readsOf("static_position_error"), "load.holding_brake"],
   margin:
-    "near above 50 % of the torque at standstill (a third of a full step of error), over above 72.5 % (near where friction alone or a holding brake accounts for it)",
+    "near above 50 % of the torque at standstill (a third of a full step of error), over above 72.5 % (near where friction alone or a holding brake accounts for it); no verdict where weight or an external force pulls and the text has no hold current",
   caution: null,
   parameters: standstillParameters,
   candidates: (axis) => raiseCurrent(axis, standstillCurrent(axis)),

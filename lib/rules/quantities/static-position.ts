@@ -1,6 +1,6 @@
 import { rotorTeeth } from "@/lib/physics/drive-train";
 import { positionError } from "@/lib/physics/static-torque";
-import { computed, gather, hardware, motorCount, orDefault } from "../data";
+import { axisPath, computed, gather, given, hardware, missing, motorCount, orDefault } from "../data";
 import { plain, show } from "../show";
 import type { AxisView, Datum, Missing } from "../types";
 import type { CurrentParameter } from "./set-point-current";
@@ -9,7 +9,11 @@ import { GEOMETRY_READS, lengthUnit, radius } from "./geometry";
 import { FORCE_READS, weight } from "./load";
 import { HOLDING_READS, holdingTorque } from "./torque";
 
-/** The current at standstill: the hold current where the text lowers it, else the run current. */
+/**
+ * The current at standstill: the hold current where the text states one, else the run current. That a driver without a
+ * stated hold current keeps its run current is an assumption, which `standstillLoad` names, or refuses where a weight
+ * or an external force pulls on the axis. Source: common practice; many drivers lower their current by themselves.
+ */
 export function standstillCurrent(axis: AxisView): CurrentParameter {
   return axis.parameter("hold_current") || axis.parameter("hold_scale") ? "hold_current" : "run_current";
 }
@@ -29,6 +33,7 @@ export interface StandstillLoad {
 export function standstillLoad(axis: AxisView): StandstillLoad | Missing {
   const parts = gather({
     holding: standstillTorque(axis),
+    stated: statedStandstill(axis),
     friction: frictionForce(axis),
     external: externalForce(axis),
     weight: weight(axis),
@@ -46,6 +51,18 @@ export function standstillLoad(axis: AxisView): StandstillLoad | Missing {
     radius: r,
     assumed: parts.assumed,
   };
+}
+
+/**
+ * The hold current is a datum of its own: where the text has none, nobody knows what a driver lowers by itself. Under
+ * friction alone the run current may stand in for it, and counts as assumed; under a load that never rests nothing may.
+ */
+function statedStandstill(axis: AxisView): Datum {
+  if (standstillCurrent(axis) === "hold_current") return given(0);
+  const path = axisPath(axis, "hold_current");
+  const pull = gather({ external: externalForce(axis), weight: weight(axis) });
+  const pulled = pull.ok && (pull.values.external !== 0 || pull.values.weight !== 0);
+  return pulled ? missing(path) : given(0, [path]);
 }
 
 function standstillTorque(axis: AxisView) {
