@@ -1,8 +1,9 @@
 import { exceeds, hint, judged } from "./assessment";
 import type { Assessment } from "./assessment";
 import { axisRule } from "./check";
-import { fromText, gather, hardware } from "./data";
+import { gather, hardware } from "./data";
 import { GEOMETRY_READS, radius, speedUnit } from "./quantities/geometry";
+import { dwellSpeeds } from "./quantities/motion";
 import { readsOf } from "./quantities/table";
 import { show } from "./show";
 import type { AxisView } from "./types";
@@ -14,12 +15,6 @@ interface Excitation {
   /** m/s */
   readonly speed: number;
   readonly frequency: number;
-}
-
-/** Speeds at which the axis dwells: its highest, and the one at which it seeks its reference. */
-function dwellSpeeds(axis: AxisView, peak: number): number[] {
-  const seeking = fromText(axis, "reference_run_speed", "positive");
-  return seeking.ok ? [peak, seeking.value] : [peak];
 }
 
 /** What shakes the load at a speed: each full step, each fourth of them, each tooth of the belt. */

@@ -60,6 +60,15 @@ export const PEAK_SPEED: QuantityDefinition = {
   },
 };
 
+/**
+ * Speeds at which the axis dwells, m/s (rad/s): its highest first, and the one at which it seeks its reference where the
+ * text has one. Ramps pass through all others.
+ */
+export function dwellSpeeds(axis: AxisView, peak: number): readonly number[] {
+  const seeking = fromText(axis, "reference_run_speed", "positive");
+  return seeking.ok ? [peak, seeking.value] : [peak];
+}
+
 export const STEP_RATE: QuantityDefinition = {
   reads: ["max_speed", "steps_per_mm"],
   from: ["steps_per_mm_expected"],
