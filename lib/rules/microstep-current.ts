@@ -5,6 +5,7 @@ import type { Assessment } from "./assessment";
 import { currentParameters } from "./candidates";
 import { axisRule } from "./check";
 import { fromText, gather } from "./data";
+import { isClosedLoop, notCovered } from "./quantities/open-loop";
 import { readsOf } from "./quantities/table";
 import { plain, show, showPeak } from "./show";
 import type { AxisView } from "./types";
@@ -13,6 +14,7 @@ function assess(axis: AxisView): Assessment {
   const decay = axis.hardware.driver?.decay_mode;
   // Mixed and fast decay can bring the current down within a cycle: the check has a meaning for slow decay only.
   if (decay !== undefined && decay !== "slow") return null;
+  if (isClosedLoop(axis.hardware)) return notCovered(axis.axis);
   const parts = gather({
     least: axis.quantity("minimum_current_peak"),
     current: axis.quantity("winding_current_rms"),
@@ -40,7 +42,7 @@ export const MICROSTEP_CURRENT = axisRule({
     "The lowest current that the driver can regulate in slow decay with the current of the first microstep.",
   formula: "t_min·f·V/R ≤ I_pk·sin(90°/microsteps)",
   source: "Driver data sheets: the shortest on-time of a slow-decay chopper",
-  needs: [...readsOf("minimum_current_peak", "winding_current_rms"), "microsteps"],
+  needs: [...readsOf("minimum_current_peak", "winding_current_rms"), "microsteps", "driver.feedback"],
   margin: "near where the lowest current is the greater one, never over",
   caution: null,
   parameters: (axis) => ["microsteps", ...currentParameters(axis, "run_current")],

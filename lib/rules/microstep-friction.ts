@@ -6,6 +6,7 @@ import { axisRule } from "./check";
 import { fromText, gather, motorCount } from "./data";
 import { GEOMETRY_READS, radius } from "./quantities/geometry";
 import { frictionForce } from "./quantities/static-position";
+import { isClosedLoop, notCovered } from "./quantities/open-loop";
 import { readsOf } from "./quantities/table";
 import { HOLDING_READS, holdingTorque } from "./quantities/torque";
 import { plain, show } from "./show";
@@ -14,6 +15,7 @@ import type { AxisView } from "./types";
 const FOURTH = 0.25;
 
 function assess(axis: AxisView): Assessment {
+  if (isClosedLoop(axis.hardware)) return notCovered(axis.axis);
   const parts = gather({
     holding: holdingTorque(axis, axis.quantity("winding_current_rms")),
     force: frictionForce(axis),
@@ -54,6 +56,7 @@ export const MICROSTEP_FRICTION = axisRule({
     "load.friction_n",
     "load.friction_nm",
     "microsteps",
+    "driver.feedback",
   ],
   margin: "near where more than a quarter of a full step passes first, never over",
   caution: null,
