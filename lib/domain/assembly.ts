@@ -55,10 +55,10 @@ export const setPointSchema = z.object({
   internal_resistance_ohm: notNegative("Internal resistance", "Ω", "Added to the sense resistance"),
   steps: positive("Steps of the current scale", ""),
   overall_scale: within(0, 1, "Overall scale", "", "As a share of 1"),
-  sense_resistance_ohm: positive(
+  sense_resistance_ohm: notNegative(
     "Sense resistance",
     "Ω",
-    "Read its marking on the board itself: boards of one name differ",
+    "Read its marking on the board itself: boards of one name differ. 0: the driver has none",
   ),
   sense_resistor_rating_w: positive("Rating of the sense resistor", "W"),
 });

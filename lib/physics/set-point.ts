@@ -1,6 +1,6 @@
 /**
  * Current, A, of a driver that compares the sense voltage with a divided reference: I = Vref/(k·Rs).
- * Vref in V, k the divider of the comparator (no unit), Rs in Ω; peak or rms as the driver's data sheet says.
+ * Vref in V, k the divider of the comparator (no unit), Rs in Ω, both more than 0; peak or rms as the driver's data sheet says.
  * Source: the comparator's balance, Rs·I = Vref/k.
  */
 export function referenceVoltageCurrent(input: {

@@ -185,7 +185,8 @@ function drawOne({ input, axis, spreads }: OddsInput, random: () => number): Rul
   const warmer = spreads.ambientK * (2 * random() - 1);
   const isOwn = (name: string | null): boolean => name?.toLowerCase() === axis.toLowerCase();
   const own = input.assembly.axes.find((one) => isOwn(one.axis));
-  const senses = own?.driver?.set_point?.sense_resistance_ohm !== undefined;
+  // A resistance of 0 says that there is no resistor whose tolerance could bear on the current.
+  const senses = (own?.driver?.set_point?.sense_resistance_ohm ?? 0) > 0;
   const assembly = withSupply(input.assembly, supply, warmer);
   return {
     ...input,

@@ -81,7 +81,10 @@ function hardwareSteps(axis: AxisView, name: CurrentParameter): ProvenanceStep[]
   const from = "hardware";
   if (!setPoint.ok) return [{ label: "Set-point", text: "not known", from: "nobody" }];
   const sense = axis.hardware.driver?.set_point?.sense_resistance_ohm;
-  const resistor = sense === undefined ? [] : [{ label: "Sense resistance", text: show(sense, "Ω"), from }];
+  const resistor =
+    sense === undefined
+      ? []
+      : [{ label: "Sense resistance", text: sense === 0 ? "none" : show(sense, "Ω"), from }];
   return [...resistor, { label: "Set-point", text: setPoint.formula(), from }];
 }
 

@@ -10,7 +10,8 @@ const NEAR = 0.5;
 
 /**
  * A driver that is told its current directly has a sense resistor all the same, or its bridge would not know when to
- * stop: the check stays, and says what is missing where nobody has recorded the resistor.
+ * stop: the check stays, and says what is missing where nobody has recorded the resistor. Only a resistance recorded as
+ * 0 says that there is none (the driver measures in its own bridge), and then there is nothing to heat.
  */
 export const SENSE_RESISTOR = axisRule({
   id: "sense-resistor",
@@ -25,6 +26,8 @@ export const SENSE_RESISTOR = axisRule({
   parameters: (axis) => currentParameters(axis, "run_current"),
   candidates: lowerCurrent,
   assess: (axis) => {
+    const sense = setPoint(axis, "sense_resistance_ohm");
+    if (sense.ok && sense.value === 0) return null;
     const parts = gather({
       power: axis.quantity("sense_resistor_power"),
       rating: setPoint(axis, "sense_resistor_rating_w"),

@@ -7,7 +7,7 @@ import type { Assessment, Judged } from "./assessment";
 import { currentParameters, lower, set } from "./candidates";
 import { axisRule } from "./check";
 import type { Candidate } from "./clearing";
-import { axisPath, fromText, gather, given, missing, setPoint } from "./data";
+import { axisPath, fromText, gather, given, missing, setPoint, unusable } from "./data";
 import { CURRENT_AGREEMENT, disagreement, textCurrent } from "./quantities/current";
 import { setPointCurrent, SET_POINT_READS } from "./quantities/set-point-current";
 import type { CurrentParameter } from "./quantities/set-point-current";
@@ -117,16 +117,26 @@ function currentRatio(axis: AxisView, stated: number): Datum {
       method === "digital_scale" ? internal : given(internal.ok && method === "direct" ? internal.value : 0),
   });
   if (!parts.ok) return parts;
-  return given((stated + parts.values.internal) / (parts.values.sense + parts.values.internal));
+  const own = parts.values.sense + parts.values.internal;
+  if (own === 0)
+    return unusable(
+      "The text reckons with a sense resistance, but the driver is recorded without a sense resistor.",
+      axisPath(axis, "driver.set_point.sense_resistance_ohm"),
+    );
+  return given((stated + parts.values.internal) / own);
 }
 
 /** The sense resistance that the text reckons with beside the machine's own, which counts. */
 function sensePart(axis: AxisView): Part | null {
-  if (!axis.parameter("sense_resistance")) return null;
+  const found = axis.parameter("sense_resistance");
+  if (!found) return null;
+  const machine = setPoint(axis, "sense_resistance_ohm");
+  // Both say that there is no resistor, and there is nothing to compare.
+  if (found.value === 0 && machine.ok && machine.value === 0) return null;
   const stated = fromText(axis, "sense_resistance", "positive");
   const parts = gather({
     stated,
-    own: setPoint(axis, "sense_resistance_ohm"),
+    own: machine,
     ratio: stated.ok ? currentRatio(axis, stated.value) : stated,
   });
   if (!parts.ok) return parts;
@@ -142,7 +152,7 @@ function sensePart(axis: AxisView): Part | null {
       sentence: () =>
         level === "within"
           ? `The text reckons with the sense resistance that the machine has, ${show(own, "Ω")}.`
-          : `The text reckons with a sense resistance of ${show(reckoned, "Ω")}, the machine has ${show(own, "Ω")}${carriedWords(axis, ratio)}`,
+          : `The text reckons with a sense resistance of ${show(reckoned, "Ω")}, the machine has ${own === 0 ? "no sense resistor" : show(own, "Ω")}${carriedWords(axis, ratio)}`,
       formula: () =>
         `|${plain(ratio)} − 1| = ${formatNumber(apart, 2)} ${upperSign(verdict)} ${CURRENT_AGREEMENT} in current, from ${show(reckoned, "Ω")} beside ${show(own, "Ω")}`,
     },

@@ -16,6 +16,7 @@ import {
   motorCount,
   orDefault,
   setPoint,
+  unusable,
 } from "../data";
 import type { Gathered } from "../data";
 import { plain, show, showPeak, showRms } from "../show";
@@ -77,6 +78,7 @@ function fromReference(axis: AxisView, set: Datum): SetPointCurrent {
   const basis = axis.hardware.driver?.set_point?.basis;
   if (!parts.ok || basis === undefined) return lacking(axis, parts, basis);
   const { set: voltage, gain, sense } = parts.values;
+  if (sense === 0) return noResistor(axis, "reference_voltage");
   const current = referenceVoltageCurrent({ referenceVoltage: voltage, gain, senseResistance: sense });
   return result(axis, {
     current,
@@ -113,6 +115,7 @@ function fromScale(axis: AxisView, parameter: ParameterName, set: Datum): SetPoi
   });
   if (!parts.ok) return { ...parts, parameter };
   const { set: scale, steps, overall, fullScale, sense, internal } = parts.values;
+  if (sense + internal === 0) return noResistor(axis, parameter);
   const current = digitalScaleCurrent({
     scale,
     steps,
@@ -130,6 +133,12 @@ function fromScale(axis: AxisView, parameter: ParameterName, set: Datum): SetPoi
     words: () =>
       `${factor}(${plain(scale)} + 1) / ${plain(steps)} · ${show(fullScale, "V")} / (${show(sense, "Ω")} + ${show(internal, "Ω")})`,
   });
+}
+
+/** A set-point is a voltage over a resistance: where that is recorded as 0, it says no current. */
+function noResistor(axis: AxisView, parameter: ParameterName): SetPointCurrent {
+  const reason = "The driver is recorded without a sense resistor, so that its set-point gives no current.";
+  return { ...unusable(reason, axisPath(axis, "driver.set_point.sense_resistance_ohm")), parameter };
 }
 
 function lacking(axis: AxisView, parts: Gathered<object>, basis: Basis | undefined): SetPointCurrent {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
 import type { SetPoint } from "@/lib/domain/assembly";
+import { axisModel } from "@/lib/rules/axis-model";
 import { assemblyWith, EXAMPLE_TEXT, texts, textsWithout, world } from "./world";
 import type { Texts } from "./world";
 
@@ -137,6 +138,56 @@ describe("the register step", () => {
     expect(sentence).toContain("the register ends there");
     expect(sentence).toContain("a sense resistance of 0.22 Ω, the machine has 0.11 Ω");
     expect(clearingValue).toBeNull();
+  });
+});
+
+describe("a driver recorded without a sense resistor", () => {
+  const without = (text: Texts, setPoint: SetPoint = { method: "direct" }) =>
+    withSetPoint(text, { ...setPoint, sense_resistance_ohm: 0 });
+
+  it("has its torque checked, with nothing for a resistor in R, and no resistor to heat", () => {
+    const found = without(texts({}));
+    expect(found.has("sense-resistor")).toBe(false);
+    expect(["within", "near", "over"]).toContain(found.finding("torque-margin").level);
+    // By hand: 2.1 Ω at the temperature of the winding, 0.25 Ω of the bridge, and no more.
+    const hot = 2.1 * ((234.5 + found.quantity("winding_c")!) / 254.5) + 0.25;
+    const model = axisModel(found.input, "x");
+    expect(model.ok && model.value.resistance).toBeCloseTo(hot, 12);
+  });
+
+  it("gets no current from a reference voltage, which would be divided by nothing", () => {
+    const found = without(
+      { ...NO_CURRENT, ...volts(0.9) },
+      { method: "reference_voltage", gain: 8, basis: "peak" },
+    );
+    for (const ruleId of ["run-current-motor", "set-point"])
+      expect(found.finding(ruleId)).toMatchObject({
+        level: "cannot",
+        needs: ["axes.x.driver.set_point.sense_resistance_ohm"],
+        sentence: expect.stringContaining("without a sense resistor"),
+      });
+  });
+
+  it("gets its current from a register step over its internal resistance alone", () => {
+    const found = without({ ...NO_CURRENT, ...register(15) }, { ...SCALE, internal_resistance_ohm: 0.25 });
+    // By hand: 16/32 of 0.325 V over 0.25 Ω is a peak of 0.65 A.
+    expect(found.quantity("winding_current_rms")).toBeCloseTo(0.65 / Math.SQRT2, 12);
+    const nothing = without({ ...NO_CURRENT, ...register(15) }, { ...SCALE, internal_resistance_ohm: 0 });
+    expect(nothing.quantity("winding_current_rms")).toBeUndefined();
+  });
+
+  it("cannot be held against a resistance that the text reckons with", () => {
+    const found = without(texts({ sense_resistance: { typed: 0.1, unit: "ohm" } }));
+    expect(found.finding("set-point")).toMatchObject({
+      level: "cannot",
+      sentence: expect.stringContaining("recorded without a sense resistor"),
+    });
+    const agreed = without(texts({ sense_resistance: { typed: 0, unit: "ohm" }, ...volts(0.9) }), {
+      method: "transconductance",
+      gain_a_per_v: 1.25,
+      basis: "peak",
+    });
+    expect(agreed.finding("set-point").level).toBe("within");
   });
 });
 
