@@ -7,7 +7,10 @@ const driver = CATALOG_DATA.driver;
 
 describe("the fields of a form", () => {
   it("have a label for every kind, and numbers of a dimension have a unit", () => {
-    const unitless = ["gain", "steps", "overall_scale", "teeth", "ratio", "efficiency", "tolerance"];
+    const unitless = [
+      ...["gain", "steps", "overall_scale", "teeth", "ratio", "efficiency", "tolerance"],
+      "preload_friction",
+    ];
     for (const schema of [...CATALOG_KINDS.map((kind) => CATALOG_DATA[kind]), loadSchema])
       for (const { path, label, entry, unit } of formFields(schema)) {
         expect(label, path).not.toBe(path);
