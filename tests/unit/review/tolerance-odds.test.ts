@@ -63,6 +63,18 @@ describe("tolerance odds", () => {
     expect(high! / value!).toBeLessThan(1 / 0.95);
   });
 
+  test("move no current of a driver recorded without a sense resistor", () => {
+    const bare = assemblyWith((axis) => {
+      axis.driver!.set_point = { method: "direct", sense_resistance_ohm: 0 };
+    });
+    const { input } = world(EXAMPLE_TEXT, bare);
+    const { low, high, value } = row(
+      asked({ input, spreads: { ...NONE, senseResistor: 0.05 }, samples: 50 }),
+      "run-current-motor",
+    );
+    expect([low, high]).toEqual([value, value]);
+  });
+
   test("draw the supply in place of its own tolerance", () => {
     const { high } = row(asked({ spreads: { ...NONE, supply: 0.05 } }), "supply-voltage");
     expect(high!).toBeLessThanOrEqual(24 * 1.05);

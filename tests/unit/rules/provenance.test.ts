@@ -37,6 +37,19 @@ describe("the provenance of a current", () => {
     expect(tolerance).toBeCloseTo(0.05 + 0.01 + 0.05 / 0.9, 12);
   });
 
+  it("says of a driver recorded without a sense resistor that it has none", () => {
+    const scaled = assemblyWith((axis) => {
+      const registers = { method: "digital_scale", full_scale_v: 0.325, steps: 32 } as const;
+      axis.driver!.set_point = { ...registers, internal_resistance_ohm: 0.25, sense_resistance_ohm: 0 };
+    });
+    const register = { ...textsWithout("run_current"), current_scale: { typed: 15, unit: null } };
+    expect(provenance(world(register, scaled)).steps).toContainEqual({
+      label: "Sense resistance",
+      text: "none",
+      from: "hardware",
+    });
+  });
+
   it("says that nobody has said the basis, and gives no current", () => {
     const found = provenance(world(texts({ run_current: { typed: 0.8, unit: "A", basis: null } })));
     expect(found.steps).toContainEqual({ label: "Basis", text: "not said", from: "nobody" });
