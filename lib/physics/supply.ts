@@ -23,6 +23,32 @@ export function voltageAfterBraking(input: {
 }
 
 /**
+ * Power, W, that motors feed back into the supply while a load goes down: (F·η)·v − losses, 0 where the losses take it
+ * all. F what pulls the load down less its friction, N (N·m); v speed, m/s (rad/s); η efficiency, 0 to 1; losses of all
+ * copper and drivers, W. Source: balance of power.
+ */
+export function loweringPower(input: {
+  readonly pull: number;
+  readonly speed: number;
+  readonly efficiency: number;
+  readonly losses: number;
+}): number {
+  return Math.max(0, input.pull * input.speed * input.efficiency - input.losses);
+}
+
+/**
+ * Energy, J, that comes back over a travel d (m, rad) at the speed v (m/s, rad/s) with the power P (W): P·d/v, 0 at
+ * standstill. The whole way at v leaves the losses least time. Source: work is power over time.
+ */
+export function loweringEnergy(input: {
+  readonly power: number;
+  readonly speed: number;
+  readonly travel: number;
+}): number {
+  return input.power > 0 ? (input.power * input.travel) / input.speed : 0;
+}
+
+/**
  * Supply voltage over the voltage of the winding's resistance at rated current, no unit: V/(I_r·R); V in V, I_r in A rms,
  * R in Ω at 20 °C. 5 to 25 is usual (common practice, no source); 4, a 3 V motor on 12 V, is in daily use.
  */

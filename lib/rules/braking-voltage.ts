@@ -17,7 +17,7 @@ interface Weakest {
 }
 
 /** The driver that stands least, and the paths of those that are not known. */
-function weakestDriver({ axes }: RuleContext): {
+export function weakestDriver({ axes }: RuleContext): {
   readonly weakest: Weakest | null;
   readonly needs: readonly string[];
 } {

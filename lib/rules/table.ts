@@ -24,6 +24,7 @@ import { COUPLED_MOTORS } from "./coupled-motors";
 import { FALL_AFTER_POWER_LOSS } from "./fall-after-power-loss";
 import { INDUCTANCE_RULE } from "./inductance-rule";
 import { INERTIA_RATIO } from "./inertia-ratio";
+import { LOWERING_VOLTAGE } from "./lowering-voltage";
 import { MICROSTEP_FRICTION } from "./microstep-friction";
 import { RAMP_TORQUE_MARGIN } from "./ramp-torque-margin";
 import { REFERENCE_RUN } from "./reference-run";
@@ -54,6 +55,7 @@ export const RULES: readonly Rule[] = [
   STATIC_POSITION,
   SUPPLY_VOLTAGE,
   BRAKING_VOLTAGE,
+  LOWERING_VOLTAGE,
   SUPPLY_POWER,
   CABLE_DROP,
   SUPPLY_OVERDRIVE,

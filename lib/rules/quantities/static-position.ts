@@ -78,7 +78,8 @@ export function frictionForce(axis: AxisView): Datum {
   return hardware(axis, "load", axis.kind === "rotary" ? "friction_nm" : "friction_n");
 }
 
-function externalForce(axis: AxisView): Datum {
+/** N, or N·m at the output of a rotary axis; signed as the weight. */
+export function externalForce(axis: AxisView): Datum {
   return orDefault(
     hardware(axis, "load", axis.kind === "rotary" ? "external_torque_nm" : "external_force_n"),
     0,

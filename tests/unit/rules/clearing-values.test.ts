@@ -240,6 +240,7 @@ describe("every clearing value", () => {
         "corner-speed",
         "driver-junction",
         "hold-torque",
+        "lowering-voltage",
         "mount-temperature",
         "ramp-torque-margin",
         "reference-run",

@@ -34,6 +34,7 @@ const IDS = [
   "static-position",
   "supply-voltage",
   "braking-voltage",
+  "lowering-voltage",
   "supply-power",
   "cable-drop",
   "supply-overdrive",
