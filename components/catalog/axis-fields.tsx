@@ -62,7 +62,7 @@ export function AxisFields({ form, index, count, choices, onMove, onRemove }: Ax
         <TravelFields form={form} index={index} choices={choices} />
         <TextField
           label="Coupled with"
-          help="Axes whose motors move together with this one, as with crossed belts; names separated by commas."
+          help="Axes whose motors move together with this one, as with crossed belts; names separated by commas. Each axis counts the same shared motors."
           error={error("coupled_with")}
           {...registered(form, `${at}.coupled_with`)}
         />

@@ -6,6 +6,7 @@ import type { Assessment, Judged } from "./assessment";
 import { clearingValue } from "./clearing";
 import type { Candidate, Probe } from "./clearing";
 import { missingSentence } from "./missing-words";
+import { coupledNames } from "./quantities/shared-motors";
 import { plain } from "./show";
 import type { AxisView, Missing, Rule, RuleContext, RuleVerdict } from "./types";
 
@@ -100,11 +101,12 @@ function levelOf(assessment: Assessment) {
   return assessment.ok ? assessment.level : "cannot";
 }
 
-/** Crossed belts and the like: a move of both axes at once can ask up to twice of one motor. */
-function coupledNote({ hardware: { coupled_with = [] } }: AxisView): string {
-  if (coupled_with.length === 0) return "";
-  const axes = `${coupled_with.length === 1 ? "axis" : "axes"} ${joinWords(coupled_with)}`;
-  return ` Its motors move together with those of ${axes}: a move of both at once can ask up to twice this of one motor.`;
+/** Crossed belts and the like: what a move of both axes at once asks of one motor is not what one axis alone asks. */
+function coupledNote(axis: AxisView): string {
+  const others = coupledNames(axis);
+  if (others.length === 0) return "";
+  const named = `${others.length === 1 ? "axis" : "axes"} ${joinWords(others)}`;
+  return ` Its motors move together with those of ${named}: when they move at once, one motor turns with the sum of their speeds and carries its part of every load.`;
 }
 
 /** A thermal resistance that is this machine's own, where the check rests on it; the catalog's value is never hidden. */

@@ -4,11 +4,12 @@ import { judged, judgeUpper, upperSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { lower } from "./candidates";
 import { machineRule } from "./check";
-import { bothMissing, fromText, gather, hardware, merged } from "./data";
-import { coupledPairs } from "./quantities/coupled";
-import { force, FORCE_READS, INERTIA_READS, moved, shaftInertia } from "./quantities/load";
+import { bothMissing, fromText, gather, merged } from "./data";
+import { force, FORCE_READS, moved } from "./quantities/load";
+import { coupledPairs, SHARED_READS, sharedDrive } from "./quantities/shared-motors";
+import type { Pair } from "./quantities/shared-motors";
 import { readsOf } from "./quantities/table";
-import { driven, DRIVEN_READS, holdingTorque } from "./quantities/torque";
+import { holdingTorque } from "./quantities/torque";
 import { plain } from "./show";
 import type { AxisView, Missing, RuleContext } from "./types";
 
@@ -23,34 +24,37 @@ interface Jump {
   readonly assumed: readonly string[];
 }
 
-/** The jump of the busier motor at a corner where both axes jump; the first axis' motor stands for both. */
-function jumpOf([one, other]: readonly [AxisView, AxisView]): Jump | Missing {
-  const motor = driven(one);
-  const first = gather({
-    corner: fromText(one, "corner_speed"),
-    holding: holdingTorque(one, one.quantity("winding_current_rms")),
-    force: force(one),
-    mass: moved(one),
-    shaft: shaftInertia(one),
-    efficiency: hardware(one, "drive_train", "efficiency"),
-  });
-  const second = gather({ corner: fromText(other, "corner_speed"), force: force(other), mass: moved(other) });
-  const lacks = [motor, first, second].flatMap((part) => (part.ok ? [] : [part]));
-  if (!motor.ok || !first.ok || !second.ok) return lacks.reduce(bothMissing);
+function side(axis: AxisView) {
+  return {
+    corner: fromText(axis, "corner_speed"),
+    holding: holdingTorque(axis, axis.quantity("winding_current_rms")),
+    force: force(axis),
+    mass: moved(axis),
+  };
+}
+
+/** The jump of the busier motor at a corner where both axes jump, beside what the weaker of both settings allows. */
+function jumpOf(pair: Pair): Jump | Missing {
+  const drive = sharedDrive(pair);
+  const [first, second] = [gather(side(pair[0])), gather(side(pair[1]))];
+  const lacks = [drive, first, second].flatMap((part) => (part.ok ? [] : [part]));
+  if (!drive.ok || !first.ok || !second.ok) return lacks.reduce(bothMissing);
   const [x, y] = [first.values, second.values];
-  const { radius } = motor;
-  const allowed = allowedJump({
-    motor: motor.motor,
-    holdingTorque: x.holding,
-    loadTorque: ((x.force + y.force) * radius) / (2 * x.efficiency),
-    inertia: crossedInertia({ masses: [x.mass, y.mass], radius, motorInertia: x.shaft }),
+  const { count: motors, radius, efficiency, shaft } = drive;
+  const load = {
+    loadTorque: ((x.force + y.force) * radius) / (motors * efficiency),
+    inertia: crossedInertia({ masses: [x.mass, y.mass], motors, radius, motorInertia: shaft }),
+  };
+  const allowed = [x, y].map(({ holding }, index) => {
+    const { motor } = drive.motors[index === 0 ? 0 : 1];
+    return allowedJump({ motor, holdingTorque: holding, ...load }).jump;
   });
   return {
     ok: true,
-    axes: [one, other],
+    axes: pair,
     jump: busierMotor(x.corner, y.corner, radius),
-    allowed: allowed.jump,
-    assumed: [motor.assumed, first.assumed, second.assumed].reduce(merged),
+    allowed: Math.min(...allowed),
+    assumed: [drive.assumed, first.assumed, second.assumed].reduce(merged),
   };
 }
 
@@ -78,19 +82,10 @@ export const COUPLED_JUMP = machineRule({
   compares:
     "The jump of the busier of two shared motors, when both axes jump at a corner, with what it follows.",
   formula:
-    "(v1 + v2)/r ≤ 0.5·Δω with J = Jm + (m1 + m2)·r²/4, T_L = (F1 + F2)·r/(2·η), and the pull-out torque in place of Th(I) above the voltage-limit speed",
+    "(v1 + v2)/r ≤ 0.5·Δω with J = Jm + (m1 + m2)·r²/(2·n), T_L = (F1 + F2)·r/(n·η), n shared motors, and the pull-out torque in place of Th(I) above the voltage-limit speed",
   source:
     "Kinematics of crossed belts; equal-area criterion and conservative pull-out, half of the bound is the product's choice",
-  needs: [
-    ...readsOf("winding_current_rms", "winding_c"),
-    ...DRIVEN_READS,
-    ...FORCE_READS,
-    ...INERTIA_READS,
-    "corner_speed",
-    "drive_train.efficiency",
-    "axis.coupled_with",
-    "driver.feedback",
-  ],
+  needs: [...readsOf("winding_current_rms", "winding_c"), ...SHARED_READS, ...FORCE_READS, "corner_speed"],
   margin: "near above 80 % of the allowed jump, over above it",
   caution: null,
   parameters: ["corner_speed", "run_current", "reference_voltage", "current_scale"],

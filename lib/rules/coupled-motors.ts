@@ -2,7 +2,8 @@ import { judged, judgeLower, lowerSign } from "./assessment";
 import type { Assessment } from "./assessment";
 import { lower } from "./candidates";
 import { machineRule } from "./check";
-import { coupledPairs, weakestPair } from "./quantities/coupled";
+import { weakestPair } from "./quantities/coupled";
+import { coupledPairs } from "./quantities/shared-motors";
 import { readsOf } from "./quantities/table";
 import { plain, show, showPercent } from "./show";
 import type { RuleContext } from "./types";
@@ -36,13 +37,13 @@ export const COUPLED_MOTORS = machineRule({
   compares:
     "The torque of the busier of two shared motors, when both axes move at once, with what that move asks of it.",
   formula:
-    "T_pull-out((v1 + v2)/r) / ((F1 + F2)·r/(2·η) + Jm·(a1 + a2)/r) − 1 ≥ policy; F = friction + |load| + m·a",
+    "T_pull-out((v1 + v2)/r) / ((F1 + F2)·r/(n·η) + Jm·(a1 + a2)/r) − 1 ≥ policy; F = friction + |load| + m·a, n shared motors",
   source: "Kinematics of crossed belts and virtual work; pull-out as for the single axis",
   needs: readsOf("coupled_torque_margin"),
   margin:
     "over below the policy's margin (0.5 up to the voltage-limit speed, 1.0 above it), near below 1.2 times that",
   caution: null,
-  parameters: ["acceleration", "max_speed"],
+  parameters: ["acceleration", "max_speed", "run_current", "reference_voltage", "current_scale"],
   candidates: (context) =>
     coupledPairs(context)
       .flat()

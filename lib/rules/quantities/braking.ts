@@ -7,7 +7,10 @@ import type { MachineQuantityDefinition } from "./definition";
 import { GEOMETRY_READS, radius } from "./geometry";
 import { moved, MOVED_READS, shaftInertia } from "./load";
 
-/** Kinetic energy of an axis at its peak speed, J: what moves, and the shafts of its motors. */
+/**
+ * Kinetic energy of an axis at its peak speed, J: what moves, and the shafts of its motors. Motors that two axes share are
+ * counted by both, and rightly: their speeds are v1 + v2 and v1 − v2, whose squares sum to 2·v1² + 2·v2². Source: mechanics.
+ */
 export function axisEnergy(axis: AxisView): Datum {
   const parts = gather({
     speed: axis.quantity("peak_speed"),

@@ -1,11 +1,12 @@
 import { busierMotor, busierMotorTorque } from "@/lib/physics/coupled";
 import { conservativePullOut, voltageLimitSpeed } from "@/lib/physics/pull-out";
-import { bothMissing, computed, fromText, gather, hardware, merged } from "../data";
+import { bothMissing, computed, fromText, gather, merged } from "../data";
 import { plain, show } from "../show";
 import type { AxisView, Missing, RuleContext } from "../types";
 import type { MachineQuantityDefinition } from "./definition";
-import { force, FORCE_READS, INERTIA_READS, moved, shaftInertia } from "./load";
-import { driven, DRIVEN_READS } from "./torque";
+import { force, FORCE_READS, moved } from "./load";
+import { coupledPairs, SHARED_READS, sharedDrive } from "./shared-motors";
+import type { Pair } from "./shared-motors";
 
 /** The busier motor of a pair of coupled axes when both move at once, as hard as each alone may. */
 export interface CoupledLoad {
@@ -21,24 +22,6 @@ export interface CoupledLoad {
   readonly assumed: readonly string[];
 }
 
-type Pair = readonly [AxisView, AxisView];
-
-/** Axes that name each other, or one the other, in the order of the machine. */
-export function coupledPairs({ axes }: RuleContext): Pair[] {
-  return axes.flatMap((one, index) =>
-    axes.slice(index + 1).flatMap((other): Pair[] => (isCoupled(one, other) ? [[one, other]] : [])),
-  );
-}
-
-function isCoupled(one: AxisView, other: AxisView): boolean {
-  return names(one, other) || names(other, one);
-}
-
-function names(one: AxisView, other: AxisView): boolean {
-  const { coupled_with = [] } = one.hardware;
-  return coupled_with.some((name) => name.toLowerCase() === other.axis.toLowerCase());
-}
-
 function side(axis: AxisView) {
   return {
     force: force(axis),
@@ -48,36 +31,34 @@ function side(axis: AxisView) {
   };
 }
 
-/** Torque of the busier motor; the first axis' motor and drive train stand for both, which such machines share. */
-export function coupledLoad([one, other]: Pair): CoupledLoad | Missing {
-  const motor = driven(one);
-  const first = gather({
-    ...side(one),
-    efficiency: hardware(one, "drive_train", "efficiency"),
-    shaft: shaftInertia(one),
-  });
-  const second = gather(side(other));
-  const lacks = [motor, first, second].flatMap((part) => (part.ok ? [] : [part]));
-  if (!motor.ok || !first.ok || !second.ok) return lacks.reduce(bothMissing);
+/** Torque of the busier motor, with what the weaker of both axes' settings leaves it. */
+export function coupledLoad(pair: Pair): CoupledLoad | Missing {
+  const drive = sharedDrive(pair);
+  const first = gather(side(pair[0]));
+  const second = gather(side(pair[1]));
+  const lacks = [drive, first, second].flatMap((part) => (part.ok ? [] : [part]));
+  if (!drive.ok || !first.ok || !second.ok) return lacks.reduce(bothMissing);
   const [x, y] = [first.values, second.values];
   const required = busierMotorTorque({
     forces: [x.force + x.mass * x.acceleration, y.force + y.mass * y.acceleration],
     accelerations: [x.acceleration, y.acceleration],
-    radius: motor.radius,
-    efficiency: x.efficiency,
-    motorInertia: x.shaft,
+    motors: drive.count,
+    radius: drive.radius,
+    efficiency: drive.efficiency,
+    motorInertia: drive.shaft,
   });
-  const speed = busierMotor(x.speed, y.speed, motor.radius);
-  const available = conservativePullOut(motor.motor, speed);
+  const speed = busierMotor(x.speed, y.speed, drive.radius);
+  const motors = drive.motors.map(({ motor }) => motor);
+  const available = Math.min(...motors.map((motor) => conservativePullOut(motor, speed)));
   return {
     ok: true,
-    axes: [one, other],
+    axes: pair,
     available,
     required,
     margin: available / required - 1,
     speed,
-    limitSpeed: voltageLimitSpeed(motor.motor),
-    assumed: [motor.assumed, first.assumed, second.assumed].reduce(merged),
+    limitSpeed: Math.min(...motors.map(voltageLimitSpeed)),
+    assumed: [drive.assumed, first.assumed, second.assumed].reduce(merged),
   };
 }
 
@@ -94,15 +75,7 @@ export function weakestPair(context: RuleContext): CoupledLoad | Missing | null 
 }
 
 export const COUPLED_TORQUE_MARGIN: MachineQuantityDefinition = {
-  reads: [
-    ...DRIVEN_READS,
-    ...FORCE_READS,
-    ...INERTIA_READS,
-    "drive_train.efficiency",
-    "axis.coupled_with",
-    "acceleration",
-    "driver.feedback",
-  ],
+  reads: [...SHARED_READS, ...FORCE_READS, "acceleration"],
   from: ["winding_current_rms", "winding_c", "peak_speed"],
   compute: (context) => {
     const pair = weakestPair(context);

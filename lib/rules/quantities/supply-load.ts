@@ -1,11 +1,23 @@
 import { windingPower } from "@/lib/physics/motor-heat";
 import { cableDrop, supplyLoad } from "@/lib/physics/supply";
-import { bothMissing, computed, gather, given, hardware, merged, missing, motorCount } from "../data";
+import {
+  bothMissing,
+  computed,
+  fromText,
+  gather,
+  given,
+  hardware,
+  merged,
+  missing,
+  motorCount,
+} from "../data";
 import { plain, show } from "../show";
 import type { AxisView, Datum, RuleContext } from "../types";
 import { CONNECTION_READS } from "./current";
 import type { MachineQuantityDefinition } from "./definition";
 import { GEOMETRY_READS, radius } from "./geometry";
+import { shaftInertia } from "./load";
+import { coupledPairs, motorsInSum, motorsTurning, sharedMotors } from "./shared-motors";
 
 /** Share of the supply's power that reaches motors and drivers; iron and wiring take the rest. The product's choice. */
 export const DELIVERED = 0.85;
@@ -18,7 +30,25 @@ interface AxisPower {
   readonly assumed: readonly string[];
 }
 
-/** Powers of all motors of an axis at its peak speed, W, accelerating. */
+/**
+ * Power at the shafts of an axis, W: n·T·ω, and for motors that it turns without counting them what their rotors take,
+ * J·α·ω. T in N·m for each of n motors, v in m/s, a in m/s², r in m/rad, J in kg·m². Source: mechanics.
+ */
+function shaftPower(input: {
+  readonly torque: number;
+  readonly speed: number;
+  readonly acceleration: number;
+  readonly shaftInertia: number;
+  readonly radius: number;
+  readonly motors: number;
+  readonly turning: number;
+}): number {
+  const { torque, speed, acceleration, radius: r, motors, turning } = input;
+  const rotors = (turning - motors) * input.shaftInertia * (acceleration / r);
+  return (motors * torque + rotors) * (speed / r);
+}
+
+/** Powers of the motors of an axis, those that it shares in part, at its peak speed, W, accelerating. */
 function axisPower(axis: AxisView) {
   const parts = gather({
     current: axis.quantity("winding_current_rms"),
@@ -27,16 +57,20 @@ function axisPower(axis: AxisView) {
     driver: axis.quantity("driver_power"),
     torque: axis.quantity("torque_required"),
     speed: axis.quantity("peak_speed"),
+    acceleration: fromText(axis, "acceleration"),
+    shaftInertia: shaftInertia(axis),
     radius: radius(axis),
     motors: motorCount(axis),
+    inSum: motorsInSum(axis),
+    turning: motorsTurning(axis),
   });
   if (!parts.ok) return parts;
-  const { current, resistance, temperature, driver, torque, speed, motors } = parts.values;
+  const { current, resistance, temperature, driver, inSum } = parts.values;
   const power: AxisPower = {
     ok: true,
-    copper: motors * windingPower({ current, resistanceAt20: resistance, temperature }),
-    drivers: motors * driver,
-    mechanical: (motors * torque * speed) / parts.values.radius,
+    copper: inSum * windingPower({ current, resistanceAt20: resistance, temperature }),
+    drivers: inSum * driver,
+    mechanical: shaftPower(parts.values),
     assumed: parts.assumed,
   };
   return power;
@@ -46,7 +80,8 @@ function axisPower(axis: AxisView) {
 function machinePower({ axes }: RuleContext) {
   let sum: AxisPower = { ok: true, copper: 0, drivers: 0, mechanical: 0, assumed: [] };
   const powers = axes.map(axisPower);
-  const lacks = powers.flatMap((power) => (power.ok ? [] : [power]));
+  const shared = coupledPairs({ axes }).map(sharedMotors);
+  const lacks = [...powers, ...shared].flatMap((part) => (part.ok ? [] : [part]));
   if (lacks.length > 0) return lacks.reduce(bothMissing);
   for (const power of powers)
     if (power.ok)
@@ -71,6 +106,7 @@ export const SUPPLY_LOAD: MachineQuantityDefinition = {
     ...CONNECTION_READS,
     ...GEOMETRY_READS,
     "axis.motor_count",
+    "axis.coupled_with",
     "supply.other_load_w",
   ],
   from: ["winding_current_rms", "winding_c", "driver_power", "torque_required", "peak_speed"],

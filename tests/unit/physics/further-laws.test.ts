@@ -356,6 +356,22 @@ describe("a raised load without current", () => {
 });
 
 describe("motors on crossed belts", () => {
+  it("carry half as much where two sit on either belt: 10 N · 0.01 m / 4 = 0.025 N·m, 2 kg · 0.01² / 8 = 2.5e-5 kg·m²", () => {
+    const each = busierMotorTorque({
+      forces: [4, 6],
+      accelerations: [0, 0],
+      motors: 4,
+      radius: 0.01,
+      efficiency: 1,
+      motorInertia: 0,
+    });
+    expect(each).toBeCloseTo(0.025, 12);
+    expect(crossedInertia({ masses: [0.5, 1.5], motors: 4, radius: 0.01, motorInertia: 0 })).toBeCloseTo(
+      2.5e-5,
+      12,
+    );
+  });
+
   law(
     "carry half of one axis alone, and the mean of both together",
     4,
@@ -364,6 +380,7 @@ describe("motors on crossed belts", () => {
         busierMotorTorque({
           forces: [one, two],
           accelerations: [0, 0],
+          motors: 2,
           radius,
           efficiency: 1,
           motorInertia: jm,
@@ -379,7 +396,7 @@ describe("motors on crossed belts", () => {
       speedJumpBound({
         torque: 0.3,
         loadTorque: 0.05,
-        inertia: crossedInertia({ masses: [mass, other], radius: 0.006, motorInertia: 5e-6 }),
+        inertia: crossedInertia({ masses: [mass, other], motors: 2, radius: 0.006, motorInertia: 5e-6 }),
         rotorTeeth: 50,
       });
     expect(bound(one + extra)).toBeLessThanOrEqual(bound(one));

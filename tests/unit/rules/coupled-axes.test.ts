@@ -16,6 +16,14 @@ function crossed(change: Change = () => undefined, text: Texts = EXAMPLE_TEXT, s
   return worldOf({ parameters, assembly, policy: DEFAULT_POLICY });
 }
 
+const RADIUS = 0.04 / (2 * Math.PI);
+/** At 100 mm/s the supply does not limit the torque yet. */
+const SLOW = texts({ max_speed: { typed: 100, unit: "mm/s", factor: 1e-3 } });
+const counted =
+  (count: number): Change =>
+  (axis) =>
+    (axis.motor_count = count);
+
 const STRONG: Texts = {
   run_current: { typed: 1.2, unit: "A", basis: "rms" },
   corner_speed: { typed: 60, unit: "mm/s", factor: 1e-3 },
@@ -51,5 +59,116 @@ describe("the jump of shared motors on a weak supply", () => {
     const finding = crossed((axis) => delete axis.motor!.inductance_mh).finding("coupled-jump", null);
     expect(finding).toMatchObject({ level: "cannot" });
     expect(finding.needs).toContain("axes.x.motor.inductance_mh");
+  });
+});
+
+describe("a drive of two axes of which one closes its own loop", () => {
+  it.each(["coupled-motors", "coupled-jump"])("is not covered by %s, whichever axis it is", (ruleId) => {
+    for (const name of ["x", "y"]) {
+      const finding = crossed((axis) => {
+        if (axis.axis === name) axis.driver!.feedback = "closed_loop";
+      }).finding(ruleId, null);
+      expect(finding.level).toBe("cannot");
+      expect(finding.needs).toContain(`axes.${name}.driver.feedback`);
+      expect(finding.sentence).toContain("Not covered");
+    }
+  });
+});
+
+describe("the motors that two axes share", () => {
+  it("are the same ones for both: two counted by each are judged as one counted by each", () => {
+    const [one, two] = [crossed(counted(1), SLOW), crossed(counted(2), SLOW)];
+    expect(two.quantity("coupled_torque_margin", null)).toBeCloseTo(
+      one.quantity("coupled_torque_margin", null)!,
+      12,
+    );
+    expect(two.finding("coupled-jump", null).limit).toBeCloseTo(one.finding("coupled-jump", null).limit!, 12);
+  });
+
+  it("carry half as much where two sit on either belt", () => {
+    // Each of four: 2 · (4 + 0.6 · 3) N · r/(4 · 0.95) + 54e-7 kg·m² · 6/r; 0.24 N·m at 0.8 A.
+    const required = (2 * 5.8 * RADIUS) / (4 * 0.95) + (54e-7 * 6) / RADIUS;
+    expect(crossed(counted(4), SLOW).quantity("coupled_torque_margin", null)).toBeCloseTo(
+      0.24 / required - 1,
+      9,
+    );
+  });
+
+  it.each([
+    ["motor_count", (axis: AxisAssembly) => (axis.motor_count = 2)],
+    ["motor.holding_torque_nm", (axis: AxisAssembly) => (axis.motor!.holding_torque_nm = 0.5)],
+    ["motor.rated_current_a", (axis: AxisAssembly) => (axis.motor!.rated_current_a = 1.6)],
+    ["drive_train.teeth", (axis: AxisAssembly) => (axis.drive_train!.teeth = 16)],
+  ])("cannot differ in %s between the axes", (field, change) => {
+    const found = crossed(() => undefined, EXAMPLE_TEXT, change);
+    for (const ruleId of ["coupled-motors", "coupled-jump"]) {
+      const finding = found.finding(ruleId, null);
+      expect(finding.level).toBe("cannot");
+      expect(finding.needs).toEqual([`axes.x.${field}`, `axes.y.${field}`]);
+      expect(finding.sentence).toMatch(/^Axes x and y share their motors, but /);
+    }
+  });
+
+  it("are an even number where they are more than one", () => {
+    expect(crossed(counted(3)).finding("coupled-motors", null).sentence).toContain("an even number, not 3");
+  });
+
+  it("give the torque of the axis that drives them weaker", () => {
+    const weak: Texts = { ...SLOW, run_current: { typed: 600, unit: "mA", factor: 1e-3, basis: "rms" } };
+    const mixed = (first: Texts, second: Texts) => {
+      const { assembly, policy } = crossed().input;
+      const parameters = [...parametersOf(first, assembly, "x"), ...parametersOf(second, assembly, "y")];
+      return worldOf({ parameters, assembly, policy });
+    };
+    const margin = (found: World) => found.quantity("coupled_torque_margin", null);
+    expect(margin(mixed(SLOW, weak))).toBeCloseTo(margin(mixed(weak, weak))!, 12);
+    expect(margin(mixed(SLOW, weak))).toBeLessThan(margin(mixed(SLOW, SLOW))!);
+    const allowed = (found: World) => found.finding("coupled-jump", null).limit;
+    expect(allowed(mixed(SLOW, weak))).toBeCloseTo(allowed(mixed(weak, weak))!, 12);
+  });
+
+  it("are counted once in the power of the supply", () => {
+    const load = (count: number, coupled = true) =>
+      crossed((axis) => {
+        axis.motor_count = count;
+        if (!coupled) delete axis.coupled_with;
+      }).quantity("supply_load", null)!;
+    // Whether each axis counts one of the two or both: the same two motors on the same masses.
+    expect(load(2)).toBeCloseTo(load(1), 9);
+    expect(load(2, false)).toBeGreaterThan(load(2) + 5);
+  });
+
+  it("count both rotors where each axis counts one motor: 2 · 54e-7 kg·m² · a · v/r² more at the shafts", () => {
+    const load = (coupled: boolean) =>
+      crossed((axis) => {
+        if (!coupled) delete axis.coupled_with;
+      }).quantity("supply_load", null)!;
+    expect(load(true) - load(false)).toBeCloseTo((2 * 54e-7 * 3 * 0.3) / RADIUS ** 2 / 0.85, 9);
+  });
+
+  it("leave the power of the supply unknown where the axes count them differently", () => {
+    const finding = crossed(() => undefined, EXAMPLE_TEXT, counted(2)).finding("supply-power", null);
+    expect(finding).toMatchObject({ level: "cannot" });
+    expect(finding.needs).toContain("axes.y.motor_count");
+  });
+
+  it("store the kinetic energy of v1 + v2 and v1 − v2, as the sum over both axes has it", () => {
+    const found = crossed(counted(2));
+    const [v1, v2, mass, shaft] = [0.3, 0.3, 0.6, 54e-7];
+    const rotors = (0.5 * shaft * ((v1 + v2) ** 2 + (v1 - v2) ** 2)) / RADIUS ** 2;
+    const energy = 0.5 * mass * (v1 ** 2 + v2 ** 2) + rotors;
+    const after = Math.sqrt((24 * 1.05) ** 2 + (2 * energy) / 1000e-6);
+    expect(found.quantity("bus_voltage_after_braking", null)).toBeCloseTo(after, 9);
+  });
+
+  it("are told of on both axes, whichever of them names the other", () => {
+    const found = crossed(counted(1));
+    for (const [axis, other] of [
+      ["x", "y"],
+      ["y", "x"],
+    ])
+      expect(found.finding("torque-margin", axis).sentence).toContain(
+        `Its motors move together with those of axis ${other}: when they move at once, one motor turns with the sum of their speeds`,
+      );
   });
 });
