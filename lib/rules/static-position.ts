@@ -21,23 +21,29 @@ function assess(axis: AxisView): Assessment {
   if (holding === 0) return null;
   const share = (steady + friction) / holding;
   const verdict = judgeUpper({ value: share, limit: SUDDEN_LOAD_SHARE, near: NEAR, unit: "" });
-  // Friction alone throws no rotor over, and a brake carries what weighs on the axis.
-  const spared =
-    verdict.level === "over" &&
-    (steady <= SUDDEN_LOAD_SHARE * holding || axis.hardware.load?.holding_brake === true);
+  const sparing = verdict.level === "over" ? sparedBy(axis, steady <= SUDDEN_LOAD_SHARE * holding) : "";
   const current = standstillCurrent(axis) === "hold_current" ? "hold current" : "run current";
   return judged(
-    { ...verdict, level: spared ? "near" : verdict.level },
+    { ...verdict, level: sparing === "" ? verdict.level : "near" },
     {
       assumed: load.assumed,
       sentence: () =>
         error.ok
-          ? `On ${current} the load takes ${showPercent(share)} of the torque at standstill: the axis may rest up to ${show(error.value, lengthUnit(axis))} beside its position, whatever the microsteps are.`
-          : `On ${current} load and friction ask ${showPercent(share)} of the torque at standstill: there is no position of rest that the motor decides.`,
+          ? `On ${current} the load takes ${showPercent(share)} of the torque at standstill: the axis may rest up to ${show(error.value, lengthUnit(axis))} beside its position, whatever the microsteps are.${sparing}`
+          : `On ${current} load and friction ask ${showPercent(share)} of the torque at standstill: there is no position of rest that the motor decides.${sparing}`,
       formula: () =>
         `(${show(steady, "N·m")} + ${show(friction, "N·m")} friction) / ${show(holding, "N·m")} = ${plain(share)} ${upperSign(verdict)} ${plain(SUDDEN_LOAD_SHARE)}${error.ok ? `; ${error.formula()}` : ""}`,
     },
   );
+}
+
+/** Why a load beyond the limit is a caution only; empty where nothing spares it. */
+function sparedBy(axis: AxisView, isFriction: boolean): string {
+  if (isFriction)
+    return " It is a caution and no more because friction makes up the rest: it throws no rotor over.";
+  return axis.hardware.load?.holding_brake === true
+    ? " It is a caution and no more because a holding brake carries it: only while the brake is on."
+    : "";
 }
 
 function standstillParameters(axis: AxisView) {
