@@ -1,6 +1,6 @@
 import type { AxisKind } from "@/lib/domain/axis-kind";
 import type { ParameterName } from "@/lib/domain/parameters";
-import { gather, hardware, missing, motorCount, orDefault } from "./data";
+import { fromText, gather, hardware, missing, motorCount, orDefault } from "./data";
 import { ratingRms } from "./quantities/current";
 import { shaftInertia, moved, weight } from "./quantities/load";
 import { travel } from "./quantities/motion";
@@ -135,7 +135,7 @@ function optional(view: AxisView): Optional {
     jerk: stated("jerk"),
     cornerSpeed: stated("corner_speed"),
     travel: valueOf(travel(view)),
-    microsteps: stated("microsteps"),
+    microsteps: valueOf(fromText(view, "microsteps", "positive")),
   };
 }
 

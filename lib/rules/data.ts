@@ -119,7 +119,10 @@ export function motorAmbient(axis: AxisView): Datum {
   return datum(motor_ambient_c ?? ambient_c, "ambient_c");
 }
 
-/** A parameter that the text must have, SI; where it must be `positive` or `not-negative` another sign is unusable. */
+/**
+ * A parameter that the text must have, SI; where it must be `positive` or `not-negative` another sign is unusable, and so
+ * is a fraction where only whole numbers have a meaning: no driver divides a step into 16.5 microsteps.
+ */
 export function fromText(
   axis: AxisView,
   name: ParameterName,
@@ -128,15 +131,20 @@ export function fromText(
   const found = axis.parameter(name);
   if (!found) return missing(axisPath(axis, name));
   if (found.value < 0 || (sign === "positive" && found.value === 0)) return senseless(axis, found, sign);
+  if (name === "microsteps" && !Number.isInteger(found.value)) return senseless(axis, found, "whole");
   return given(found.value);
 }
 
-/** A parameter whose sign makes no sense, in the words of the text. */
-export function senseless(axis: AxisView, found: ParameterValue, sign: "positive" | "not-negative"): Missing {
+const WANTED = { positive: "more than 0", "not-negative": "0 or more", whole: "a whole number" } as const;
+
+/** A parameter whose number makes no sense, in the words of the text. */
+export function senseless(axis: AxisView, found: ParameterValue, wanted: keyof typeof WANTED): Missing {
   const { label } = parameterDefinition(found.parameter);
   const typed = `${formatNumber(found.typed.value, 6)} ${found.typed.unit ?? ""}`.trim();
-  const wanted = sign === "positive" ? "more than 0" : "0 or more";
-  return unusable(`${label} is ${typed} in the text; it must be ${wanted}.`, axisPath(axis, found.parameter));
+  return unusable(
+    `${label} is ${typed} in the text; it must be ${WANTED[wanted]}.`,
+    axisPath(axis, found.parameter),
+  );
 }
 
 type Values<T> = { readonly [K in keyof T]: number };

@@ -2,6 +2,7 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import type { Assembly } from "@/lib/domain/assembly";
 import type { ParameterName } from "@/lib/domain/parameters";
+import { axisModel } from "@/lib/rules/axis-model";
 import { RULES } from "@/lib/rules/table";
 import { assemblyWith, EXAMPLE_TEXT, exampleAssembly, texts, textsWithout, world } from "./world";
 import type { Texts, World } from "./world";
@@ -250,6 +251,19 @@ describe("a parameter that the text lacks", () => {
     expect(scale.finding("step-rate").level).toBe("cannot");
     const microsteps = world(texts({ microsteps: { typed: 0, unit: null } }));
     expect(microsteps.finding("microstep-current").sentence).toContain("it must be more than 0");
+  });
+
+  it("is as good as missing where microsteps are not a whole number", () => {
+    const found = world(texts({ microsteps: { typed: 16.5, unit: null } }));
+    for (const ruleId of ["steps-per-mm", "microstep-current", "microstep-friction"])
+      expect(found.finding(ruleId)).toMatchObject({
+        level: "cannot",
+        needs: ["axes.x.microsteps"],
+        sentence: expect.stringContaining("Microsteps is 16.5 in the text; it must be a whole number."),
+      });
+    expect(found.quantity("steps_per_mm_expected")).toBeUndefined();
+    const model = axisModel(found.input, "x");
+    expect(model.ok && model.value.microsteps).toBeNull();
   });
 });
 
