@@ -4,7 +4,7 @@ import type { Assessment } from "./assessment";
 import { set } from "./candidates";
 import { axisRule } from "./check";
 import { gather } from "./data";
-import { scaleUnit, textScale } from "./quantities/geometry";
+import { isScaleReversed, scaleUnit, textScale } from "./quantities/geometry";
 import { readsOf } from "./quantities/table";
 import { plain, showPercent, showScale } from "./show";
 import type { AxisView } from "./types";
@@ -39,21 +39,24 @@ function assess(axis: AxisView): Assessment {
   const deviation = Math.abs(stated / expected - 1);
   const verdict = judgeUpper({ value: deviation, limit: OVER, near: NEAR, unit: "" });
   const unit = scaleUnit(axis);
+  const isReversed = isScaleReversed(axis);
+  const shown = showScale(isReversed ? -stated : stated, unit);
+  const direction = isReversed ? " Its sign is the direction and nothing else." : "";
   return judged(verdict, {
     assumed: parts.assumed,
     sentence: () =>
       verdict.level === "within"
-        ? `The scale of ${showScale(stated, unit)} is what the geometry gives.`
-        : `The scale of ${showScale(stated, unit)} is ${showPercent(deviation)} off the ${showScale(expected, unit)} that the geometry gives.${likelyFactor(stated / expected)}`,
+        ? `The scale of ${shown} is what the geometry gives.${direction}`
+        : `The scale of ${shown} is ${showPercent(deviation)} off the ${showScale(expected, unit)} that the geometry gives.${likelyFactor(stated / expected)}${direction}`,
     formula: () =>
-      `|${plain(stated)} / (${parts.formula("expected")}) − 1| = ${formatNumber(deviation, 2)} ${upperSign(verdict)} ${OVER}`,
+      `|${isReversed ? `|${plain(-stated)}|` : plain(stated)} / (${parts.formula("expected")}) − 1| = ${formatNumber(deviation, 2)} ${upperSign(verdict)} ${OVER}`,
   });
 }
 
 /** The scale of the geometry, with the sign that the text gives the direction. */
 function candidates(axis: AxisView) {
   const expected = axis.quantity("steps_per_mm_expected");
-  const sign = (axis.parameter("steps_per_mm")?.value ?? 0) < 0 ? -1 : 1;
+  const sign = isScaleReversed(axis) ? -1 : 1;
   return expected.ok ? set(axis, "steps_per_mm", sign * expected.value) : [];
 }
 

@@ -105,6 +105,11 @@ export function textScale(axis: AxisView): Datum {
   return given(Math.abs(found.value));
 }
 
+/** Whether the text counts its steps the other way. */
+export function isScaleReversed(axis: AxisView): boolean {
+  return (axis.parameter("steps_per_mm")?.value ?? 0) < 0;
+}
+
 /** The scale that the step rate rests on: the text's, else the geometry's. */
 export function scaleInUse(axis: AxisView): Datum {
   return axis.parameter("steps_per_mm") ? textScale(axis) : axis.quantity("steps_per_mm_expected");

@@ -7,6 +7,7 @@ import type { QuantityDefinition } from "./definition";
 import {
   accelerationUnit,
   GEOMETRY_READS,
+  isScaleReversed,
   lengthUnit,
   radius,
   scaleInUse,
@@ -69,6 +70,12 @@ export function dwellSpeeds(axis: AxisView, peak: number): readonly number[] {
   return seeking.ok ? [peak, seeking.value] : [peak];
 }
 
+/** Size of the scale in use as a formula has it: of one below 0 as the text states it, between bars. */
+function scaleSize(axis: AxisView, scale: number): string {
+  const unit = scaleUnit(axis);
+  return isScaleReversed(axis) ? `|${showScale(-scale, unit)}|` : showScale(scale, unit);
+}
+
 export const STEP_RATE: QuantityDefinition = {
   reads: ["max_speed", "steps_per_mm"],
   from: ["steps_per_mm_expected"],
@@ -80,7 +87,7 @@ export const STEP_RATE: QuantityDefinition = {
     return computed(
       rate,
       parts.assumed,
-      () => `${show(speed, speedUnit(axis))} · ${showScale(scale, scaleUnit(axis))} = ${show(rate, "Hz")}`,
+      () => `${show(speed, speedUnit(axis))} · ${scaleSize(axis, scale)} = ${show(rate, "Hz")}`,
     );
   },
 };

@@ -318,6 +318,16 @@ describe("words of a finding", () => {
     expect(scale(80 * 25.4).finding("steps-per-mm").sentence).toContain("a factor of 25.4");
     expect(scale(101).finding("steps-per-mm").sentence).not.toContain("factor");
   });
+  it("shows a scale below 0 as the text has it, and says what its sign is", () => {
+    const { level, sentence, formula } = scale(-80).finding("steps-per-mm");
+    expect(level).toBe("within");
+    expect(sentence).toContain(
+      "The scale of -80 steps/mm is what the geometry gives. Its sign is the direction",
+    );
+    expect(formula).toMatch(/^\|\|-80\| \/ \(/);
+    expect(scale(-80).finding("step-rate").formula).toContain("300 mm/s · |-80 steps/mm| = ");
+    expect(scale(-160).finding("steps-per-mm").sentence).toContain("The scale of -160 steps/mm is 100 % off");
+  });
   it("carries the caution about a falling load on every hold finding, also where it cannot be checked", () => {
     expect(holding(3).finding("hold-torque").caution).toContain("can fall");
     const unknown = on((axis) => (axis.load!.incline_deg = undefined));
