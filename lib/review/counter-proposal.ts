@@ -106,8 +106,9 @@ function answer(proposal: CounterProposal, { files, before, after }: Written): C
   return { moves, cost, cleared, conflicts, left, leastShare, files };
 }
 
+/** Twelve digits hold whatever a text says, and keep the last bits of 825 mA · 0.001 A/mA out. */
 function side({ value, unit, basis }: Side): Side {
-  return { value, unit, basis };
+  return { value: Number(value.toPrecision(12)), unit, basis };
 }
 
 /** No change, where the text would not say what the search found. */

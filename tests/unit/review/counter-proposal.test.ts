@@ -26,6 +26,16 @@ describe("a counter-proposal as an edit of the text", () => {
     expect(corner.toBe.value).toBeLessThan(corner.was.value);
   });
 
+  it("gives values without the last bits of the arithmetic, as the text holds them", () => {
+    const inMilliamperes = edited("x", "amps = 0.85 ", "amps = 1902 mA ");
+    const moves = counterEdit(input(inMilliamperes)).moves;
+    // 1902 · 0.001 is 1.9020000000000001 in floating point.
+    expect(1902 * 0.001).not.toBe(1.902);
+    expect(moves.find(({ parameter }) => parameter === "run_current")?.was.value).toBe(1.902);
+    for (const { was, toBe } of moves)
+      for (const { value } of [was, toBe]) expect(value).toBe(Number(value.toPrecision(12)));
+  });
+
   it("gives back the very text where nothing is over limit", () => {
     const clear = counterEdit(input(FAST)).files[0]!.text;
     const again = counterEdit(input(clear));
