@@ -13,13 +13,19 @@ export function radiusPerRadian(driveTrain: DriveTrain): number | null {
   return output === null ? null : output / (driveTrain.ratio ?? DEFAULT_RATIO);
 }
 
-/** Travel for one motor turn: m on a linear axis, rad of the output on a rotary one; null where not known. */
+/**
+ * Travel for one motor turn, 2π·r: m on a linear axis, rad of the output on a rotary one; r by `radiusPerRadian`, null
+ * where that is not known. Source: geometry.
+ */
 export function travelPerMotorTurn(driveTrain: DriveTrain): number | null {
   const radius = radiusPerRadian(driveTrain);
   return radius === null ? null : radius * 2 * Math.PI;
 }
 
-/** Fields of the drive train that `radiusPerRadian` lacks; empty where it can be computed. */
+/**
+ * Fields of the drive train that `radiusPerRadian` lacks; empty where it can be computed. The ratio is never among them,
+ * a direct drive has 1. Source: the dimensions in the geometry of each kind.
+ */
 export function missingGeometry(driveTrain: DriveTrain): (keyof DriveTrain)[] {
   if (driveTrain.kind === undefined) return ["kind"];
   return GEOMETRY[driveTrain.kind].filter((field) => driveTrain[field] === undefined);

@@ -14,7 +14,10 @@ export function weightAlongAxis(input: {
   return input.mass * FREE_FALL * sine - input.counterbalance;
 }
 
-/** Torque at each of n motors, N·m, that carries a weight (N) at r metres per radian: |W|·r/n; friction is not counted on. */
+/**
+ * Torque at each of n motors, N·m, that carries a weight: |W|·r/n; W in N, r in m/rad and more than 0, n 1 or more.
+ * Friction is not counted on. Source: virtual work of a weight along r.
+ */
 export function weightTorque(input: {
   readonly weight: number;
   readonly radius: number;

@@ -2,7 +2,10 @@
 const COPPER = 234.5;
 const COPPER_AT_20 = COPPER + 20;
 
-/** Resistance of copper at a temperature (°C) over that at 20 °C, no unit: (234.5 + T)/254.5. Valid −60 to 250 °C. */
+/**
+ * Resistance of copper at a temperature T (°C) over that at 20 °C, no unit: (234.5 + T)/254.5. Valid −60 to 250 °C.
+ * Source: IEC 60034-1, resistance method, with the trade's 234.5 K in place of its 235.
+ */
 export function copperFactor(temperatureC: number): number {
   return (COPPER + temperatureC) / COPPER_AT_20;
 }
