@@ -31,7 +31,7 @@ export const SUPPLY_POWER = machineRule({
   id: "supply-power",
   title: "Power of the supply",
   compares: "The power that all axes take together at their highest speed with the supply's rating.",
-  formula: "(Σ n·(2·I²·R(T) + P_driver + T_required·ω) + P_other)/0.85 ≤ P_rated",
+  formula: "(Σ n·(2·I²·R(T) + P_driver + T_required·ω) + P_other)/0.85 ≤ P_rated; shared motors count once",
   source:
     "Balance of power; 0.85 for iron and wiring is the product's choice, load up to 80 % of the rating common practice, no source",
   needs: [...readsOf("supply_load"), "supply.rated_power_w"],

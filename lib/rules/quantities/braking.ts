@@ -6,6 +6,7 @@ import type { AxisView, Datum } from "../types";
 import type { MachineQuantityDefinition } from "./definition";
 import { GEOMETRY_READS, radius } from "./geometry";
 import { moved, MOVED_READS, shaftInertia } from "./load";
+import { motorsTurning } from "./shared-motors";
 
 /**
  * Kinetic energy of an axis at its peak speed, J: what moves, and the shafts of its motors. Motors that two axes share are
@@ -24,6 +25,24 @@ export function axisEnergy(axis: AxisView): Datum {
   const value =
     kineticEnergy(parts.values.moved, speed) + motors * kineticEnergy(shaft, speed / parts.values.radius);
   return given(value, parts.assumed);
+}
+
+/**
+ * Kinetic energy, J, of rotors that an axis turns without counting them: where two axes share two motors and each counts
+ * one, half of the rotors' energy is not in the sum over the axes. 0 elsewhere, and where a datum is missing.
+ * ½·(n' − n)·Jm·(v/r)², n' turning and n counted motors. Source: mechanics.
+ */
+export function uncountedEnergy(axis: AxisView): number {
+  const parts = gather({
+    speed: axis.quantity("peak_speed"),
+    shaft: shaftInertia(axis),
+    radius: radius(axis),
+    motors: motorCount(axis),
+    turning: motorsTurning(axis),
+  });
+  if (!parts.ok) return 0;
+  const { speed, shaft, radius: r, motors, turning } = parts.values;
+  return (turning - motors) * kineticEnergy(shaft, speed / r);
 }
 
 /** Kinetic energy of all axes together, J; an axis with a datum missing makes it unknown. */

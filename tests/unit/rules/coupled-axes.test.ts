@@ -161,6 +161,24 @@ describe("the motors that two axes share", () => {
     expect(found.quantity("bus_voltage_after_braking", null)).toBeCloseTo(after, 9);
   });
 
+  it("bring the bus voltage near where only the rotors that nobody counts do", () => {
+    // One rotor each, in J: 0.6 · 0.3² / 2 + 54e-7 · (0.3/r)² / 2, twice; the two others bring as much of the second again.
+    const rotor = (54e-7 * (0.3 / RADIUS) ** 2) / 2;
+    const counted1 = Math.sqrt(25.2 ** 2 + (2 * 2 * (0.027 + rotor)) / 1000e-6);
+    const whole = Math.sqrt(counted1 ** 2 + (2 * 2 * rotor) / 1000e-6);
+    const stands = (volts: number, count: number) =>
+      crossed((axis) => {
+        axis.motor_count = count;
+        axis.driver!.absolute_max_v = volts;
+      }).finding("braking-voltage", null);
+    const finding = stands((0.5 * (counted1 + whole)) / 0.9, 1);
+    expect(finding).toMatchObject({ level: "near" });
+    expect(finding.value).toBeCloseTo(counted1, 9);
+    expect(finding.sentence).toContain(`with the rotors of both it is ${Number(whole.toPrecision(4))} V`);
+    expect(stands((1.001 * whole) / 0.9, 1).level).toBe("within");
+    expect(stands((1.001 * whole) / 0.9, 2).sentence).not.toContain("rotors of both");
+  });
+
   it("are told of on both axes, whichever of them names the other", () => {
     const found = crossed(counted(1));
     for (const [axis, other] of [
