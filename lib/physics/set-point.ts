@@ -1,4 +1,10 @@
 /**
+ * Least reference voltage, V, that a driver's comparator works well with; offsets and noise weigh more and more below it.
+ * Source: TRINAMIC TMC2209 data sheet, which advises against less than about 0.5 to 1 V (from memory).
+ */
+export const LEAST_REFERENCE_VOLTAGE = 0.5;
+
+/**
  * Current, A, of a driver that compares the sense voltage with a divided reference: I = Vref/(k·Rs).
  * Vref in V, k the divider of the comparator (no unit), Rs in Ω, both more than 0; peak or rms as the driver's data sheet says.
  * Source: the comparator's balance, Rs·I = Vref/k.

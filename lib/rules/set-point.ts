@@ -2,6 +2,7 @@ import { levelRank } from "@/lib/domain/levels";
 import type { Level } from "@/lib/domain/levels";
 import type { ParameterName } from "@/lib/domain/parameters";
 import { fromRms } from "@/lib/physics/current-conventions";
+import { LEAST_REFERENCE_VOLTAGE } from "@/lib/physics/set-point";
 import { exceeds, judged, judgeUpper, upperSign } from "./assessment";
 import type { Assessment, Judged } from "./assessment";
 import { currentParameters, lower, set } from "./candidates";
@@ -9,7 +10,7 @@ import { axisRule } from "./check";
 import type { Candidate } from "./clearing";
 import { axisPath, fromText, gather, given, missing, setPoint, unusable } from "./data";
 import { CURRENT_AGREEMENT, disagreement, textCurrent } from "./quantities/current";
-import { setPointCurrent, SET_POINT_READS } from "./quantities/set-point-current";
+import { setPointCurrent, setPointParameter, SET_POINT_READS } from "./quantities/set-point-current";
 import type { CurrentParameter } from "./quantities/set-point-current";
 import { formatNumber } from "@/lib/domain/units";
 import { plain, show, showRms } from "./show";
@@ -183,7 +184,26 @@ function assess(axis: AxisView): Assessment {
   if (!first) return nothingToCompare(axis);
   if (!first.ok) return joined(parts);
   const others = rest.filter((part) => part.ok && part.level !== "within");
-  return { ...first, sentence: () => [first, ...others].map(sentenceOf).join(" ") };
+  const all = [first, ...others];
+  const low = lowReference(axis);
+  if (low === null) return { ...first, sentence: () => all.map(sentenceOf).join(" ") };
+  return {
+    ...first,
+    // Value and limit stay those of the leading part, and say nothing of where this caution begins.
+    ...(first.level === "within" && { level: "near", nearLimit: null }),
+    sentence: () => [...all.map(sentenceOf), lowWords(low)].join(" "),
+  };
+}
+
+/** The reference voltage of the text, V, where the driver takes its current from it and it is too low; else null. */
+function lowReference(axis: AxisView): number | null {
+  if (setPointParameter(axis, "run_current") !== "reference_voltage") return null;
+  const voltage = fromText(axis, "reference_voltage");
+  return voltage.ok && exceeds(LEAST_REFERENCE_VOLTAGE, voltage.value) ? voltage.value : null;
+}
+
+function lowWords(voltage: number): string {
+  return `A reference voltage of ${show(voltage, "V")} is below ${show(LEAST_REFERENCE_VOLTAGE, "V")}: the driver's offsets and noise weigh heavily there, and the current is uncertain; a larger sense resistor or a smaller gain lifts it.`;
 }
 
 function rank(part: Part): number {
@@ -233,10 +253,10 @@ export const SET_POINT = axisRule({
   id: "set-point",
   title: "Current set-point",
   compares:
-    "The register step with its scale; the text's current with what its set-point gives on the machine's own hardware; the text's sense resistance with the machine's own.",
-  formula: "CS ≤ N − 1; |I_text/I_set − 1| ≤ 7 %; |Rs,text/Rs − 1| ≤ 1 %",
+    "The register step with its scale; the text's current with what its set-point gives on the machine's own hardware; the text's sense resistance with the machine's own; its reference voltage with the least that drivers work well with.",
+  formula: "CS ≤ N − 1; |I_text/I_set − 1| ≤ 7 %; |Rs,text/Rs − 1| ≤ 1 %; V_ref ≥ 0.5 V",
   source:
-    "Driver data sheets (upper half of the scale for fine microsteps); 7 % = 5 % driver + 1 % resistor + rounding",
+    "Driver data sheets (upper half of the scale for fine microsteps; reference voltage not below about 0.5 V, from memory); 7 % = 5 % driver + 1 % resistor + rounding",
   needs: [
     "run_current",
     "hold_current",
@@ -247,7 +267,7 @@ export const SET_POINT = axisRule({
     ...SET_POINT_READS,
   ],
   margin:
-    "near below half of the scale, or where the sense resistance differs by more than 1 %; over above full scale, or where currents differ by more than 7 %",
+    "near below half of the scale, where the sense resistance differs by more than 1 %, or where the reference voltage is below 0.5 V; over above full scale, or where currents differ by more than 7 %",
   caution: null,
   parameters: (axis) => [
     ...new Set<ParameterName>([
