@@ -108,6 +108,11 @@ const raised = (change: Change) =>
     axis.load!.mass_kg = 3;
     change(axis, machine);
   });
+/** Detent torque of the motor, as times the torque of 3 kg. */
+const detent = (axis: AxisAssembly, times?: number) => {
+  if (times === undefined) delete axis.motor!.detent_torque_nm;
+  else axis.motor!.detent_torque_nm = times * 3 * 9.80665 * RADIUS;
+};
 steps("fall-after-power-loss", [
   ["no brake", () => raised(() => undefined), "near"],
   ["friction that holds it", () => raised((axis) => (axis.load!.friction_n = 30)), "near"],
@@ -134,6 +139,31 @@ steps("fall-after-power-loss", [
   ],
   ["a brake whose time is not known", () => raised((axis) => (axis.load!.holding_brake = true)), "cannot"],
 ]);
+
+describe("a load that falls", () => {
+  // 3 kg against 4 N of friction, with a rotor of 54 g·cm² at 6.366 mm for each radian.
+  const acceleration = (3 * 9.80665 - 4) / (3 + 54e-7 / RADIUS ** 2);
+
+  it("is not slowed by detent torque, which may only keep it at rest", () => {
+    const found = raised((axis) => {
+      detent(axis, 1.5);
+      Object.assign(axis.load!, { holding_brake: true, brake_delay_ms: 40 });
+    });
+    expect(found.quantity("fall_distance")).toBeCloseTo((acceleration * 0.04 ** 2) / 2, 12);
+    const unbraked = raised((axis) => detent(axis, 1.5)).finding("fall-after-power-loss");
+    expect(unbraked.sentence).toContain("may keep it while it rests");
+  });
+
+  it("names what it takes for granted", () => {
+    const found = raised((axis) => {
+      delete axis.motor_count;
+      delete axis.load!.counterbalance_n;
+    });
+    expect(found.finding("fall-after-power-loss").assumed).toEqual(
+      expect.arrayContaining(["axes.x.motor_count", "axes.x.load.counterbalance_n"]),
+    );
+  });
+});
 
 const railed = (voltage: number) => on((_axis, machine) => (machine.supply!.voltage_v = voltage));
 steps("supply-overdrive", [
@@ -178,11 +208,6 @@ steps(
   ],
   null,
 );
-/** Detent torque of the motor, as times the torque of 3 kg. */
-const detent = (axis: AxisAssembly, times?: number) => {
-  if (times === undefined) delete axis.motor!.detent_torque_nm;
-  else axis.motor!.detent_torque_nm = times * 3 * 9.80665 * RADIUS;
-};
 
 /** A belt whose load swings at a share of the full-step rate of the cruise, 300 mm/s on 40 mm a turn. */
 const swinging = (share: number) =>
@@ -194,31 +219,6 @@ steps("axis-resonance", [
   ["the full steps of the cruise", () => swinging(1), "near"],
   ["a fifth beside them", () => swinging(1 / 1.19), "near"],
   ["far above them", () => swinging(1.3), "within"],
-describe("a load that falls", () => {
-  // 3 kg against 4 N of friction, with a rotor of 54 g·cm² at 6.366 mm for each radian.
-  const acceleration = (3 * 9.80665 - 4) / (3 + 54e-7 / RADIUS ** 2);
-
-  it("is not slowed by detent torque, which may only keep it at rest", () => {
-    const found = raised((axis) => {
-      detent(axis, 1.5);
-      Object.assign(axis.load!, { holding_brake: true, brake_delay_ms: 40 });
-    });
-    expect(found.quantity("fall_distance")).toBeCloseTo((acceleration * 0.04 ** 2) / 2, 12);
-    const unbraked = raised((axis) => detent(axis, 1.5)).finding("fall-after-power-loss");
-    expect(unbraked.sentence).toContain("may keep it while it rests");
-  });
-
-  it("names what it takes for granted", () => {
-    const found = raised((axis) => {
-      delete axis.motor_count;
-      delete axis.load!.counterbalance_n;
-    });
-    expect(found.finding("fall-after-power-loss").assumed).toEqual(
-      expect.arrayContaining(["axes.x.motor_count", "axes.x.load.counterbalance_n"]),
-    );
-  });
-});
-
   ["a fourth of them", () => swinging(0.25), "near"],
   ["a stiffness that nobody has stated", () => world(), "cannot"],
 ]);
