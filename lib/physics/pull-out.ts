@@ -22,6 +22,14 @@ export function voltageConstant(holdingTorque: number, ratedCurrent: number): nu
   return holdingTorque / (Math.SQRT2 * ratedCurrent);
 }
 
+/**
+ * Greatest current, A rms of a sine, that a supply drives through one winding at standstill: V/(√2·R); V in V, R the
+ * winding and all in series with it, in Ω, more than 0. Source: Ohm's law at the sine's peak.
+ */
+export function drivableCurrent(input: { readonly voltage: number; readonly resistance: number }): number {
+  return input.voltage / (Math.SQRT2 * input.resistance);
+}
+
 /** Generated voltage of one phase, V peak: Ke·ω, Ke in V·s/rad, ω in rad/s of the shaft. Source: definition of Ke. */
 export function generatedVoltage(constant: number, speed: number): number {
   return constant * speed;

@@ -30,6 +30,7 @@ import { RAMP_TORQUE_MARGIN } from "./ramp-torque-margin";
 import { REFERENCE_RUN } from "./reference-run";
 import { SOFT_TRAVEL } from "./soft-travel";
 import { STATIC_POSITION } from "./static-position";
+import { SUPPLY_DRIVES_CURRENT } from "./supply-drives-current";
 import { SUPPLY_OVERDRIVE } from "./supply-overdrive";
 import { SUPPLY_POWER } from "./supply-power";
 import { WINDING_CLASS } from "./winding-class";
@@ -58,6 +59,7 @@ export const RULES: readonly Rule[] = [
   LOWERING_VOLTAGE,
   SUPPLY_POWER,
   CABLE_DROP,
+  SUPPLY_DRIVES_CURRENT,
   SUPPLY_OVERDRIVE,
   INDUCTANCE_RULE,
   RESONANCE,

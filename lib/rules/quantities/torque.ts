@@ -70,7 +70,7 @@ export function holdingTorque(axis: AxisView, current: Datum): Computed {
  * Winding temperature that the torque is reckoned at, °C: the settled one, at most the winding's limit; the limit where
  * it never settles; 20 °C where it cannot be known, and then what is missing for it counts as assumed.
  */
-function torqueTemperature(axis: AxisView): Datum {
+export function torqueTemperature(axis: AxisView): Datum {
   const winding = axis.quantity("winding_c");
   const limit = hardware(axis, "motor", "winding_limit_c");
   if (winding.ok)

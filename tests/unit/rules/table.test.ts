@@ -37,6 +37,7 @@ const IDS = [
   "lowering-voltage",
   "supply-power",
   "cable-drop",
+  "supply-drives-current",
   "supply-overdrive",
   "inductance-rule",
   "resonance",
