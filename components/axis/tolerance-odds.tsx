@@ -44,7 +44,7 @@ function Progress({ state }: { readonly state: OddsState }) {
   if (state.phase === "failed")
     return (
       <Notice live="alert" title="Not worked out">
-        <p>This browser could not open a background worker, so nothing was drawn. Load the page again.</p>
+        <p>{state.reason}</p>
       </Notice>
     );
   if (state.phase !== "running" && state.phase !== "stopped") return null;
