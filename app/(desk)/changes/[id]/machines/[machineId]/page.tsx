@@ -1,5 +1,6 @@
 import type { Metadata } from "next";
 import Link from "next/link";
+import type { ReactNode } from "react";
 import { notFound } from "next/navigation";
 import { z } from "zod";
 import { AsLeftStep } from "@/components/implementation/as-left-step";
@@ -37,6 +38,16 @@ export default async function StepPage({ params }: StepPageProps) {
   const { items: moved } = await load(testsOfChange(context, { changeId: id, machineId }));
   const order = await load(orderBasis(context, { changeId: id, machineId }));
   const mayWork = may(context.actor, "verifications.create") && step.verifiedAt === null && !place?.endedAt;
+  const whatToTest = (
+    <SheetSection title="What to test" note="only what the change moves">
+      <MovedTestList
+        tests={moved}
+        changeId={id}
+        machineId={machineId}
+        mayStart={may(context.actor, "test_sheets.write") && !place?.endedAt}
+      />
+    </SheetSection>
+  );
   return (
     <Sheet>
       <SheetHead
@@ -49,16 +60,15 @@ export default async function StepPage({ params }: StepPageProps) {
         subtitle={`${step.modelName}, ${step.siteName}`}
       />
       <Progress step={step} ended={place?.endedAt ?? null} />
-      {mayWork && <Work step={step} />}
-      {mayWork && order && <OrderSection basis={order} fromReadings={order.fromReadings} />}
-      <SheetSection title="What to test" note="only what the change moves">
-        <MovedTestList
-          tests={moved}
-          changeId={id}
-          machineId={machineId}
-          mayStart={may(context.actor, "test_sheets.write") && !place?.endedAt}
+      {mayWork ? (
+        <Work
+          step={step}
+          order={order && <OrderSection basis={order} fromReadings={order.fromReadings} />}
+          whatToTest={whatToTest}
         />
-      </SheetSection>
+      ) : (
+        whatToTest
+      )}
       <SheetSection title="Tests on this machine">
         {place && place.verifications.length > 0 ? (
           <Tests tests={place.verifications} />
@@ -92,7 +102,15 @@ function Progress({ step, ended }: { readonly step: StepDetail; readonly ended: 
   return <Notice title="Still missing">{step.missing}</Notice>;
 }
 
-function Work({ step }: { readonly step: StepDetail }) {
+interface WorkProps {
+  readonly step: StepDetail;
+  /** In what order to type the new values; null where there is nothing to type. */
+  readonly order: ReactNode;
+  readonly whatToTest: ReactNode;
+}
+
+/** The step's four parts in the order of the work; what to test stands before its result is recorded. */
+function Work({ step, order, whatToTest }: WorkProps) {
   const { changeId, machineId, serial, downloadedAt, appliedAt, axes, hasReadBack } = step;
   return (
     <>
@@ -114,6 +132,7 @@ function Work({ step }: { readonly step: StepDetail }) {
           competent person stand above this page.
         </p>
       </SheetSection>
+      {order}
       <SheetSection
         title="3. Read it back"
         note={
@@ -128,6 +147,7 @@ function Work({ step }: { readonly step: StepDetail }) {
       >
         <AsLeftStep machineId={machineId} serial={serial} hasReadBack={hasReadBack} />
       </SheetSection>
+      {whatToTest}
       <SheetSection title="4. Record the test">
         <TestStep changeId={changeId} machineId={machineId} axes={axes} hasReadBack={hasReadBack} />
       </SheetSection>
